@@ -1,0 +1,5 @@
+/**
+ * Where the gas goes: the borders of the film and their mass flows, releases that stand for equal shares of a flow, and
+ * the table of origins and destinations with its interval.
+ */
+package org.whither.fate;
