@@ -6,6 +6,17 @@ package org.whither.film;
  * in which the film is steady; all flows are those of one sector. Implementations can be used from many threads.
  */
 public interface FilmFlow {
+    /**
+     * The motion of the gas in a film, by the interpolation that suits its field: conserving for a lubrication field,
+     * nodal for a full field.
+     *
+     * @param film the film
+     * @return its motion
+     */
+    static FilmFlow of(Film film) {
+        return film.field() instanceof LubricationField ? new ConservingFlow(film) : new NodalFlow(film);
+    }
+
     /** The film. */
     Film film();
 
@@ -52,6 +63,15 @@ public interface FilmFlow {
      * @return mass flow (kg/s)
      */
     double radialFlowBelow(int i, int j, double sigma);
+
+    /**
+     * Number of parts, each between two heights, in which the radial flow through a constant-j face is taken to run one
+     * way.
+     */
+    int profileParts();
+
+    /** Lower bound of such a part, or 1 for part = profileParts(), as a fraction of the film thickness. */
+    double profilePart(int part);
 
     /** Which interpolation this is, as written in results: {@code conserving} or {@code nodal}. */
     String interpolation();

@@ -1,0 +1,312 @@
+package org.whither.film;
+
+import org.apache.commons.math3.linear.ArrayRealVector;
+import org.apache.commons.math3.linear.ConjugateGradient;
+import org.apache.commons.math3.linear.RealLinearOperator;
+import org.apache.commons.math3.linear.RealVector;
+
+/**
+ * Mass flows of the film columns through the faces of the cells, seen from the frame in which the film is steady, in
+ * balance: what leaves a cell through its four faces is what its feed brings in. They are the solver's own where it gave
+ * them, and else formed from the film pressure; what is then left of divergence is removed by the smallest change of the
+ * flows (least squares, a projection on the graph of the cells).
+ */
+public final class ColumnFlows {
+    /** A residual below this share of the flow through the film is rounding, not divergence. */
+    private static final double ROUNDING = 1e-13;
+
+    private final FilmGrid grid;
+    private final double[] theta;
+    private final double[] radial;
+    private final double[] supply;
+    private final boolean formed;
+    private double correction;
+    private double largestCorrection;
+
+    private ColumnFlows(FilmGrid grid, double[] theta, double[] radial, double[] supply, boolean formed) {
+        this.grid = grid;
+        this.theta = theta;
+        this.radial = radial;
+        this.supply = supply;
+        this.formed = formed;
+    }
+
+    /** Flow through the constant-i face of row j, towards +θ (kg/s). */
+    double theta(int i, int j) {
+        return theta[i * (grid.nj() - 1) + j];
+    }
+
+    /** Flow through the constant-j face of column i, outwards (kg/s). */
+    double radial(int i, int j) {
+        return radial[i * grid.nj() + j];
+    }
+
+    /** Supply gas that enters through cell (i, j) (kg/s). */
+    double supply(int i, int j) {
+        return supply[grid.cell(i, j)];
+    }
+
+    /** Whether the flows were formed from the film pressure, since the solver gave none. */
+    public boolean formed() {
+        return formed;
+    }
+
+    /** Size of the correction that removed the remaining divergence: Σ|change| / Σ|flow| over all cell faces. */
+    public double correction() {
+        return correction;
+    }
+
+    /** The largest share of the flow through one cell that the correction changed. */
+    public double largestCorrection() {
+        return largestCorrection;
+    }
+
+    /**
+     * The column flows of a lubrication field.
+     *
+     * @param film a film whose field is a {@link LubricationField}
+     * @param columns its pressure and film thickness
+     * @return balanced flows
+     */
+    static ColumnFlows of(Film film, Columns columns) {
+        FilmGrid grid = film.grid();
+        LubricationField field = (LubricationField) film.field();
+        double[] theta;
+        double[] radial;
+        boolean formed = field.massFlows().isEmpty();
+        if (formed) {
+            theta = new double[grid.ni() * grid.cellsRadial()];
+            radial = new double[grid.cellsTheta() * grid.nj()];
+            form(film, columns, theta, radial);
+        } else {
+            theta = field.massFlows().get().thetaValues();
+            radial = field.massFlows().get().radialValues();
+            double observer =
+                    film.velocityFrame().angularSpeed(film.conditions().rotationRate());
+            turn(grid, columns, theta, observer - film.steadyFrameSpeed());
+        }
+        ColumnFlows flows = new ColumnFlows(grid, theta, radial, new double[grid.cells()], formed);
+        flows.balance(film);
+        return flows;
+    }
+
+    /** Adds to the flows what an observer sees who turns slower by {@code by} (rad/s). */
+    private static void turn(FilmGrid grid, Columns columns, double[] theta, double by) {
+        if (by == 0) {
+            return;
+        }
+        for (int i = 0; i < grid.ni(); i++) {
+            for (int j = 0; j < grid.cellsRadial(); j++) {
+                theta[i * grid.cellsRadial() + j] += by * columns.rotationMoment(i, j);
+            }
+        }
+    }
+
+    /**
+     * Forms the flows from the film pressure: on each face the half-cell pressure flows of both sides and their rotation
+     * parts, with a common pressure on the face, so that a step in film thickness is passed without loss (the
+     * one-dimensional elimination of the face pressure); the derivative along the face from the nodal pressures.
+     */
+    private static void form(Film film, Columns columns, double[] theta, double[] radial) {
+        FilmGrid grid = film.grid();
+        double rotor = film.conditions().rotationRate() - film.steadyFrameSpeed();
+        double stator = -film.steadyFrameSpeed();
+        double mean = 0.5 * (rotor + stator);
+        int nci = grid.cellsTheta();
+        int ncj = grid.cellsRadial();
+        for (int i = 0; i <= nci; i++) {
+            int left = Math.floorMod(i - 1, nci);
+            int right = i % nci;
+            for (int j = 0; j < ncj; j++) {
+                double dr = grid.radius(j + 1) - grid.radius(j);
+                double r = 0.5 * (grid.radius(j) + grid.radius(j + 1));
+                double slope = grid.lineSlope(i % nci, j);
+                double along = (columns.nodePressure(right, j + 1) - columns.nodePressure(right, j)) / dr;
+                double halfLeft = 0.5 * columns.width(left, j);
+                double halfRight = 0.5 * columns.width(right, j);
+                // Flow through the face a unit of radius: −c (∂p/∂θ (1 + (r θ')²)/r − r θ' ∂p/∂r along the line), c =
+                // ρh³/12µ.
+                double factor = (1 + r * r * slope * slope) / r;
+                double cLeft = columns.conductance(left, j);
+                double cRight = columns.conductance(right, j);
+                double kLeft = cLeft * factor / halfLeft;
+                double kRight = cRight * factor / halfRight;
+                double skew = r * slope * along;
+                double vLeft = columns.rho(left, j) * columns.h(left, j) * mean * r + cLeft * skew;
+                double vRight = columns.rho(right, j) * columns.h(right, j) * mean * r + cRight * skew;
+                double pLeft = columns.cellPressure(left, j);
+                double pRight = columns.cellPressure(right, j);
+                double flux = kLeft * kRight / (kLeft + kRight) * (pLeft - pRight)
+                        + (vLeft * kRight + vRight * kLeft) / (kLeft + kRight);
+                theta[i * ncj + j] = flux * dr;
+            }
+        }
+        for (int i = 0; i < nci; i++) {
+            for (int j = 0; j <= ncj; j++) {
+                double r = grid.radius(j);
+                double width = grid.theta(i + 1, j) - grid.theta(i, j);
+                double along = (columns.nodePressure((i + 1) % nci, j) - columns.nodePressure(i, j)) / width;
+                double slopeBelow = j > 0 ? columns.slope(i, j - 1) : 0;
+                double slopeAbove = j < ncj ? columns.slope(i, j) : 0;
+                double flux;
+                // ∂p/∂r at constant θ is ∂p/∂r along the line less θ' ∂p/∂θ.
+                if (j == 0) {
+                    double k = columns.conductance(i, 0) / (0.5 * (grid.radius(1) - r));
+                    flux = k * (columns.nodePair(i, 0) - columns.cellPressure(i, 0))
+                            + columns.conductance(i, 0) * slopeAbove * along;
+                } else if (j == ncj) {
+                    double k = columns.conductance(i, j - 1) / (0.5 * (r - grid.radius(j - 1)));
+                    flux = k * (columns.cellPressure(i, j - 1) - columns.nodePair(i, j))
+                            + columns.conductance(i, j - 1) * slopeBelow * along;
+                } else {
+                    double cBelow = columns.conductance(i, j - 1);
+                    double cAbove = columns.conductance(i, j);
+                    double kBelow = cBelow / (0.5 * (r - grid.radius(j - 1)));
+                    double kAbove = cAbove / (0.5 * (grid.radius(j + 1) - r));
+                    double vBelow = cBelow * slopeBelow * along;
+                    double vAbove = cAbove * slopeAbove * along;
+                    flux = kBelow
+                                    * kAbove
+                                    / (kBelow + kAbove)
+                                    * (columns.cellPressure(i, j - 1) - columns.cellPressure(i, j))
+                            + (vBelow * kAbove + vAbove * kBelow) / (kBelow + kAbove);
+                }
+                radial[i * (ncj + 1) + j] = flux * r * width;
+            }
+        }
+    }
+
+    private double divergence(int i, int j) {
+        return theta(i + 1, j) - theta(i, j) + radial(i, j + 1) - radial(i, j);
+    }
+
+    private void balance(Film film) {
+        int nci = grid.cellsTheta();
+        int ncj = grid.cellsRadial();
+        boolean given = film.supply().isPresent() && film.supply().get().hasMassFlux();
+        double[] residual = new double[grid.cells()];
+        boolean[] free = new boolean[grid.cells()];
+        double through = 0;
+        for (double flow : radial) {
+            through += Math.abs(flow);
+        }
+        for (double flow : theta) {
+            through += Math.abs(flow);
+        }
+        through /= radial.length + theta.length;
+        double worst = 0;
+        for (int i = 0; i < nci; i++) {
+            for (int j = 0; j < ncj; j++) {
+                int cell = grid.cell(i, j);
+                if (film.feeds(cell)) {
+                    supply[cell] = given ? film.supply().get().massFlux(cell) * grid.cellArea(i, j) : divergence(i, j);
+                    free[cell] = !given;
+                }
+                residual[cell] = free[cell] ? 0 : supply[cell] - divergence(i, j);
+                worst = Math.max(worst, Math.abs(residual[cell]));
+            }
+        }
+        if (worst > ROUNDING * through) {
+            remove(residual, free);
+        }
+        for (int i = 0; i < nci; i++) {
+            for (int j = 0; j < ncj; j++) {
+                int cell = grid.cell(i, j);
+                if (film.feeds(cell)) {
+                    supply[cell] = divergence(i, j);
+                }
+            }
+        }
+    }
+
+    /** Removes the residual by the least-squares change of the flows: δ(A→B) = λ_A − λ_B, with L λ = residual. */
+    private void remove(double[] residual, boolean[] free) {
+        int nci = grid.cellsTheta();
+        int ncj = grid.cellsRadial();
+        RealLinearOperator laplacian = new RealLinearOperator() {
+            @Override
+            public int getRowDimension() {
+                return residual.length;
+            }
+
+            @Override
+            public int getColumnDimension() {
+                return residual.length;
+            }
+
+            @Override
+            public RealVector operate(RealVector x) {
+                double[] lambda = ((ArrayRealVector) x).getDataRef();
+                double[] y = new double[lambda.length];
+                for (int i = 0; i < nci; i++) {
+                    int left = Math.floorMod(i - 1, nci);
+                    int right = (i + 1) % nci;
+                    for (int j = 0; j < ncj; j++) {
+                        int cell = i * ncj + j;
+                        if (free[cell]) {
+                            y[cell] = lambda[cell];
+                            continue;
+                        }
+                        double sum = 4 * lambda[cell];
+                        sum -= at(lambda, free, left * ncj + j);
+                        sum -= at(lambda, free, right * ncj + j);
+                        sum -= j > 0 ? at(lambda, free, cell - 1) : 0;
+                        sum -= j < ncj - 1 ? at(lambda, free, cell + 1) : 0;
+                        y[cell] = sum;
+                    }
+                }
+                return new ArrayRealVector(y, false);
+            }
+        };
+        ConjugateGradient solver = new ConjugateGradient(100_000, 1e-12, false);
+        double[] lambda =
+                solver.solve(laplacian, new ArrayRealVector(residual, false)).toArray();
+        double changed = 0;
+        double total = 0;
+        double[] cellChange = new double[residual.length];
+        double[] cellFlow = new double[residual.length];
+        for (int i = 0; i <= nci; i++) {
+            int left = Math.floorMod(i - 1, nci);
+            int right = i % nci;
+            for (int j = 0; j < ncj; j++) {
+                double change = at(lambda, free, left * ncj + j) - at(lambda, free, right * ncj + j);
+                theta[i * ncj + j] += change;
+                double flow = Math.abs(theta[i * ncj + j]);
+                note(cellChange, cellFlow, i > 0 ? left * ncj + j : -1, change, flow);
+                note(cellChange, cellFlow, i < nci ? right * ncj + j : -1, change, flow);
+                changed += i < nci ? Math.abs(change) : 0;
+                total += i < nci ? flow : 0;
+            }
+        }
+        for (int i = 0; i < nci; i++) {
+            for (int j = 0; j <= ncj; j++) {
+                double below = j > 0 ? at(lambda, free, i * ncj + j - 1) : 0;
+                double above = j < ncj ? at(lambda, free, i * ncj + j) : 0;
+                double change = below - above;
+                radial[i * (ncj + 1) + j] += change;
+                double flow = Math.abs(radial[i * (ncj + 1) + j]);
+                note(cellChange, cellFlow, j > 0 ? i * ncj + j - 1 : -1, change, flow);
+                note(cellChange, cellFlow, j < ncj ? i * ncj + j : -1, change, flow);
+                changed += Math.abs(change);
+                total += flow;
+            }
+        }
+        correction = total > 0 ? changed / total : 0;
+        for (int cell = 0; cell < residual.length; cell++) {
+            if (cellFlow[cell] > 0) {
+                largestCorrection = Math.max(largestCorrection, cellChange[cell] / cellFlow[cell]);
+            }
+        }
+    }
+
+    private static double at(double[] lambda, boolean[] free, int cell) {
+        return free[cell] ? 0 : lambda[cell];
+    }
+
+    private static void note(double[] cellChange, double[] cellFlow, int cell, double change, double flow) {
+        if (cell >= 0) {
+            cellChange[cell] += Math.abs(change);
+            cellFlow[cell] += flow;
+        }
+    }
+}
