@@ -1,0 +1,22 @@
+package org.whither.fate;
+
+import java.util.Optional;
+import org.whither.trace.PathEnd;
+
+/**
+ * One pair of origin and destination.
+ *
+ * @param from where the gas comes from; empty for gas whose origin was not reached, followed back in time
+ * @param to where it goes
+ * @param massFlow mass flow of the whole ring (kg/s)
+ * @param share share of the gas of that origin, with its interval
+ * @param residenceTime time between entering and leaving (s); none where nothing left
+ * @param revolutions turns about the shaft in the stationary frame, positive towards +θ; none where nothing left
+ */
+public record SplitRow(
+        Optional<PathEnd.Border> from,
+        Destination to,
+        double massFlow,
+        Interval share,
+        Optional<Quantiles> residenceTime,
+        Optional<Quantiles> revolutions) {}

@@ -1,0 +1,28 @@
+package org.whither.fate;
+
+import org.whither.film.Frame;
+
+/**
+ * How a split is found.
+ *
+ * @param frame frame of integration
+ * @param tolerance as in {@link org.whither.trace.TraceSettings}
+ * @param width wanted width of the interval of every share
+ * @param seed seed of the random shifts
+ * @param threads number of threads
+ * @param mostTracers tracers an origin may use to reach the width
+ */
+public record SplitSettings(Frame frame, double tolerance, double width, long seed, int threads, int mostTracers) {
+    /** Tracers an origin may use where nothing else is said. */
+    public static final int MOST_TRACERS = 1 << 17;
+
+    /** Checks the ranges. */
+    public SplitSettings {
+        if (!(width > 0 && width <= 1)) {
+            throw new IllegalArgumentException("width " + width + "; expected more than 0 and at most 1");
+        }
+        if (threads < 1 || threads > 1024) {
+            throw new IllegalArgumentException("threads " + threads + "; expected 1 … 1024");
+        }
+    }
+}
