@@ -50,6 +50,9 @@ public record Split(
 
     private static final int REPLICATES = 16;
     private static final int FIRST_SIZE = 32;
+    /** Steps a leg may use: where much gas is held, tracers go round until the time limit. */
+    private static final long MOST_STEPS = 100_000_000;
+
     private static final double NEGLIGIBLE = 1e-9;
 
     /**
@@ -210,7 +213,7 @@ public record Split(
             if (narrow) {
                 return followed;
             }
-            if (2L * size * REPLICATES > settings.mostTracers()) {
+            if (2L * size * REPLICATES > settings.mostTracers() || 2 * steps > MOST_STEPS) {
                 return new Followed(releases, ends, replicate, size, steps, false);
             }
         }

@@ -121,7 +121,7 @@ public final class ColumnFlows {
                 double dr = grid.radius(j + 1) - grid.radius(j);
                 double r = 0.5 * (grid.radius(j) + grid.radius(j + 1));
                 double slope = grid.lineSlope(i % nci, j);
-                double along = (columns.nodePressure(right, j + 1) - columns.nodePressure(right, j)) / dr;
+                double along = (columns.nodeSquare(right, j + 1) - columns.nodeSquare(right, j)) / dr;
                 double halfLeft = 0.5 * columns.width(left, j);
                 double halfRight = 0.5 * columns.width(right, j);
                 // Flow through the face a unit of radius: −c (∂p/∂θ (1 + (r θ')²)/r − r θ' ∂p/∂r along the line), c =
@@ -134,9 +134,9 @@ public final class ColumnFlows {
                 double skew = r * slope * along;
                 double vLeft = columns.rho(left, j) * columns.h(left, j) * mean * r + cLeft * skew;
                 double vRight = columns.rho(right, j) * columns.h(right, j) * mean * r + cRight * skew;
-                double pLeft = columns.cellPressure(left, j);
-                double pRight = columns.cellPressure(right, j);
-                double flux = kLeft * kRight / (kLeft + kRight) * (pLeft - pRight)
+                double sLeft = columns.cellSquare(left, j);
+                double sRight = columns.cellSquare(right, j);
+                double flux = kLeft * kRight / (kLeft + kRight) * (sLeft - sRight)
                         + (vLeft * kRight + vRight * kLeft) / (kLeft + kRight);
                 theta[i * ncj + j] = flux * dr;
             }
@@ -145,35 +145,48 @@ public final class ColumnFlows {
             for (int j = 0; j <= ncj; j++) {
                 double r = grid.radius(j);
                 double width = grid.theta(i + 1, j) - grid.theta(i, j);
-                double along = (columns.nodePressure((i + 1) % nci, j) - columns.nodePressure(i, j)) / width;
-                double slopeBelow = j > 0 ? columns.slope(i, j - 1) : 0;
-                double slopeAbove = j < ncj ? columns.slope(i, j) : 0;
+                double along = r * (columns.nodeSquare((i + 1) % nci, j) - columns.nodeSquare(i, j)) / width;
+                // In ln r, in which a plain film is linear; ∂s/∂r at constant θ is that along the line less θ' ∂s/∂θ.
                 double flux;
-                // ∂p/∂r at constant θ is ∂p/∂r along the line less θ' ∂p/∂θ.
-                if (j == 0) {
-                    double k = columns.conductance(i, 0) / (0.5 * (grid.radius(1) - r));
-                    flux = k * (columns.nodePair(i, 0) - columns.cellPressure(i, 0))
-                            + columns.conductance(i, 0) * slopeAbove * along;
-                } else if (j == ncj) {
-                    double k = columns.conductance(i, j - 1) / (0.5 * (r - grid.radius(j - 1)));
-                    flux = k * (columns.cellPressure(i, j - 1) - columns.nodePair(i, j))
-                            + columns.conductance(i, j - 1) * slopeBelow * along;
+                int row = oneSided(film, i, j);
+                if (row >= 0) {
+                    double middle = 0.5 * Math.log(grid.radius(row + 1) / grid.radius(row));
+                    double border = 0.5 * (columns.nodeSquare(i, j) + columns.nodeSquare(i + 1, j));
+                    double drop = (row == j ? 1 : -1) * (border - columns.cellSquare(i, row));
+                    flux = columns.conductance(i, row) * (drop / middle + columns.slope(i, row) * along);
                 } else {
                     double cBelow = columns.conductance(i, j - 1);
                     double cAbove = columns.conductance(i, j);
-                    double kBelow = cBelow / (0.5 * (r - grid.radius(j - 1)));
-                    double kAbove = cAbove / (0.5 * (grid.radius(j + 1) - r));
-                    double vBelow = cBelow * slopeBelow * along;
-                    double vAbove = cAbove * slopeAbove * along;
-                    flux = kBelow
-                                    * kAbove
-                                    / (kBelow + kAbove)
-                                    * (columns.cellPressure(i, j - 1) - columns.cellPressure(i, j))
+                    double kBelow = cBelow / (0.5 * Math.log(r / grid.radius(j - 1)));
+                    double kAbove = cAbove / (0.5 * Math.log(grid.radius(j + 1) / r));
+                    double vBelow = cBelow * columns.slope(i, j - 1) * along;
+                    double vAbove = cAbove * columns.slope(i, j) * along;
+                    double drop = columns.cellSquare(i, j - 1) - columns.cellSquare(i, j);
+                    flux = kBelow * kAbove / (kBelow + kAbove) * drop
                             + (vBelow * kAbove + vAbove * kBelow) / (kBelow + kAbove);
                 }
-                radial[i * (ncj + 1) + j] = flux * r * width;
+                radial[i * (ncj + 1) + j] = flux * width;
             }
         }
+    }
+
+    /**
+     * The row from which alone the flow through a constant-j face is formed, or −1 for both: the row inside at the two
+     * diameters, and the row beside the feed where the pressure of the face itself is known, since it has a kink there.
+     */
+    private static int oneSided(Film film, int i, int j) {
+        FilmGrid grid = film.grid();
+        if (j == 0 || j == grid.cellsRadial()) {
+            return Math.min(j, grid.cellsRadial() - 1);
+        }
+        if (((LubricationField) film.field()).pressureAt() == Location.NODE) {
+            boolean below = film.feeds(grid.cell(i, j - 1));
+            boolean above = film.feeds(grid.cell(i, j));
+            if (below != above) {
+                return below ? j : j - 1;
+            }
+        }
+        return -1;
     }
 
     private double divergence(int i, int j) {

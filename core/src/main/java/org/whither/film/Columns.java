@@ -2,12 +2,16 @@ package org.whither.film;
 
 /**
  * Pressure, density and film thickness of a lubrication film, at the cells and at the nodes. The pressure is continuous,
- * so it has nodal values even where the solver gave cell values; the film thickness may jump between cells.
+ * so it has nodal values even where the solver gave cell values; the film thickness may jump between cells. Between
+ * nodes the square of the pressure is interpolated: it is what the isothermal film obeys, and it is linear in ln r in a
+ * plain one.
  */
 final class Columns {
     private final Film film;
     private final FilmGrid grid;
     private final double[] nodePressure;
+    private final double[] nodeSquare;
+    private final double[] cellSquare;
     private final double[] cellPressure;
     private final double[] cellThickness;
     private final double densityOverPressure;
@@ -29,20 +33,29 @@ final class Columns {
             for (int n = 0; n < nodePressure.length; n++) {
                 nodePressure[n] = field.pressure(n);
             }
-            for (int i = 0; i < grid.cellsTheta(); i++) {
-                for (int j = 0; j < grid.cellsRadial(); j++) {
-                    int n = grid.node(i, j);
-                    int m = grid.node(i + 1, j);
-                    cellPressure[grid.cell(i, j)] =
-                            0.25 * (nodePressure[n] + nodePressure[n + 1] + nodePressure[m] + nodePressure[m + 1]);
-                }
-            }
         } else {
             for (int c = 0; c < cellPressure.length; c++) {
                 cellPressure[c] = field.pressure(c);
             }
             spread();
         }
+        nodeSquare = squares(nodePressure);
+        if (field.pressureAt() == Location.NODE) {
+            for (int i = 0; i < grid.cellsTheta(); i++) {
+                for (int j = 0; j < grid.cellsRadial(); j++) {
+                    cellPressure[grid.cell(i, j)] = Math.sqrt(square(i, j, 0.5, 0.5));
+                }
+            }
+        }
+        cellSquare = squares(cellPressure);
+    }
+
+    private static double[] squares(double[] values) {
+        double[] squares = new double[values.length];
+        for (int n = 0; n < values.length; n++) {
+            squares[n] = values[n] * values[n];
+        }
+        return squares;
     }
 
     /** Cell values to the nodes, weighted by nearness; the two diameters have the pressures of their sides. */
@@ -77,13 +90,20 @@ final class Columns {
                 / (widthLeft + widthRight);
     }
 
-    double nodePressure(int i, int j) {
-        return nodePressure[grid.node(i, j)];
+    /** Square of the pressure at a place in a cell, linear both ways between the nodes (Pa²). */
+    double square(int i, int j, double a, double b) {
+        int n = i * grid.nj() + j;
+        int m = n + grid.nj();
+        return (1 - a) * ((1 - b) * nodeSquare[n] + b * nodeSquare[n + 1])
+                + a * ((1 - b) * nodeSquare[m] + b * nodeSquare[m + 1]);
     }
 
-    /** Mean pressure of the two nodes of a constant-j face (Pa). */
-    double nodePair(int i, int j) {
-        return 0.5 * (nodePressure[grid.node(i, j)] + nodePressure[grid.node(i + 1, j)]);
+    double nodeSquare(int i, int j) {
+        return nodeSquare[grid.node(i, j)];
+    }
+
+    double cellSquare(int i, int j) {
+        return cellSquare[grid.cell(i, j)];
     }
 
     double cellPressure(int i, int j) {
@@ -103,10 +123,13 @@ final class Columns {
         return densityOverPressure * pressure;
     }
 
-    /** Mass flow a pressure gradient drives through a column a unit of width, ρh³/12µ (kg/(m s Pa/m)). */
+    /**
+     * What drives the mass flow of a column: h³ / (24 µ R_s T), so that the flow a unit of width is this times the
+     * gradient of p², downhill (kg/(m s) a Pa²/m).
+     */
     double conductance(int i, int j) {
         double h = h(i, j);
-        return rho(i, j) * h * h * h / (12 * film.gas().viscosity());
+        return densityOverPressure * h * h * h / (24 * film.gas().viscosity());
     }
 
     /** Angle that cell (i, j) takes up at its middle radius (rad). */
@@ -129,7 +152,33 @@ final class Columns {
         int right = i % nci;
         double r0 = grid.radius(j);
         double r1 = grid.radius(j + 1);
-        double pressure = 0.5 * (nodePressure[grid.node(right, j)] + nodePressure[grid.node(right, j + 1)]);
-        return rho(pressure) * 0.5 * (h(left, j) + h(right, j)) * 0.5 * (r1 * r1 - r0 * r0);
+        double[] along = alongLine(right, j);
+        double integral = (along[0] + 4 * along[1] + along[2]) / 6 * (r1 - r0);
+        return densityOverPressure * integral * 0.5 * (h(left, j) + h(right, j));
+    }
+
+    /** p r at the start, the middle and the end of row j along a line, p² linear between the nodes. */
+    private double[] alongLine(int i, int j) {
+        double start = nodeSquare[grid.node(i, j)];
+        double end = nodeSquare[grid.node(i, j + 1)];
+        return new double[] {
+            Math.sqrt(start) * grid.radius(j),
+            Math.sqrt(0.5 * (start + end)) * 0.5 * (grid.radius(j) + grid.radius(j + 1)),
+            Math.sqrt(end) * grid.radius(j + 1)
+        };
+    }
+
+    /** How far ρ r leans along row j of a constant-i face: half its change over its mean. */
+    double leanRadial(int i, int j) {
+        double[] along = alongLine(i % grid.cellsTheta(), j);
+        double mean = (along[0] + 4 * along[1] + along[2]) / 6;
+        return 0.5 * (along[2] - along[0]) / mean;
+    }
+
+    /** How far ρ r bends along row j of a constant-i face: the mean of its ends over its mean, less 1. */
+    double bendRadial(int i, int j) {
+        double[] along = alongLine(i % grid.cellsTheta(), j);
+        double mean = (along[0] + 4 * along[1] + along[2]) / 6;
+        return 0.5 * (along[2] + along[0]) / mean - 1;
     }
 }

@@ -4,11 +4,14 @@ package org.whither.film;
  * The motion of the gas in a lubrication film, conserving mass at every point.
  *
  * <p>Let a, b in 0 … 1 be the place within a cell along θ and r. The mass flow in (a, b, σ) is the derivative of two
- * column potentials: P(a, σ), the flow below σ through a line of constant a, linear between the two constant-i faces of
- * the cell, and Q(b, σ) likewise for the constant-j faces. Then da/dt = ∂P/∂σ / m, db/dt = ∂Q/∂σ / m and dσ/dt =
- * −(∂P/∂a + ∂Q/∂b) / m, m = ρ h r Δr Δθ, which is free of divergence whatever P and Q are, has both faces sealed and lets
- * in exactly the supply of the cell through its feed. Along the face it is the lowest-order Raviart–Thomas interpolation,
- * the one under D. W. Pollock's closed-form paths (Ground Water 26(6), 1988).
+ * column potentials: P, the flow below σ through a line of constant a, linear between the two constant-i faces of the
+ * cell, and Q likewise for the constant-j faces. Then da/dt = ∂P/∂σ / m, db/dt = ∂Q/∂σ / m and dσ/dt = −(∂P/∂a + ∂Q/∂b) /
+ * m, m = ρ h r Δr Δθ, which is free of divergence whatever P and Q are, has both faces sealed and lets in exactly the
+ * supply of the cell through its feed. With P and Q even along the faces it is the lowest-order Raviart–Thomas
+ * interpolation, the one under D. W. Pollock's closed-form paths (Ground Water 26(6), 1988). That is kept for what the
+ * pressure drives, which is even along a face; what the faces drag along follows ρ r along it, by a factor w = 1 + κ (2b −
+ * 1) + λ (6b² − 6b + 1) of mean 1, so that the speed is right at every point of a row over which the pressure falls
+ * steeply; a term b − ∫w in Q takes up what that shifts, so that the divergence stays even over the cell.
  *
  * <p>Across the film each face of the grid has one profile, shared by both cells: the exact one of the thin film (Reynolds
  * 1886), a part linear in σ that the turning faces drag along and a parabola that the pressure drives, so that ψ(σ) = R
@@ -22,6 +25,8 @@ public final class ConservingFlow implements FilmFlow {
     private final ColumnFlows flows;
     private final double[] dragRotor;
     private final double[] dragStator;
+    private final double[] leanRadial;
+    private final double[] bendRadial;
     private final boolean nodalThickness;
     private final boolean fedThroughRotor;
 
@@ -46,9 +51,13 @@ public final class ConservingFlow implements FilmFlow {
         double stator = -film.steadyFrameSpeed();
         dragRotor = new double[grid.ni() * grid.cellsRadial()];
         dragStator = new double[dragRotor.length];
+        leanRadial = new double[dragRotor.length];
+        bendRadial = new double[dragRotor.length];
         for (int i = 0; i < grid.ni(); i++) {
             for (int j = 0; j < grid.cellsRadial(); j++) {
                 double moment = columns.rotationMoment(i, j);
+                leanRadial[i * grid.cellsRadial() + j] = columns.leanRadial(i, j);
+                bendRadial[i * grid.cellsRadial() + j] = columns.bendRadial(i, j);
                 dragRotor[i * grid.cellsRadial() + j] = 0.5 * rotor * moment;
                 dragStator[i * grid.cellsRadial() + j] = 0.5 * stator * moment;
             }
@@ -87,7 +96,7 @@ public final class ConservingFlow implements FilmFlow {
         double left = left0 + b * leftRise;
         double width = right0 + b * rightRise - left;
         double a = (theta - left) / width;
-        double mass = columns.rho(nodal(i, j, a, b)) * localThickness(i, j, a, b) * r * dr * width;
+        double mass = columns.rho(Math.sqrt(columns.square(i, j, a, b))) * localThickness(i, j, a, b) * r * dr * width;
 
         int face = i * (grid.nj() - 1) + j;
         int next = face + grid.nj() - 1;
@@ -102,10 +111,23 @@ public final class ConservingFlow implements FilmFlow {
         double inner = flows.radial(i, j);
         double outer = flows.radial(i, j + 1);
 
-        double here0 = dragRotor[face] * rotorHere + dragStator[face] * statorHere + driven0 * pressureHere;
-        double here1 = dragRotor[next] * rotorHere + dragStator[next] * statorHere + driven1 * pressureHere;
-        double aRate = ((1 - a) * here0 + a * here1) / mass;
-        double bRate = ((1 - b) * inner + b * outer) * pressureHere / mass;
+        double drag0 = dragRotor[face] * rotorHere + dragStator[face] * statorHere;
+        double drag1 = dragRotor[next] * rotorHere + dragStator[next] * statorHere;
+        double bCentre = 2 * b - 1;
+        double bBubble = b * (1 - b);
+        double bCurve = 1 - 6 * bBubble;
+        double aRate = ((1 - a)
+                                * (drag0 * (1 + leanRadial[face] * bCentre + bendRadial[face] * bCurve)
+                                        + driven0 * pressureHere)
+                        + a
+                                * (drag1 * (1 + leanRadial[next] * bCentre + bendRadial[next] * bCurve)
+                                        + driven1 * pressureHere))
+                / mass;
+        double bRate = (((1 - b) * inner + b * outer) * pressureHere
+                        + bBubble
+                                * ((leanRadial[next] + bendRadial[next] * bCentre) * drag1
+                                        - (leanRadial[face] + bendRadial[face] * bCentre) * drag0))
+                / mass;
         double spread = (dragRotor[next] - dragRotor[face]) * rotorBelow
                 + (dragStator[next] - dragStator[face]) * square
                 + (driven1 - driven0 + outer - inner) * pressureBelow;
@@ -115,11 +137,6 @@ public final class ConservingFlow implements FilmFlow {
         rates[0] = aRate * width + bRate * ((1 - a) * leftRise + a * rightRise);
         rates[1] = bRate * dr;
         rates[2] = -spread / mass;
-    }
-
-    private double nodal(int i, int j, double a, double b) {
-        return (1 - a) * ((1 - b) * columns.nodePressure(i, j) + b * columns.nodePressure(i, j + 1))
-                + a * ((1 - b) * columns.nodePressure(i + 1, j) + b * columns.nodePressure(i + 1, j + 1));
     }
 
     private double localThickness(int i, int j, double a, double b) {
@@ -144,7 +161,7 @@ public final class ConservingFlow implements FilmFlow {
 
     @Override
     public double pressure(int i, int j, int k, double theta, double r, double sigma) {
-        return nodal(i, j, across(i, j, theta, r), along(j, r));
+        return Math.sqrt(columns.square(i, j, across(i, j, theta, r), along(j, r)));
     }
 
     @Override
