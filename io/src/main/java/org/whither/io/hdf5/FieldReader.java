@@ -44,6 +44,8 @@ import static org.whither.io.hdf5.Layout.VELOCITY_THETA;
 import static org.whither.io.hdf5.Layout.VELOCITY_Z;
 import static org.whither.io.hdf5.Layout.VISCOSITY;
 
+import java.math.BigDecimal;
+import java.math.MathContext;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.List;
@@ -525,12 +527,16 @@ public final class FieldReader {
             if (radius < grid.innerRadius() - slack || radius > grid.outerRadius() + slack) {
                 throw source.refuse(
                         "attribute " + section.place(name) + " is " + radius + " m, off the face",
-                        "a radius between " + grid.innerRadius() + " m and " + grid.outerRadius()
+                        "a radius between " + rounded(grid.innerRadius()) + " m and " + rounded(grid.outerRadius())
                                 + " m, the ends of /grid/radius",
                         "give the feed's radii in metres");
             }
         }
         return new Supply.Annulus(from, to);
+    }
+
+    private static double rounded(double value) {
+        return new BigDecimal(value).round(new MathContext(10)).doubleValue();
     }
 
     private boolean[] cells(StoredArray mask) {

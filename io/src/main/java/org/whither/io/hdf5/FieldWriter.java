@@ -41,13 +41,20 @@ public final class FieldWriter {
     }
 
     private static void writeTo(Film film, Path file) throws IOException {
-        // The library's own writer of files would add the make of this machine and, where the last group has no
-        // dataset, overwrite that group with it (jHDF 0.11.0, WritableHdfFile.flush); so its parts are used here.
+        write(root(film), file);
+    }
+
+    /**
+     * Writes a tree of groups and datasets to a new file. The library's own writer of files would add the make of this
+     * machine and, where the group written last has no dataset, overwrite that group with it (jHDF 0.11.0,
+     * WritableHdfFile.flush); so its parts are used here.
+     */
+    static void write(WritableGroup root, Path file) throws IOException {
         Superblock.SuperblockV2V3 superblock = new Superblock.SuperblockV2V3();
         try (FileChannel channel = FileChannel.open(
                 file, StandardOpenOption.READ, StandardOpenOption.WRITE, StandardOpenOption.CREATE_NEW)) {
             HdfFileChannel target = new HdfFileChannel(channel, superblock);
-            long end = root(film).write(target, WritableHdfFile.ROOT_GROUP_ADDRESS);
+            long end = root.write(target, WritableHdfFile.ROOT_GROUP_ADDRESS);
             FlatDataset.put(target, superblock.toBuffer(end), 0);
             if (channel.size() != end) {
                 throw new IOException(

@@ -14,9 +14,11 @@ import io.jhdf.object.message.DataTypeMessage;
 import io.jhdf.object.message.FillValueMessage;
 import io.jhdf.object.message.Message;
 import io.jhdf.storage.HdfFileChannel;
+import java.lang.reflect.Array;
 import java.nio.ByteBuffer;
 import java.nio.ByteOrder;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Map;
 import java.util.function.IntToDoubleFunction;
@@ -103,8 +105,9 @@ final class FlatDataset extends WritableDatasetImpl {
     }
 
     private static DataSpace space(int[] shape) {
-        return DataSpace.modifyDimensions(
-                DataSpace.fromObject(java.lang.reflect.Array.newInstance(double.class, new int[shape.length])), shape);
+        int[] ones = new int[shape.length];
+        Arrays.fill(ones, 1);
+        return DataSpace.modifyDimensions(DataSpace.fromObject(Array.newInstance(double.class, ones)), shape);
     }
 
     /** Writes all that a buffer holds; returns how many bytes that is. */

@@ -8,6 +8,7 @@ import io.jhdf.SymbolTableEntry;
 import io.jhdf.api.Dataset;
 import io.jhdf.api.Group;
 import io.jhdf.api.Node;
+import io.jhdf.api.dataset.ChunkedDataset;
 import io.jhdf.btree.BTreeV1;
 import io.jhdf.links.ExternalLink;
 import io.jhdf.links.SoftLink;
@@ -15,12 +16,14 @@ import io.jhdf.object.message.LinkMessage;
 import io.jhdf.object.message.SymbolTableMessage;
 import io.jhdf.storage.HdfBackingStorage;
 import java.io.IOException;
+import java.io.UncheckedIOException;
 import java.nio.ByteBuffer;
 import java.nio.channels.FileChannel;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.nio.file.StandardOpenOption;
+import java.util.Arrays;
 import java.util.LinkedHashMap;
 import java.util.Map;
 import java.util.function.Supplier;
@@ -108,7 +111,7 @@ final class HdfSource implements AutoCloseable {
             bytes.flip();
             return HdfFile.fromByteBuffer(bytes);
         } catch (IOException e) {
-            throw new java.io.UncheckedIOException(e);
+            throw new UncheckedIOException(e);
         }
     }
 
@@ -118,7 +121,7 @@ final class HdfSource implements AutoCloseable {
         for (long at = 0; at + SIGNATURE.length <= size; at = at == 0 ? 512 : 2 * at) {
             bytes.clear();
             channel.read(bytes, at);
-            if (java.util.Arrays.equals(bytes.array(), SIGNATURE)) {
+            if (Arrays.equals(bytes.array(), SIGNATURE)) {
                 return true;
             }
         }
@@ -126,10 +129,7 @@ final class HdfSource implements AutoCloseable {
     }
 
     private void checkLength() {
-        long end = guarded("", () -> {
-            var superblock = hdf.getHdfBackingStorage().getSuperblock();
-            return superblock.getEndOfFileAddress() + superblock.getBaseAddressByte();
-        });
+        long end = guarded("", () -> hdf.getHdfBackingStorage().getSuperblock().getEndOfFileAddress());
         if (size < end) {
             throw refuse(
                     "the file is cut short: it has " + size + " bytes",
@@ -293,7 +293,7 @@ final class HdfSource implements AutoCloseable {
 
     /** Whether so many bytes of a dataset can be in this file, compressed or not. */
     boolean canHold(Dataset dataset, long bytes) {
-        long ratio = dataset instanceof io.jhdf.api.dataset.ChunkedDataset ? MOST_COMPRESSED : 1;
+        long ratio = dataset instanceof ChunkedDataset ? MOST_COMPRESSED : 1;
         return bytes / ratio <= size;
     }
 
