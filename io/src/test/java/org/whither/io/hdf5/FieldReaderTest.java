@@ -1,0 +1,81 @@
+package org.whither.io.hdf5;
+
+import java.io.IOException;
+import java.nio.file.Path;
+import org.junit.jupiter.api.io.TempDir;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.CsvSource;
+import org.junit.jupiter.params.provider.ValueSource;
+import org.whither.film.Film;
+
+/** Files made by the HDF5 C library (through h5py, see {@code fields/make_fields.py}) are read equal to their numbers. */
+class FieldReaderTest {
+    /** Sums in the formulas round differently in the two languages. */
+    private static final double DOUBLE = 4e-16;
+    /** Half a unit in the last place of a 32-bit number, 2⁻²⁴, and the shift of 273.15 K in one. */
+    private static final double SINGLE = 0x1p-23;
+
+    @TempDir
+    private Path folder;
+
+    static Film expected(String name) {
+        if (name.startsWith("full")) {
+            return FieldFixture.full();
+        }
+        switch (name) {
+            case "film-nodes.h5":
+                return FieldFixture.filmNodes();
+            case "film-cells.h5":
+                return FieldFixture.filmCells();
+            default:
+                return FieldFixture.filmMixed();
+        }
+    }
+
+    static double tolerance(String name) {
+        return name.equals("full-units.h5") ? SINGLE : DOUBLE;
+    }
+
+    @ParameterizedTest
+    @ValueSource(
+            strings = {
+                "full-plain.h5",
+                "full-units.h5",
+                "full-big-endian.h5",
+                "full-latest.h5",
+                "full-user-block.h5",
+                "film-nodes.h5",
+                "film-cells.h5",
+                "film-mixed.h5"
+            })
+    void read_fileOfTheLibrary_equalsItsNumbers(String name) {
+        FieldFixture.assertSame(expected(name), FieldReader.read(FieldFixture.FOLDER.resolve(name)), tolerance(name));
+    }
+
+    @ParameterizedTest
+    @ValueSource(
+            strings = {
+                "full-plain.h5",
+                "full-units.h5",
+                "full-big-endian.h5",
+                "film-nodes.h5",
+                "film-cells.h5",
+                "film-mixed.h5"
+            })
+    void write_readBack_changesNothing(String name) throws IOException {
+        Film film = FieldReader.read(FieldFixture.FOLDER.resolve(name));
+        Path written = folder.resolve("written.h5");
+        FieldWriter.write(film, written);
+        FieldFixture.assertSame(film, FieldReader.read(written), 0);
+    }
+
+    @ParameterizedTest
+    @CsvSource({"full-plain.h5", "film-cells.h5"})
+    void write_twice_givesTheSameBytes(String name) throws IOException {
+        Film film = FieldReader.read(FieldFixture.FOLDER.resolve(name));
+        FieldWriter.write(film, folder.resolve("one.h5"));
+        FieldWriter.write(film, folder.resolve("two.h5"));
+        org.junit.jupiter.api.Assertions.assertEquals(
+                -1, java.nio.file.Files.mismatch(folder.resolve("one.h5"), folder.resolve("two.h5")));
+    }
+}
