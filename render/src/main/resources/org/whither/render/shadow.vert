@@ -1,0 +1,10 @@
+#version 330 core
+// Depth seen from the lamp.
+layout(location = 0) in vec3 position;
+uniform mat4 lightView;
+uniform vec2 turn;
+
+void main() {
+    vec3 p = vec3(turn.x * position.x - turn.y * position.y, turn.y * position.x + turn.x * position.y, position.z);
+    gl_Position = lightView * vec4(p, 1.0);
+}
