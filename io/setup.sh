@@ -374,7 +374,7 @@ build() {
   fi
   take_turn
   ! is_built || return 0 # another start built it meanwhile
-  say 'building the program; the first time this takes some minutes, as libraries are fetched'
+  say 'building the program; the first time, when libraries are fetched, this takes a minute or more'
   if ! run_maven -q -Dmaven.test.skip=true package >"$target/build.log" 2>&1; then
     cat "$target/build.log" >&2
     say "the build failed; what Maven said stands above and in $target/build.log"
