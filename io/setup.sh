@@ -306,11 +306,17 @@ install_missing() {
 say_command() {
   name_packages
   if has_dpkg && command -v apt-get >/dev/null; then
-    printf '  %s\n' "sudo sh -c 'apt-get update && apt-get install -y --no-install-recommends$needed$wanted'" >&2
-    command -v sudo >/dev/null || say "(there is no sudo here: as root, type what stands between the quotation marks)"
+    mend="apt-get update && apt-get install -y --no-install-recommends$needed$wanted"
+    if [ "$(id -u)" -eq 0 ]; then
+      printf '  %s\n' "$mend" >&2
+    elif command -v sudo >/dev/null; then
+      printf "  sudo sh -c '%s'\n" "$mend" >&2
+    else
+      printf "  su -c '%s'\n" "$mend" >&2
+    fi
   else
-    say "install these with the system's own package manager; on Debian and Ubuntu the packages would be: ${needed:-}" \
-      "$gl_packages $text_packages"
+    say "the command of this system's own package manager; on Debian and Ubuntu the packages are" \
+      "openjdk-17-jdk-headless maven $gl_packages $text_packages${test_missing:+ $test_packages}"
   fi
 }
 
@@ -361,6 +367,8 @@ take_turn() {
 # Runs Maven on the whole house with the arguments given.
 run_maven() {
   : >"$half_built"
+  WHITHER_BUILD_UNDER_WAY=yes
+  export WHITHER_BUILD_UNDER_WAY
   # -B and the options after it keep colours and the progress of downloads out of the output.
   (cd "$root" && exec "$maven" -B -ntp -Dstyle.color=never "$@" </dev/null) || return 1
   touch -c "$jar" # Maven leaves the file alone if only another module changed; is_built() compares with its time
@@ -368,6 +376,10 @@ run_maven() {
 }
 
 build() {
+  if [ -n "${WHITHER_BUILD_UNDER_WAY:-}" ]; then
+    say 'the program cannot be started from its own build or tests, where it is not whole yet'
+    exit 1
+  fi
   if [ ! -w "$root/io" ]; then
     say "the program is not built yet, and this account may not write to $root/io; build it with an account that may"
     exit 3
