@@ -15,6 +15,7 @@
 
 jdk_least=17
 maven_least=3.6.3
+jvm_folder=/usr/lib/jvm
 gl_packages='libegl1 libegl-mesa0 libgl1 libgl1-mesa-dri libgles2 libxrender1'
 text_packages='libfreetype6 fontconfig fonts-dejavu-core'
 test_packages='python3-h5py hdf5-tools'
@@ -51,7 +52,7 @@ java_version() {
 }
 
 # Sets java_home to a Java of version 17 or later with the tool $1 (java or javac), and major to its version: the one
-# of JAVA_HOME, else of PATH, else the newest under /usr/lib/jvm. Status 1 if there is none.
+# of JAVA_HOME, else of PATH, else the newest under jvm_folder. Status 1 if there is none.
 find_java() {
   java_home=${JAVA_HOME:-}
   java_home=${java_home%/}
@@ -75,7 +76,7 @@ find_java() {
   fi
   newest_home=''
   newest=0
-  for java_home in /usr/lib/jvm/*; do
+  for java_home in "$jvm_folder"/*; do
     if [ -x "$java_home/bin/$1" ]; then
       java_version "$java_home" "$1"
       if [ "$major" -ge "$jdk_least" ] && [ "$major" -gt "$newest" ]; then
@@ -160,9 +161,9 @@ absent_libraries() {
 # Sets maven to the command and maven_version to its version, without starting a JVM where the version can be read.
 find_maven() {
   maven_version=
-  if maven=$(command -v mvn); then :; elif [ -x "${MAVEN_HOME:-}/bin/mvn" ]; then maven=$MAVEN_HOME/bin/mvn; else
-    maven=
-    return 1
+  if ! maven=$(command -v mvn); then
+    maven=${MAVEN_HOME:-/nowhere}/bin/mvn
+    [ -x "$maven" ] || return 1
   fi
   real=$(readlink -f "$maven" || echo "$maven")
   for core in "${real%/bin/mvn}"/lib/maven-core-[0-9]*.jar; do
