@@ -27,6 +27,12 @@ final class Gallery {
                     say("plan" + end, start);
                     start = write(plan, new File(folder, "plan" + end));
                 }
+                if (arguments.length < 2 || arguments[1].contains("gap")) {
+                    BufferedImage gap =
+                            Gap.draw(film, film.paths(Frame.ROTATING), new GapSettings(settings, GapSettings.USUAL));
+                    say("gap" + end, start);
+                    start = write(gap, new File(folder, "gap" + end));
+                }
             }
         }
     }
