@@ -199,16 +199,6 @@ public final class ConservingFlow implements FilmFlow {
     }
 
     @Override
-    public int profileParts() {
-        return 1;
-    }
-
-    @Override
-    public double profilePart(int part) {
-        return part;
-    }
-
-    @Override
     public String interpolation() {
         return "conserving";
     }

@@ -66,12 +66,16 @@ public interface FilmFlow {
 
     /**
      * Number of parts, each between two heights, in which the radial flow through a constant-j face is taken to run one
-     * way.
+     * way; 1 where a pressure that is constant across the film drives it.
      */
-    int profileParts();
+    default int profileParts() {
+        return 1;
+    }
 
     /** Lower bound of such a part, or 1 for part = profileParts(), as a fraction of the film thickness. */
-    double profilePart(int part);
+    default double profilePart(int part) {
+        return part;
+    }
 
     /** Which interpolation this is, as written in results: {@code conserving} or {@code nodal}. */
     String interpolation();

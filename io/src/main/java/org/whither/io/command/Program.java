@@ -2,6 +2,7 @@ package org.whither.io.command;
 
 import java.io.IOException;
 import java.io.PrintWriter;
+import java.nio.charset.StandardCharsets;
 import java.nio.file.AccessDeniedException;
 import java.nio.file.FileSystemException;
 import java.util.concurrent.Callable;
@@ -36,12 +37,7 @@ import picocli.CommandLine.Spec;
                     + " guarantee, and nothing to set trips, alarms, zones or exposure limits by. Local codes, the seal"
                     + " maker, the plant's safety studies and licensed practice come first. Nitrogen asphyxiates."
         },
-        subcommands = {
-            DemoCommand.class,
-            CheckCommand.class,
-            SplitCommand.class,
-            DrawCommand.class,
-            SampleCommand.class
+        subcommands = {DemoCommand.class, CheckCommand.class, SplitCommand.class, DrawCommand.class, SampleCommand.class
         })
 public final class Program implements Callable<Integer> {
     @Spec
@@ -56,7 +52,10 @@ public final class Program implements Callable<Integer> {
      * @return exit status
      */
     public static int run(String... arguments) {
-        return run(new PrintWriter(System.out, true), new PrintWriter(System.err, true), arguments);
+        return run(
+                new PrintWriter(System.out, true, StandardCharsets.UTF_8),
+                new PrintWriter(System.err, true, StandardCharsets.UTF_8),
+                arguments);
     }
 
     static int run(PrintWriter out, PrintWriter err, String... arguments) {

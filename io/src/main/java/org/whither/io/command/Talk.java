@@ -14,9 +14,7 @@ final class Talk {
     @Spec(Spec.Target.MIXEE)
     private CommandSpec spec;
 
-    @Option(
-            names = "--json",
-            description = "Print the result as JSON on standard output, and nothing else there.")
+    @Option(names = "--json", description = "Print the result as JSON on standard output, and nothing else there.")
     private boolean json;
 
     @Option(names = "--quiet", description = "Say nothing of the progress.")

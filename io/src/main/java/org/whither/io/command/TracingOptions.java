@@ -23,8 +23,9 @@ final class TracingOptions {
             names = "--tolerance",
             paramLabel = "X",
             defaultValue = "1e-6",
-            description = "Error of an integration step, as a part of the film thickness and of the film's radial extent;"
-                    + " 1e-12 … 1e-2 (default: ${DEFAULT-VALUE}).")
+            description =
+                    "Error of an integration step, as a part of the film thickness and of the film's radial extent;"
+                            + " 1e-12 … 1e-2 (default: ${DEFAULT-VALUE}).")
     private double tolerance;
 
     @Option(

@@ -98,6 +98,31 @@ public final class WholeFolder {
         Unfinished.force(place.getParent());
     }
 
+    /**
+     * Like {@link #write}, but files of earlier results that the filler does not write again are kept.
+     *
+     * @param target the final name; the folder around it must exist
+     * @param filler fills the empty folder it is given
+     * @throws RefusedInput as {@link #check}
+     * @throws IOException where writing fails
+     */
+    public static void add(Path target, ThrowingConsumer<Path> filler) throws IOException {
+        write(target, folder -> {
+            filler.accept(folder);
+            Path earlier = Unfinished.place(target);
+            if (!Files.isDirectory(earlier, LinkOption.NOFOLLOW_LINKS)) {
+                return;
+            }
+            for (String name : filesIn(earlier)) {
+                Path copy = folder.resolve(name);
+                if (!name.equals(LIST) && !Files.exists(copy, LinkOption.NOFOLLOW_LINKS)) {
+                    Files.createDirectories(copy.getParent());
+                    Files.copy(earlier.resolve(name), copy, LinkOption.NOFOLLOW_LINKS);
+                }
+            }
+        });
+    }
+
     private static void swap(Path partial, Path place) throws IOException {
         if (!Files.exists(place, LinkOption.NOFOLLOW_LINKS)) {
             Files.move(partial, place);

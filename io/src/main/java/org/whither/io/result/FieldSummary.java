@@ -87,7 +87,8 @@ public final class FieldSummary {
         } else if (!(balance.supplyIn() > 0)) {
             said.add("No gas enters through the feed.");
         }
-        if (flow instanceof ConservingFlow conserving && conserving.columnFlows().correction() > 0.01) {
+        if (flow instanceof ConservingFlow conserving
+                && conserving.columnFlows().correction() > 0.01) {
             said.add(String.format(
                     Locale.ROOT,
                     "The mass flows of the cells had to be changed by %.1f %% to balance: the pressure and the film"
@@ -128,11 +129,13 @@ public final class FieldSummary {
         line(
                 s,
                 "Inner diameter",
-                film.conditions().innerSide() + ", " + EngineerUnits.pressure(film.conditions().pressureInner()));
+                film.conditions().innerSide() + ", "
+                        + EngineerUnits.pressure(film.conditions().pressureInner()));
         line(
                 s,
                 "Outer diameter",
-                film.conditions().outerSide() + ", " + EngineerUnits.pressure(film.conditions().pressureOuter()));
+                film.conditions().outerSide() + ", "
+                        + EngineerUnits.pressure(film.conditions().pressureOuter()));
         film.conditions().pressureSupply().ifPresent(p -> line(s, "Supply", EngineerUnits.pressure(p)));
         line(s, "Feed", feed());
         line(
@@ -140,7 +143,10 @@ public final class FieldSummary {
                 "Speed",
                 EngineerUnits.speed(film.conditions().rotationRate())
                         + (film.conditions().rotationRate() < 0 ? " (towards −θ)" : " (towards +θ)"));
-        line(s, "Temperature", String.format(Locale.ROOT, "%.2f K", film.conditions().temperature()));
+        line(
+                s,
+                "Temperature",
+                String.format(Locale.ROOT, "%.2f K", film.conditions().temperature()));
         line(
                 s,
                 "Gas",
@@ -220,7 +226,8 @@ public final class FieldSummary {
         line(
                 s,
                 name,
-                String.format(Locale.ROOT, "%.3g (%s the bound of %.2g)", value, value > bound ? "ABOVE" : "below", bound));
+                String.format(
+                        Locale.ROOT, "%.3g (%s the bound of %.2g)", value, value > bound ? "ABOVE" : "below", bound));
     }
 
     /**

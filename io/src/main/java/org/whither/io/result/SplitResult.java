@@ -82,7 +82,8 @@ public record SplitResult(
         return Optional.empty();
     }
 
-    // ---- JSON --------------------------------------------------------------------------------------------------------
+    // ---- JSON
+    // --------------------------------------------------------------------------------------------------------
 
     /** The split as JSON; SI units. */
     public ObjectNode json() {
@@ -141,7 +142,8 @@ public record SplitResult(
         return value.name().toLowerCase(Locale.ROOT);
     }
 
-    // ---- words -------------------------------------------------------------------------------------------------------
+    // ---- words
+    // -------------------------------------------------------------------------------------------------------
 
     /** The split in plain words and the engineer's units. */
     public String text() {
@@ -213,7 +215,9 @@ public record SplitResult(
                     Math.max(0.1, Math.ceil(1000 * half) / 10)));
             split.row(PathEnd.Border.SUPPLY, Destination.SUPPLY)
                     .ifPresent(row -> s.append(String.format(
-                            Locale.ROOT, " %.1f of them go back into the feed.", 100 * row.share().share())));
+                            Locale.ROOT,
+                            " %.1f of them go back into the feed.",
+                            100 * row.share().share())));
         } else {
             s.append("No supply gas enters the film.");
         }
@@ -226,7 +230,9 @@ public record SplitResult(
         BorderBalance balance = split.balance();
         if (balance.outerIn() <= 1e-9 * balance.inflow()) {
             return String.format(
-                    Locale.ROOT, "No gas enters the film from the %s.", film.conditions().outerSide());
+                    Locale.ROOT,
+                    "No gas enters the film from the %s.",
+                    film.conditions().outerSide());
         }
         Optional<SplitRow> row = split.row(PathEnd.Border.OUTER, Destination.INNER);
         String enters = String.format(
@@ -260,14 +266,13 @@ public record SplitResult(
                     case OUTER -> film.conditions().outerSide();
                 })
                 .orElse("not traced back");
-        String to =
-                switch (row.to()) {
-                    case INNER -> film.conditions().innerSide();
-                    case OUTER -> film.conditions().outerSide();
-                    case SUPPLY -> "feed";
-                    case HELD -> "held inside";
-                    case LOST -> "not known";
-                };
+        String to = switch (row.to()) {
+            case INNER -> film.conditions().innerSide();
+            case OUTER -> film.conditions().outerSide();
+            case SUPPLY -> "feed";
+            case HELD -> "held inside";
+            case LOST -> "not known";
+        };
         return String.format(
                 Locale.ROOT,
                 "%-28s %11s %11s  %-22s %-30s %s%n",
@@ -294,8 +299,8 @@ public record SplitResult(
                 "  %-26s %11s %11s  %s%n",
                 name,
                 EngineerUnits.digits(EngineerUnits.gramsPerHour(massFlow)),
-                EngineerUnits.digits(
-                        EngineerUnits.normalLitresPerMinute(massFlow, flow.film().gas())),
+                EngineerUnits.digits(EngineerUnits.normalLitresPerMinute(
+                        massFlow, flow.film().gas())),
                 supply > 0 ? String.format(Locale.ROOT, "%.4f of the supply", massFlow / supply) : ""));
     }
 }

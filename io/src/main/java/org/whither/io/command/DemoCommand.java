@@ -1,0 +1,100 @@
+package org.whither.io.command;
+
+import java.io.IOException;
+import java.nio.file.Path;
+import java.util.Optional;
+import java.util.concurrent.Callable;
+import org.whither.io.file.WholeFolder;
+import org.whither.io.hdf5.FieldWriter;
+import org.whither.io.result.SplitResult;
+import org.whither.render.Gap;
+import org.whither.render.GapSettings;
+import org.whither.render.NoOpenGL;
+import org.whither.render.PictureSettings;
+import org.whither.samples.SampleSeals;
+import org.whither.samples.SolvedFilm;
+import picocli.CommandLine.Command;
+import picocli.CommandLine.Mixin;
+import picocli.CommandLine.Model.CommandSpec;
+import picocli.CommandLine.Spec;
+
+/** The whole job on the built-in sample. */
+@Command(
+        name = "demo",
+        mixinStandardHelpOptions = true,
+        versionProvider = Program.Version.class,
+        header = "Do the whole job on a built-in, invented seal.%n",
+        description = {
+            "Computes the film of an invented spiral-groove seal, writes it as a field file, finds where its supply gas"
+                    + " goes, and draws it. Writes field.h5, split.json, plan.png and gap.png into the folder.",
+            "Without usable OpenGL it still gives the numbers, says which packages pictures need, and ends with status"
+                    + " 4.%n"
+        },
+        sortOptions = false)
+final class DemoCommand implements Callable<Integer> {
+    private static final Path DEFAULT_FOLDER = Path.of("demo-whither");
+    private static final int PATHS = 12;
+
+    @Spec
+    private CommandSpec spec;
+
+    @Mixin
+    private FolderOption folder;
+
+    @Mixin
+    private GridOption grid;
+
+    @Mixin
+    private TracingOptions tracing;
+
+    @Mixin
+    private Talk talk;
+
+    @Override
+    public Integer call() throws IOException {
+        Path target = folder.or(DEFAULT_FOLDER);
+        WholeFolder.check(target);
+        var settings = tracing.split();
+        SolvedFilm solved = SampleCommand.compute(spec, SampleSeals.names().get(0), null, grid, talk);
+        talk.say(SampleCommand.words(solved.facts(), solved));
+        talk.say("");
+        SplitResult[] found = new SplitResult[1];
+        String[] sentence = new String[1];
+        WholeFolder.write(target, into -> {
+            Path file = into.resolve("field.h5");
+            FieldWriter.write(solved.film(), file);
+            FieldInput input = FieldInput.read(file, talk);
+            found[0] = SplitCommand.find(input, settings, talk);
+            SplitCommand.writeNumbers(found[0], into);
+            sentence[0] = draw(input, found[0], into).orElse(null);
+        });
+        SplitCommand.print(found[0], talk);
+        talk.say("Written: " + target.toAbsolutePath());
+        if (sentence[0] != null) {
+            talk.warn(sentence[0]);
+            return ExitStatus.SHORT_OF_WANTED;
+        }
+        return SplitCommand.status(found[0]);
+    }
+
+    private Optional<String> draw(FieldInput input, SplitResult result, Path into) throws IOException {
+        try (Talk.Stretch stretch = talk.begin("Drawing")) {
+            Optional<String> missing = SplitCommand.drawPlan(input, result, into, tracing);
+            stretch.accept(0.6);
+            if (missing.isPresent()) {
+                return missing;
+            }
+            var how = Pictures.settings(input.flow(), tracing.frame(), tracing.tolerance());
+            PictureSettings picture = PictureSettings.standard(input.title()).speedsIn(tracing.frame());
+            Pictures.write(
+                    Gap.draw(
+                            input.flow(),
+                            Pictures.paths(input.flow(), how, tracing.seed(), PATHS),
+                            new GapSettings(picture, GapSettings.USUAL)),
+                    into.resolve("gap.png"));
+            return Optional.empty();
+        } catch (NoOpenGL e) {
+            return Optional.of(e.getMessage());
+        }
+    }
+}
