@@ -17,11 +17,12 @@ jdk_least=17
 maven_least=3.6.3
 jvm_folder=/usr/lib/jvm
 gl_packages='libegl1 libegl-mesa0 libgl1 libgl1-mesa-dri libgles2 libxrender1'
-text_packages='libfreetype6 fontconfig fonts-dejavu-core'
+# Java2D draws text with them; the headless Java of newer systems does not bring libharfbuzz0b itself.
+text_packages='libfreetype6 libharfbuzz0b fontconfig fonts-dejavu-core'
 test_packages='python3-h5py hdf5-tools'
 # The same where there is no dpkg to ask: sonames as the dynamic linker knows them.
 gl_libraries='libEGL.so.1 libEGL_mesa.so.0 libGL.so.1 libGLESv2.so.2 libXrender.so.1'
-text_libraries='libfreetype.so.6 libfontconfig.so.1'
+text_libraries='libfreetype.so.6 libharfbuzz.so.0 libfontconfig.so.1'
 
 say() {
   printf 'whither setup: %s\n' "$*" >&2

@@ -36,7 +36,7 @@ final class FakeMachine {
             "touch",
             "tr");
     static final String ALL_PACKAGES = "libegl1 libegl-mesa0 libgl1 libgl1-mesa-dri libgles2 libxrender1 "
-            + "libfreetype6 fontconfig fonts-dejavu-core python3-h5py hdf5-tools";
+            + "libfreetype6 libharfbuzz0b fontconfig fonts-dejavu-core python3-h5py hdf5-tools";
 
     /** The top of the clone; its name has a space in it. */
     final Path house;
@@ -107,9 +107,9 @@ final class FakeMachine {
                 """.replace("VERSION", version) + build);
     }
 
-    /** The shell text of a build that makes what Maven makes. */
+    /** The shell text of a build that makes what Maven makes; like Maven it leaves a program alone that is there. */
     static String makeProgram() {
-        return "sleep 0.3; mkdir -p io/target/lib && echo made >io/target/whither.jar";
+        return "sleep 0.3; mkdir -p io/target/lib; [ -e io/target/whither.jar ] || echo made >io/target/whither.jar";
     }
 
     /** Says which packages are installed. */
