@@ -227,7 +227,7 @@ final class FilmEquations {
         }
         settleFaceValues(at);
         for (int m = 0; m < 2; m++) {
-            upwinded += peclet[m] > 2 * pressure(faceValue[m]) ? 1 : 0;
+            upwinded += peclet[m] > 2 * pressure(upstream[m]) ? 1 : 0;
         }
         for (int k = 0; k < 4; k++) {
             double value = coefficients[at + FLUX_C + 2 * k] * jumpFactor[0] * facePressure[0]
@@ -283,17 +283,17 @@ final class FilmEquations {
     private void couettePressure(int m) {
         double own = pressure(faceValue[m]);
         double ownSlope = pressureSlope(faceValue[m]);
-        if (peclet[m] <= 2 * own) {
+        double before = pressure(upstream[m]);
+        if (peclet[m] <= 2 * before || before <= 0) {
             facePressure[m] = own;
             byValue[m] = ownSlope;
             byUpstream[m] = 0;
             return;
         }
-        double share = 1 - 2 * own / peclet[m];
-        double before = pressure(upstream[m]);
+        double share = 1 - 2 * before / peclet[m];
         facePressure[m] = own + share * (before - own);
-        byValue[m] = ownSlope * (1 - share - 2 / peclet[m] * (before - own));
-        byUpstream[m] = share * pressureSlope(upstream[m]);
+        byValue[m] = ownSlope * (1 - share);
+        byUpstream[m] = pressureSlope(upstream[m]) * (share - 2 / peclet[m] * (before - own));
     }
 
     private void differentiateNode(int at, int up) {

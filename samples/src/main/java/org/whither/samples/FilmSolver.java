@@ -11,6 +11,7 @@ final class FilmSolver {
     static final double CLOSED = 1e-10;
 
     private static final int MOST_ITERATIONS = 30;
+    private static final double SHORTEST_STEP = 1e-4;
     private static final double SMALLEST_SPEED_STEP = 1.0 / 128;
 
     /** A solved film; arrays as in {@link FilmEquations#evaluate}, which nobody may change. */
@@ -27,6 +28,7 @@ final class FilmSolver {
     private final FilmEquations equations;
     private final BalanceMatrix matrix;
     private final int cells;
+    private DoubleConsumer progress = share -> {};
     private int iterations;
     private double imbalance;
 
@@ -53,30 +55,15 @@ final class FilmSolver {
      */
     Solution solve(DoubleConsumer progress) {
         double omega = problem.rotationRate();
-        double[] s = atRestGuess();
+        this.progress = progress;
         progress.accept(0);
-        if (!newton(s, 0)) {
-            throw notConverged(0, "at standstill");
-        }
-        progress.accept(0.25);
-        double reached = 0;
-        double step = 1;
+        double[] s = atRestGuess();
         int speedSteps = 0;
-        while (reached < 1 && omega != 0) {
-            double next = Math.min(1, reached + step);
-            double[] trial = s.clone();
-            if (newton(trial, next * omega)) {
-                s = trial;
-                reached = next;
-                speedSteps++;
-                step *= 2;
-                progress.accept(0.25 + 0.7 * reached);
-            } else {
-                step /= 2;
-                if (step < SMALLEST_SPEED_STEP) {
-                    throw notConverged(next * omega, "between " + reached * omega + " and " + next * omega + " rad/s");
-                }
-            }
+        if (newton(s, omega)) {
+            speedSteps = omega == 0 ? 0 : 1;
+        } else {
+            s = atRestGuess();
+            speedSteps = raiseSpeed(s, omega);
         }
         for (int n = 0; n < cells; n++) {
             if (!(s[n] > equations.smallest())) {
@@ -93,6 +80,38 @@ final class FilmSolver {
         equations.evaluate(s, omega, residual, null, massTheta, massRadial);
         progress.accept(1);
         return new Solution(s, massTheta, massRadial, iterations, speedSteps, imbalance, equations.upwinded());
+    }
+
+    /**
+     * Continuation: from standstill to full speed in steps that adapt.
+     *
+     * @param s the guess, then the solution (Pa²)
+     * @param omega full speed (rad/s)
+     * @return steps taken
+     */
+    private int raiseSpeed(double[] s, double omega) {
+        if (omega == 0 || !newton(s, 0)) {
+            throw notConverged(0, "at standstill");
+        }
+        double reached = 0;
+        double step = 0.5;
+        int steps = 0;
+        while (reached < 1) {
+            double next = Math.min(1, reached + step);
+            double[] trial = s.clone();
+            if (newton(trial, next * omega)) {
+                System.arraycopy(trial, 0, s, 0, cells);
+                reached = next;
+                steps++;
+                step *= 2;
+            } else {
+                step /= 2;
+                if (step < SMALLEST_SPEED_STEP) {
+                    throw notConverged(next * omega, "between " + reached * omega + " and " + next * omega + " rad/s");
+                }
+            }
+        }
+        return steps;
     }
 
     private IllegalStateException notConverged(double omega, String where) {
@@ -140,11 +159,13 @@ final class FilmSolver {
         imbalance = largest(residual) / passing(s, massRadial, jacobian);
         for (int iteration = 0; iteration < MOST_ITERATIONS; iteration++) {
             iterations++;
+            // seven or so iterations are usual
+            progress.accept(iterations / (iterations + 2.0));
             double scale = 1 / meanDiagonal(jacobian);
             if (!matrix.solve(jacobian, scale, residual, change)) {
                 return false;
             }
-            double length = 1;
+            double length = longestStep(s, change);
             double trialNorm;
             while (true) {
                 for (int n = 0; n < cells; n++) {
@@ -152,7 +173,7 @@ final class FilmSolver {
                 }
                 equations.evaluate(trial, omega, trialResidual, null, null, null);
                 trialNorm = norm(trialResidual);
-                if (trialNorm < (1 - 1e-4 * length) * norm || length < 1e-3) {
+                if (trialNorm < (1 - 1e-4 * length) * norm || length < SHORTEST_STEP) {
                     break;
                 }
                 length /= 2;
@@ -173,6 +194,17 @@ final class FilmSolver {
         return imbalance <= CLOSED;
     }
 
+    /** The whole Newton step, or as much of it as leaves every cell a tenth of its s. */
+    private double longestStep(double[] s, double[] change) {
+        double length = 1;
+        for (int n = 0; n < cells; n++) {
+            if (length * change[n] > 0.9 * s[n]) {
+                length = 0.9 * s[n] / change[n];
+            }
+        }
+        return length;
+    }
+
     /** Gas that passes through the sector's film: half of all that crosses the diameters and the feed (kg/s). */
     private double passing(double[] s, double[] massRadial, double[] jacobian) {
         SheetGrid grid = problem.grid();
@@ -188,7 +220,7 @@ final class FilmSolver {
         }
         // a film through which nothing passes is measured by its rounding
         double p = Math.max(problem.pressureInner(), problem.pressureOuter());
-        return Math.max(0.5 * sum, 1e-6 * meanDiagonal(jacobian) * p * p);
+        return Math.max(0.5 * sum, 1e-4 * meanDiagonal(jacobian) * p * p);
     }
 
     private static double norm(double[] v) {
