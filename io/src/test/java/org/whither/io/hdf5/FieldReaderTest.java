@@ -1,11 +1,15 @@
 package org.whither.io.hdf5;
 
+import static org.junit.jupiter.api.Assertions.assertEquals;
+
 import java.io.IOException;
+import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.List;
 import org.junit.jupiter.api.io.TempDir;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
-import org.junit.jupiter.params.provider.ValueSource;
+import org.junit.jupiter.params.provider.MethodSource;
 import org.whither.film.Film;
 
 /** Files made by the HDF5 C library (through h5py, see {@code fields/make_fields.py}) are read equal to their numbers. */
@@ -15,8 +19,22 @@ class FieldReaderTest {
     /** Half a unit in the last place of a 32-bit number, 2⁻²⁴, and the shift of 273.15 K in one. */
     private static final double SINGLE = 0x1p-23;
 
+    static final List<String> FIXTURES = List.of(
+            "full-plain.h5",
+            "full-units.h5",
+            "full-big-endian.h5",
+            "full-latest.h5",
+            "full-user-block.h5",
+            "film-nodes.h5",
+            "film-cells.h5",
+            "film-mixed.h5");
+
     @TempDir
     private Path folder;
+
+    static List<String> fixtures() {
+        return FIXTURES;
+    }
 
     static Film expected(String name) {
         if (name.startsWith("full")) {
@@ -37,31 +55,13 @@ class FieldReaderTest {
     }
 
     @ParameterizedTest
-    @ValueSource(
-            strings = {
-                "full-plain.h5",
-                "full-units.h5",
-                "full-big-endian.h5",
-                "full-latest.h5",
-                "full-user-block.h5",
-                "film-nodes.h5",
-                "film-cells.h5",
-                "film-mixed.h5"
-            })
+    @MethodSource("fixtures")
     void read_fileOfTheLibrary_equalsItsNumbers(String name) {
         FieldFixture.assertSame(expected(name), FieldReader.read(FieldFixture.FOLDER.resolve(name)), tolerance(name));
     }
 
     @ParameterizedTest
-    @ValueSource(
-            strings = {
-                "full-plain.h5",
-                "full-units.h5",
-                "full-big-endian.h5",
-                "film-nodes.h5",
-                "film-cells.h5",
-                "film-mixed.h5"
-            })
+    @MethodSource("fixtures")
     void write_readBack_changesNothing(String name) throws IOException {
         Film film = FieldReader.read(FieldFixture.FOLDER.resolve(name));
         Path written = folder.resolve("written.h5");
@@ -75,7 +75,6 @@ class FieldReaderTest {
         Film film = FieldReader.read(FieldFixture.FOLDER.resolve(name));
         FieldWriter.write(film, folder.resolve("one.h5"));
         FieldWriter.write(film, folder.resolve("two.h5"));
-        org.junit.jupiter.api.Assertions.assertEquals(
-                -1, java.nio.file.Files.mismatch(folder.resolve("one.h5"), folder.resolve("two.h5")));
+        assertEquals(-1, Files.mismatch(folder.resolve("one.h5"), folder.resolve("two.h5")));
     }
 }

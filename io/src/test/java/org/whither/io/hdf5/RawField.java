@@ -131,7 +131,7 @@ final class RawField {
             attributes.get(path).forEach(dataset::putAttribute);
             group.putDataset(name, dataset);
         });
-        FieldWriter.write(root, file);
+        FieldWriter.write(root, new TextHeap(64), file);
         return file;
     }
 }
