@@ -52,6 +52,7 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.function.LongSupplier;
 import org.whither.film.Conditions;
 import org.whither.film.Face;
 import org.whither.film.FieldData;
@@ -103,12 +104,12 @@ public final class FieldReader {
      * @throws RefusedInput where the file is not one of the layout, is damaged, or holds what no film can be
      */
     public static Film read(Path file) {
-        return read(file, freeHeap());
+        return read(file, FieldReader::freeHeap);
     }
 
-    /** As {@link #read(Path)}, with the memory that the arrays may take (bytes). */
-    static Film read(Path file, long heapLimit) {
-        try (HdfSource source = HdfSource.open(file, heapLimit)) {
+    /** As {@link #read(Path)}, with the memory that arrays may take at the time (bytes). */
+    static Film read(Path file, LongSupplier freeHeap) {
+        try (HdfSource source = HdfSource.open(file, freeHeap)) {
             return new FieldReader(source).film();
         }
     }
@@ -568,7 +569,8 @@ public final class FieldReader {
             kept += array.heap();
             whileRead = Math.max(whileRead, array.heapWhileRead());
         }
-        if (kept + whileRead <= source.heapLimit()) {
+        long free = source.freeHeap(kept + whileRead);
+        if (kept + whileRead <= free) {
             return;
         }
         Runtime runtime = Runtime.getRuntime();
@@ -578,7 +580,7 @@ public final class FieldReader {
         throw source.refuse(
                 "the numbers of " + arrays.get(0).path() + (arrays.size() > 1 ? " and its companions" : "") + " take "
                         + (long) Math.ceil((kept + whileRead) / 0x1p20) + " MiB of memory",
-                "at most the " + (source.heapLimit() >> 20) + " MiB that are free in the program's heap",
+                "at most the " + (free >> 20) + " MiB that are free in the program's heap",
                 "set JAVA_TOOL_OPTIONS=-Xmx" + megabytes + "m where the machine has that much, or use a coarser grid");
     }
 }
