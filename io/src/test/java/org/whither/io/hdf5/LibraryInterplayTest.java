@@ -19,6 +19,7 @@ import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.ValueSource;
 import org.whither.film.Film;
 import org.whither.film.FullField;
+import org.whither.film.LubricationField;
 
 /**
  * Both ways between this program and the HDF5 C library: h5py (Debian's {@code python3-h5py}) and h5dump (Debian's
@@ -94,6 +95,11 @@ class LibraryInterplayTest {
         assertEquals(1, film.grid().sectors());
         assertTrue(film.supply().orElseThrow().annulus().isPresent());
         assertEquals("nitrogen", film.gas().name());
+        // Ring 10 lies at 55 mm, halfway to the inner diameter; 726401 Pa there is the closed solution in double
+        // precision, computed apart from the page.
+        assertEquals(0.055, film.grid().radius(10), 1e-12);
+        assertEquals(
+                726401, ((LubricationField) film.field()).pressure(film.grid().node(3, 10)), 0.5);
         assertEquals(block("text"), HdfTree.of(folder.resolve("film.h5")), "the tree on the page");
     }
 
