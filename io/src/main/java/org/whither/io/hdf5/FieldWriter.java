@@ -135,8 +135,7 @@ public final class FieldWriter {
         int columns = cells ? grid.cellsRadial() : nj;
         put(group, Layout.ROTOR_Z, Quantity.LENGTH, faces::rotorZ, rows, columns);
         put(group, Layout.STATOR_Z, Quantity.LENGTH, faces::statorZ, rows, columns);
-        if (film.field() instanceof FullField) {
-            FullField full = (FullField) film.field();
+        if (film.field() instanceof FullField full) {
             put(group, Layout.SIGMA, Quantity.NUMBER, full::sigma, full.nk());
         }
     }
@@ -153,8 +152,8 @@ public final class FieldWriter {
     private void field(WritableGroup group, Film film) {
         text(group, Layout.VELOCITY_FRAME, film.velocityFrame().name().toLowerCase(Locale.ROOT));
         text(group, Layout.STEADY_IN, film.steadyIn().name().toLowerCase(Locale.ROOT));
-        if (film.field() instanceof FullField) {
-            fullField(group, film.grid(), (FullField) film.field());
+        if (film.field() instanceof FullField full) {
+            fullField(group, film.grid(), full);
         } else {
             lubricationField(group, film.grid(), (LubricationField) film.field());
         }

@@ -108,8 +108,9 @@ final class HdfSource implements AutoCloseable {
                 return HdfFile.fromByteBuffer(channel.map(FileChannel.MapMode.READ_ONLY, 0, size));
             }
             ByteBuffer bytes = ByteBuffer.allocate((int) size);
-            while (bytes.hasRemaining() && channel.read(bytes, bytes.position()) > 0) {
-                continue;
+            int read = 0;
+            while (read >= 0 && bytes.hasRemaining()) {
+                read = channel.read(bytes, bytes.position());
             }
             bytes.flip();
             return HdfFile.fromByteBuffer(bytes);
@@ -152,7 +153,7 @@ final class HdfSource implements AutoCloseable {
     }
 
     /** Memory that arrays may take now (bytes); where that is less than wanted, garbage is cleared first. */
-    long freeHeap(double wanted) {
+    long freeHeap(long wanted) {
         if (freeHeap.getAsLong() < wanted) {
             System.gc();
         }

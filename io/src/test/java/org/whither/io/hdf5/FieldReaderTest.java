@@ -44,14 +44,11 @@ class FieldReaderTest {
         if (name.startsWith("full")) {
             return FieldFixture.full();
         }
-        switch (name) {
-            case "film-nodes.h5":
-                return FieldFixture.filmNodes();
-            case "film-cells.h5":
-                return FieldFixture.filmCells();
-            default:
-                return FieldFixture.filmMixed();
-        }
+        return switch (name) {
+            case "film-nodes.h5" -> FieldFixture.filmNodes();
+            case "film-cells.h5" -> FieldFixture.filmCells();
+            default -> FieldFixture.filmMixed();
+        };
     }
 
     static double tolerance(String name) {

@@ -27,9 +27,9 @@ final class HdfTree {
         Map<String, Node> children = new TreeMap<>(group.getChildren());
         children.forEach((name, node) -> {
             text.append(indent).append(name);
-            if (node instanceof Dataset) {
+            if (node instanceof Dataset dataset) {
                 text.append(" (");
-                int[] shape = ((Dataset) node).getDimensions();
+                int[] shape = dataset.getDimensions();
                 for (int d = 0; d < shape.length; d++) {
                     text.append(d == 0 ? "" : ", ").append(shape[d]);
                 }
