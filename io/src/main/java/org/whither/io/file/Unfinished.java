@@ -33,6 +33,11 @@ final class Unfinished {
         return path;
     }
 
+    /** Takes charge of a path again: it is removed at the end of the program unless let go. */
+    static void take(Path path) {
+        PATHS.add(path);
+    }
+
     /** Forgets a path: it was moved into place, or removed. */
     static void letGo(Path path) {
         PATHS.remove(path);

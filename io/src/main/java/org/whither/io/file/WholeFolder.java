@@ -137,6 +137,7 @@ public final class WholeFolder {
             Files.move(earlier, place);
             throw e;
         }
+        Unfinished.take(earlier);
         Unfinished.remove(earlier);
     }
 
@@ -152,13 +153,15 @@ public final class WholeFolder {
     }
 
     private static void forceAll(Path folder) throws IOException {
-        for (String name : filesIn(folder)) {
-            Path file = folder.resolve(name);
-            if (Files.isRegularFile(file, LinkOption.NOFOLLOW_LINKS)) {
-                Unfinished.force(file);
+        List<Path> all;
+        try (Stream<Path> paths = Files.walk(folder)) {
+            all = paths.collect(Collectors.toList());
+        }
+        for (Path path : all) {
+            if (!Files.isSymbolicLink(path)) {
+                Unfinished.force(path);
             }
         }
-        Unfinished.force(folder);
     }
 
     /** All that is in a folder and its folders except the folders themselves, by name relative to it, in order. */

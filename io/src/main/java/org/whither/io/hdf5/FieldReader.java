@@ -52,6 +52,7 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.function.LongSupplier;
 import org.whither.film.Conditions;
 import org.whither.film.Face;
 import org.whither.film.FieldData;
@@ -103,12 +104,12 @@ public final class FieldReader {
      * @throws RefusedInput where the file is not one of the layout, is damaged, or holds what no film can be
      */
     public static Film read(Path file) {
-        return read(file, freeHeap());
+        return read(file, FieldReader::freeHeap);
     }
 
-    /** As {@link #read(Path)}, with the memory that the arrays may take (bytes). */
-    static Film read(Path file, long heapLimit) {
-        try (HdfSource source = HdfSource.open(file, heapLimit)) {
+    /** As {@link #read(Path)}, with the memory that arrays may take at the time (bytes). */
+    static Film read(Path file, LongSupplier freeHeap) {
+        try (HdfSource source = HdfSource.open(file, freeHeap)) {
             return new FieldReader(source).film();
         }
     }
@@ -203,7 +204,10 @@ public final class FieldReader {
         double[] radius = radii(section.array(RADIUS, Quantity.LENGTH));
         int nj = radius.length;
         StoredArray theta = section.array(THETA, Quantity.ANGLE);
-        if (theta.rank() < 1 || theta.rank() > 2 || theta.length(0) < 2 || theta.rank() == 2 && theta.length(1) != nj) {
+        if (theta.rank() < 1
+                || theta.rank() > 2
+                || theta.length(0) < 2
+                || (theta.rank() == 2 && theta.length(1) != nj)) {
             throw source.refuse(
                     "dataset " + theta.path() + " is " + theta.shapeText(),
                     "ni angles, or ni × " + nj + " of them for the " + nj + " radii, with ni at least 2",
@@ -562,23 +566,24 @@ public final class FieldReader {
 
     /** Refuses arrays that the heap cannot take, saying how large it would have to be. */
     private void requireHeap(List<StoredArray> arrays) {
-        double kept = 0;
-        double whileRead = 0;
+        long kept = 0;
+        long whileRead = 0;
         for (StoredArray array : arrays) {
             kept += array.heap();
             whileRead = Math.max(whileRead, array.heapWhileRead());
         }
-        if (kept + whileRead <= source.heapLimit()) {
+        long free = source.freeHeap(kept + whileRead);
+        if (kept + whileRead <= free) {
             return;
         }
         Runtime runtime = Runtime.getRuntime();
-        double used = runtime.totalMemory() - runtime.freeMemory();
-        double quarters = Math.ceil((used + (kept + whileRead) / HEAP_SHARE) / 0x1p28);
-        long megabytes = (long) quarters * 256;
+        long used = runtime.totalMemory() - runtime.freeMemory();
+        long quarters = (long) Math.ceil((used + (kept + whileRead) / HEAP_SHARE) / 0x1p28);
+        long megabytes = 256 * quarters;
         throw source.refuse(
                 "the numbers of " + arrays.get(0).path() + (arrays.size() > 1 ? " and its companions" : "") + " take "
-                        + (long) Math.ceil((kept + whileRead) / 0x1p20) + " MiB of memory",
-                "at most the " + (source.heapLimit() >> 20) + " MiB that are free in the program's heap",
+                        + ((kept + whileRead + (1 << 20) - 1) >> 20) + " MiB of memory",
+                "at most the " + (free >> 20) + " MiB that are free in the program's heap",
                 "set JAVA_TOOL_OPTIONS=-Xmx" + megabytes + "m where the machine has that much, or use a coarser grid");
     }
 }

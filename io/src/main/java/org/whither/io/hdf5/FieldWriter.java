@@ -2,7 +2,6 @@ package org.whither.io.hdf5;
 
 import io.jhdf.Superblock;
 import io.jhdf.WritableGroupImpl;
-import io.jhdf.WritableHdfFile;
 import io.jhdf.api.WritableGroup;
 import io.jhdf.exceptions.HdfException;
 import io.jhdf.storage.HdfFileChannel;
@@ -25,9 +24,16 @@ import org.whither.film.Supply;
 import org.whither.io.file.WholeFile;
 import org.whither.io.units.Quantity;
 
-/** Writes a gas film in the film-field layout: SI units, 64-bit numbers, all on one page of the disk or not at all. */
+/** Writes a gas film in the film-field layout: SI units, 64-bit numbers, the whole file or none. */
 public final class FieldWriter {
-    private FieldWriter() {}
+    /** The superblock takes 48 bytes. */
+    private static final long HEAP_ADDRESS = 64;
+
+    private final TextHeap texts;
+
+    private FieldWriter(TextHeap texts) {
+        this.texts = texts;
+    }
 
     /**
      * Writes a film.
@@ -41,7 +47,8 @@ public final class FieldWriter {
     }
 
     private static void writeTo(Film film, Path file) throws IOException {
-        write(root(film), file);
+        TextHeap texts = new TextHeap(HEAP_ADDRESS);
+        write(new FieldWriter(texts).root(film), texts, file);
     }
 
     /**
@@ -49,12 +56,14 @@ public final class FieldWriter {
      * machine and, where the group written last has no dataset, overwrite that group with it (jHDF 0.11.0,
      * WritableHdfFile.flush); so its parts are used here.
      */
-    static void write(WritableGroup root, Path file) throws IOException {
-        Superblock.SuperblockV2V3 superblock = new Superblock.SuperblockV2V3();
+    static void write(WritableGroup root, TextHeap texts, Path file) throws IOException {
+        long rootAddress = HEAP_ADDRESS + texts.size();
+        Superblock.SuperblockV2V3 superblock = new Superblock.SuperblockV2V3(0, rootAddress);
         try (FileChannel channel = FileChannel.open(
                 file, StandardOpenOption.READ, StandardOpenOption.WRITE, StandardOpenOption.CREATE_NEW)) {
             HdfFileChannel target = new HdfFileChannel(channel, superblock);
-            long end = root.write(target, WritableHdfFile.ROOT_GROUP_ADDRESS);
+            long end = root.write(target, rootAddress);
+            FlatDataset.put(target, texts.toBuffer(), HEAP_ADDRESS);
             FlatDataset.put(target, superblock.toBuffer(end), 0);
             if (channel.size() != end) {
                 throw new IOException(
@@ -65,9 +74,9 @@ public final class FieldWriter {
         }
     }
 
-    private static WritableGroup root(Film film) {
+    private WritableGroup root(Film film) {
         WritableGroup root = new WritableGroupImpl(null, "/");
-        root.putAttribute(Layout.LAYOUT, Layout.NAME);
+        text(root, Layout.LAYOUT, Layout.NAME);
         root.putAttribute(Layout.LAYOUT_VERSION, Layout.VERSION);
         Film.Heading heading = film.heading();
         text(root, Layout.TITLE, heading.title());
@@ -83,13 +92,13 @@ public final class FieldWriter {
         return root;
     }
 
-    private static void text(WritableGroup group, String name, String text) {
+    private void text(WritableGroup group, String name, String text) {
         if (text != null && !text.isBlank()) {
-            group.putAttribute(name, text);
+            texts.put(group, name, text);
         }
     }
 
-    private static void conditions(WritableGroup group, Conditions conditions) {
+    private void conditions(WritableGroup group, Conditions conditions) {
         group.putAttribute(Layout.ROTATION_RATE, conditions.rotationRate());
         group.putAttribute(Layout.PRESSURE_INNER, conditions.pressureInner());
         group.putAttribute(Layout.PRESSURE_OUTER, conditions.pressureOuter());
@@ -102,14 +111,14 @@ public final class FieldWriter {
         text(group, Layout.OUTER_SIDE, conditions.outerSide());
     }
 
-    private static void gas(WritableGroup group, Gas gas) {
-        group.putAttribute(Layout.GAS_NAME, gas.name());
+    private void gas(WritableGroup group, Gas gas) {
+        texts.put(group, Layout.GAS_NAME, gas.name());
         group.putAttribute(Layout.MOLAR_MASS, gas.molarMass());
         group.putAttribute(Layout.VISCOSITY, gas.viscosity());
         group.putAttribute(Layout.COMPRESSIBILITY_FACTOR, gas.compressibilityFactor());
     }
 
-    private static void grid(WritableGroup group, Film film) {
+    private void grid(WritableGroup group, Film film) {
         FilmGrid grid = film.grid();
         int ni = grid.ni();
         int nj = grid.nj();
@@ -126,8 +135,7 @@ public final class FieldWriter {
         int columns = cells ? grid.cellsRadial() : nj;
         put(group, Layout.ROTOR_Z, Quantity.LENGTH, faces::rotorZ, rows, columns);
         put(group, Layout.STATOR_Z, Quantity.LENGTH, faces::statorZ, rows, columns);
-        if (film.field() instanceof FullField) {
-            FullField full = (FullField) film.field();
+        if (film.field() instanceof FullField full) {
             put(group, Layout.SIGMA, Quantity.NUMBER, full::sigma, full.nk());
         }
     }
@@ -141,17 +149,17 @@ public final class FieldWriter {
         return true;
     }
 
-    private static void field(WritableGroup group, Film film) {
-        group.putAttribute(Layout.VELOCITY_FRAME, film.velocityFrame().name().toLowerCase(Locale.ROOT));
-        group.putAttribute(Layout.STEADY_IN, film.steadyIn().name().toLowerCase(Locale.ROOT));
-        if (film.field() instanceof FullField) {
-            fullField(group, film.grid(), (FullField) film.field());
+    private void field(WritableGroup group, Film film) {
+        text(group, Layout.VELOCITY_FRAME, film.velocityFrame().name().toLowerCase(Locale.ROOT));
+        text(group, Layout.STEADY_IN, film.steadyIn().name().toLowerCase(Locale.ROOT));
+        if (film.field() instanceof FullField full) {
+            fullField(group, film.grid(), full);
         } else {
             lubricationField(group, film.grid(), (LubricationField) film.field());
         }
     }
 
-    private static void fullField(WritableGroup group, FilmGrid grid, FullField field) {
+    private void fullField(WritableGroup group, FilmGrid grid, FullField field) {
         int ni = grid.ni();
         int nj = grid.nj();
         int nk = field.nk();
@@ -171,7 +179,7 @@ public final class FieldWriter {
         }
     }
 
-    private static void lubricationField(WritableGroup group, FilmGrid grid, LubricationField field) {
+    private void lubricationField(WritableGroup group, FilmGrid grid, LubricationField field) {
         boolean cells = field.pressureAt() == Location.CELL;
         int rows = cells ? grid.cellsTheta() : grid.ni();
         int columns = cells ? grid.cellsRadial() : grid.nj();
@@ -185,10 +193,10 @@ public final class FieldWriter {
         }
     }
 
-    private static void supply(WritableGroup group, FilmGrid grid, Supply supply) {
+    private void supply(WritableGroup group, FilmGrid grid, Supply supply) {
         int rows = grid.cellsTheta();
         int columns = grid.cellsRadial();
-        group.putAttribute(Layout.FACE, supply.face().name().toLowerCase(Locale.ROOT));
+        text(group, Layout.FACE, supply.face().name().toLowerCase(Locale.ROOT));
         if (supply.annulus().isPresent()) {
             group.putAttribute(Layout.RADIUS_FROM, supply.annulus().get().from());
             group.putAttribute(Layout.RADIUS_TO, supply.annulus().get().to());
@@ -201,13 +209,12 @@ public final class FieldWriter {
         }
     }
 
-    private static void put(
-            WritableGroup group, String name, Quantity quantity, IntToDoubleFunction values, int... shape) {
+    private void put(WritableGroup group, String name, Quantity quantity, IntToDoubleFunction values, int... shape) {
         put(group, new FlatDataset(group, name, false, values, shape), quantity);
     }
 
-    private static void put(WritableGroup group, FlatDataset dataset, Quantity quantity) {
-        dataset.putAttribute(Layout.UNITS, quantity.siSpelling());
+    private void put(WritableGroup group, FlatDataset dataset, Quantity quantity) {
+        texts.put(dataset, Layout.UNITS, quantity.siSpelling());
         group.putDataset(dataset.getName(), dataset);
     }
 }

@@ -10,6 +10,7 @@ import io.jhdf.api.Group;
 import io.jhdf.api.Node;
 import io.jhdf.api.dataset.ChunkedDataset;
 import io.jhdf.btree.BTreeV1;
+import io.jhdf.exceptions.HdfException;
 import io.jhdf.links.ExternalLink;
 import io.jhdf.links.SoftLink;
 import io.jhdf.object.message.LinkMessage;
@@ -20,12 +21,14 @@ import java.io.UncheckedIOException;
 import java.nio.ByteBuffer;
 import java.nio.channels.FileChannel;
 import java.nio.charset.StandardCharsets;
+import java.nio.file.AccessDeniedException;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.nio.file.StandardOpenOption;
 import java.util.Arrays;
 import java.util.LinkedHashMap;
 import java.util.Map;
+import java.util.function.LongSupplier;
 import java.util.function.Supplier;
 import org.whither.io.file.RefusedInput;
 
@@ -44,13 +47,13 @@ final class HdfSource implements AutoCloseable {
 
     private final Path file;
     private final long size;
-    private final long heapLimit;
+    private final LongSupplier freeHeap;
     private final HdfFile hdf;
 
-    private HdfSource(Path file, long size, long heapLimit, HdfFile hdf) {
+    private HdfSource(Path file, long size, LongSupplier freeHeap, HdfFile hdf) {
         this.file = file;
         this.size = size;
-        this.heapLimit = heapLimit;
+        this.freeHeap = freeHeap;
         this.hdf = hdf;
     }
 
@@ -58,10 +61,10 @@ final class HdfSource implements AutoCloseable {
      * Opens a file.
      *
      * @param file the file
-     * @param heapLimit memory that its arrays may take (bytes)
+     * @param freeHeap memory that arrays may take at the time (bytes)
      * @throws RefusedInput where it is no HDF5 file that can be read
      */
-    static HdfSource open(Path file, long heapLimit) {
+    static HdfSource open(Path file, LongSupplier freeHeap) {
         if (!Files.exists(file)) {
             throw RefusedInput.of(file, "there is no such file", "an HDF5 file", "check the name");
         }
@@ -78,7 +81,7 @@ final class HdfSource implements AutoCloseable {
                         "name another file, or bring the data into that layout first");
             }
             HdfFile hdf = guarded(file, "", () -> open(file, channel, size));
-            HdfSource source = new HdfSource(file, size, heapLimit, hdf);
+            HdfSource source = new HdfSource(file, size, freeHeap, hdf);
             try {
                 source.checkLength();
             } catch (RefusedInput e) {
@@ -99,14 +102,15 @@ final class HdfSource implements AutoCloseable {
     private static HdfFile open(Path file, FileChannel channel, long size) {
         try {
             if (size > Integer.MAX_VALUE) {
-                return new HdfFile(FileChannel.open(file, StandardOpenOption.READ));
+                return new HdfFile(file);
             }
             if (size > READ_WHOLE) {
                 return HdfFile.fromByteBuffer(channel.map(FileChannel.MapMode.READ_ONLY, 0, size));
             }
             ByteBuffer bytes = ByteBuffer.allocate((int) size);
-            while (bytes.hasRemaining() && channel.read(bytes, bytes.position()) > 0) {
-                continue;
+            int read = 0;
+            while (read >= 0 && bytes.hasRemaining()) {
+                read = channel.read(bytes, bytes.position());
             }
             bytes.flip();
             return HdfFile.fromByteBuffer(bytes);
@@ -148,9 +152,12 @@ final class HdfSource implements AutoCloseable {
         return new Section(this, hdf, "/");
     }
 
-    /** Memory that arrays may take (bytes). */
-    long heapLimit() {
-        return heapLimit;
+    /** Memory that arrays may take now (bytes); where that is less than wanted, garbage is cleared first. */
+    long freeHeap(long wanted) {
+        if (freeHeap.getAsLong() < wanted) {
+            System.gc();
+        }
+        return freeHeap.getAsLong();
     }
 
     /** A refusal of this file. */
@@ -311,8 +318,14 @@ final class HdfSource implements AutoCloseable {
             // A mapped page that cannot be read is an InternalError; links in a ring overflow the stack.
             throw damaged(file, where, e);
         } catch (OutOfMemoryError e) {
-            // Only a size that the damage made up gets here: sizes of arrays are compared with the heap beforehand.
-            throw damaged(file, where, e);
+            // Sizes of arrays are compared with the heap beforehand, so this is most likely a size that damage made up.
+            throw RefusedInput.of(
+                    file,
+                    (where.isEmpty() ? "the file" : where) + " does not fit the program's heap",
+                    "a file that is undamaged and fits",
+                    "copy the file again, or set JAVA_TOOL_OPTIONS=-Xmx to more than the "
+                            + (Runtime.getRuntime().maxMemory() >> 20) + " MiB it has",
+                    e);
         }
     }
 
@@ -321,17 +334,22 @@ final class HdfSource implements AutoCloseable {
         while (cause.getCause() != null) {
             cause = cause.getCause();
         }
+        // Only the library's own words mean anything to a user; others tell of sums and buffers inside it.
+        String reason = cause instanceof HdfException ? reason(cause) : "its bytes contradict each other";
         return RefusedInput.of(
                 file,
-                (where.isEmpty() ? "the file" : where) + " cannot be read (" + reason(cause) + ")",
+                (where.isEmpty() ? "the file" : where) + " cannot be read (" + reason + ")",
                 "an undamaged HDF5 file whose data use no filters but deflate (gzip), shuffle and Fletcher-32",
                 "copy the file again, or write it again with those filters only",
                 failure);
     }
 
     private static String reason(Throwable failure) {
+        if (failure instanceof AccessDeniedException) {
+            return "access denied";
+        }
         String message = failure.getMessage();
         String text = message == null || message.isBlank() ? failure.getClass().getSimpleName() : message;
-        return text.replaceAll("\\s+", " ").trim();
+        return text.replaceAll("[\\s;]+", " ").trim();
     }
 }

@@ -43,25 +43,25 @@ final class Section {
     /** A group within this one; refused where it is missing. */
     Section section(String name) {
         Node node = source.find(group, path, name);
-        if (!(node instanceof Group)) {
+        if (!(node instanceof Group found)) {
             throw source.refuse(
                     "the group " + path + name + (node == null ? " is missing" : " is no group"),
                     "a group of that name",
                     "add it as the layout film-field describes");
         }
-        return new Section(source, (Group) node, path + name + "/");
+        return new Section(source, found, path + name + "/");
     }
 
     /** A dataset of this group; refused where it is missing or its unit is not one of the quantity. */
     StoredArray array(String name, Quantity quantity) {
         Node node = source.find(group, path, name);
-        if (!(node instanceof Dataset)) {
+        if (!(node instanceof Dataset found)) {
             throw source.refuse(
                     "the dataset " + path + name + (node == null ? " is missing" : " is no dataset"),
                     "a dataset of that name, in " + quantity.siSpelling(),
                     "write it as the layout film-field describes");
         }
-        return StoredArray.of(source, (Dataset) node, path + name, quantity);
+        return StoredArray.of(source, found, path + name, quantity);
     }
 
     /**
@@ -89,13 +89,13 @@ final class Section {
         if (value == null && !bears(name)) {
             throw missing(name, "a number in " + unit);
         }
-        if (!(value instanceof Number)) {
+        if (!(value instanceof Number given)) {
             throw source.refuse(
                     "attribute " + place(name) + " is " + said(value),
                     "one number in " + unit,
                     "write it as a scalar number");
         }
-        double number = ((Number) value).doubleValue();
+        double number = given.doubleValue();
         if (!Double.isFinite(number)) {
             throw source.refuse(
                     "attribute " + place(name) + " is " + number,
@@ -157,10 +157,10 @@ final class Section {
             return null;
         }
         Object value = single(source, attribute, place);
-        if (!(value instanceof String)) {
+        if (!(value instanceof String text)) {
             throw source.refuse("attribute " + place + " is " + said(value), "one text", "write it as a scalar string");
         }
-        return ((String) value).trim();
+        return text.trim();
     }
 
     /** The value of an attribute that holds one; its array where it holds more; null where it holds none. */

@@ -201,13 +201,12 @@ final class StoredArray {
     }
 
     private static DataType storedType(DataType type) {
-        return type instanceof EnumDataType ? ((EnumDataType) type).getBaseType() : type;
+        return type instanceof EnumDataType names ? names.getBaseType() : type;
     }
 
     private void checkType() {
         int bits = 8 * type.getSize();
-        if (type instanceof FloatingPoint) {
-            FloatingPoint floating = (FloatingPoint) type;
+        if (type instanceof FloatingPoint floating) {
             int exponent = bits == 64 ? 11 : bits == 32 ? 8 : 5;
             if ((bits == 64 || bits == 32 || bits == 16)
                     && floating.getBitPrecision() == bits
@@ -215,8 +214,7 @@ final class StoredArray {
                     && floating.getMantissaSize() == bits - exponent - 1) {
                 return;
             }
-        } else if (type instanceof FixedPoint) {
-            FixedPoint whole = (FixedPoint) type;
+        } else if (type instanceof FixedPoint whole) {
             if ((bits == 64 || bits == 32 || bits == 16 || bits == 8)
                     && whole.getBitPrecision() == bits
                     && whole.getBitOffset() == 0) {
@@ -235,9 +233,9 @@ final class StoredArray {
         if (dataset instanceof ContiguousDataset && source.guarded("dataset " + path, dataset::isEmpty)) {
             throw unwritten("");
         }
-        if (dataset instanceof ChunkedDataset) {
+        if (dataset instanceof ChunkedDataset chunked) {
             source.guarded("dataset " + path, () -> {
-                checkChunks((ChunkedDataset) dataset);
+                checkChunks(chunked);
                 return null;
             });
         }
@@ -282,8 +280,8 @@ final class StoredArray {
 
     private double[] decoded(ByteBuffer stored, int count) {
         double[] values = new double[count];
-        if (type instanceof FloatingPoint) {
-            stored.order(((FloatingPoint) type).getByteOrder());
+        if (type instanceof FloatingPoint floating) {
+            stored.order(floating.getByteOrder());
             decodeFloating(stored, values);
         } else {
             FixedPoint whole = (FixedPoint) type;
@@ -296,18 +294,17 @@ final class StoredArray {
     private void decodeFloating(ByteBuffer stored, double[] values) {
         int start = stored.position();
         switch (type.getSize()) {
-            case Double.BYTES:
-                stored.asDoubleBuffer().get(values);
-                break;
-            case Float.BYTES:
+            case Double.BYTES -> stored.asDoubleBuffer().get(values);
+            case Float.BYTES -> {
                 for (int n = 0; n < values.length; n++) {
                     values[n] = stored.getFloat(start + n * Float.BYTES);
                 }
-                break;
-            default:
+            }
+            default -> {
                 for (int n = 0; n < values.length; n++) {
                     values[n] = FloatingPoint.toFloat(stored.getShort(start + n * Short.BYTES));
                 }
+            }
         }
     }
 
@@ -315,21 +312,22 @@ final class StoredArray {
         int start = stored.position();
         for (int n = 0; n < values.length; n++) {
             switch (type.getSize()) {
-                case Byte.BYTES:
+                case Byte.BYTES -> {
                     byte b = stored.get(start + n);
                     values[n] = signed ? b : Byte.toUnsignedInt(b);
-                    break;
-                case Short.BYTES:
+                }
+                case Short.BYTES -> {
                     short s = stored.getShort(start + n * Short.BYTES);
                     values[n] = signed ? s : Short.toUnsignedInt(s);
-                    break;
-                case Integer.BYTES:
+                }
+                case Integer.BYTES -> {
                     int i = stored.getInt(start + n * Integer.BYTES);
                     values[n] = signed ? i : Integer.toUnsignedLong(i);
-                    break;
-                default:
+                }
+                default -> {
                     long l = stored.getLong(start + n * Long.BYTES);
                     values[n] = signed || l >= 0 ? l : l + 0x1p64;
+                }
             }
         }
     }

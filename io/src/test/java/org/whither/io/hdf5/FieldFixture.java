@@ -68,7 +68,7 @@ final class FieldFixture {
         }
         double[] radial = new double[(NI - 1) * NJ];
         for (int n = 0; n < radial.length; n++) {
-            radial[n] = 1e-6 * (n / NJ - 10.0 * (n % NJ));
+            radial[n] = 1e-6 * ((double) (n / NJ) - 10.0 * (n % NJ));
         }
         LubricationField field =
                 new LubricationField(Location.CELL, pressure(NI - 1, NJ - 1), new MassFlows(theta, radial));
@@ -110,7 +110,7 @@ final class FieldFixture {
         }
         double[] theta = new double[NI * NJ];
         for (int n = 0; n < theta.length; n++) {
-            theta[n] = 2 * Math.PI / SECTORS * (n / NJ) / (NI - 1) + twist * (n % NJ);
+            theta[n] = 2 * Math.PI / SECTORS * (double) (n / NJ) / (NI - 1) + twist * (n % NJ);
         }
         return new FilmGrid(radius, theta, SECTORS);
     }

@@ -15,7 +15,15 @@ import java.util.Map;
 
 /** The groups, attributes and datasets of a fixture, to be changed at will and written as they then are. */
 final class RawField {
-    private record Data(int[] shape, double[] values) {}
+    private static final class Data {
+        private final int[] shape;
+        private final double[] values;
+
+        Data(int[] shape, double[] values) {
+            this.shape = shape;
+            this.values = values;
+        }
+    }
 
     private final Map<String, Map<String, Object>> attributes = new LinkedHashMap<>();
     private final Map<String, Data> datasets = new LinkedHashMap<>();
@@ -34,8 +42,8 @@ final class RawField {
         keep(group, path);
         for (Node child : group) {
             String childPath = path.isEmpty() ? child.getName() : path + "/" + child.getName();
-            if (child instanceof Group) {
-                take((Group) child, childPath);
+            if (child instanceof Group inner) {
+                take(inner, childPath);
             } else {
                 keep(child, childPath);
                 Dataset dataset = (Dataset) child;
@@ -61,7 +69,7 @@ final class RawField {
         double[] values = new double[Array.getLength(flat)];
         for (int n = 0; n < values.length; n++) {
             Object value = Array.get(flat, n);
-            values[n] = value instanceof Number ? ((Number) value).doubleValue() : value.equals("TRUE") ? 1 : 0;
+            values[n] = value instanceof Number number ? number.doubleValue() : value.equals("TRUE") ? 1 : 0;
         }
         return values;
     }
@@ -131,7 +139,7 @@ final class RawField {
             attributes.get(path).forEach(dataset::putAttribute);
             group.putDataset(name, dataset);
         });
-        FieldWriter.write(root, file);
+        FieldWriter.write(root, new TextHeap(64), file);
         return file;
     }
 }

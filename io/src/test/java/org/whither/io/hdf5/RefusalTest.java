@@ -309,8 +309,8 @@ class RefusalTest {
     void read_moreThanTheHeap_isRefusedWithTheOptionThatRaisesIt() {
         Path file = FieldFixture.FOLDER.resolve("full-plain.h5");
         int arrays = 6 * FieldFixture.NI * FieldFixture.NJ * FieldFixture.NK * Double.BYTES;
-        FieldReader.read(file, arrays);
-        RefusedInput refused = assertThrows(RefusedInput.class, () -> FieldReader.read(file, arrays - 1));
+        FieldReader.read(file, () -> arrays);
+        RefusedInput refused = assertThrows(RefusedInput.class, () -> FieldReader.read(file, () -> arrays - 1));
         assertSentence(
                 refused.getMessage(),
                 file,
