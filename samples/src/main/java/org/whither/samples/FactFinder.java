@@ -57,8 +57,11 @@ final class FactFinder {
                     peak = n;
                 }
                 reynolds = Math.max(reynolds, p / gas * Math.abs(omega) * h * h / problem.viscosity());
-                // mean free path µ √(π Rₛ T/2)/p: kinetic theory, any text on gas films
-                knudsen = Math.max(knudsen, problem.viscosity() * Math.sqrt(Math.PI * gas / 2) / (p * h));
+                // mean free path µ √(π Rₛ T/2)/p: kinetic theory, any text on gas films; longest at the edge of the
+                // film
+                double lowest = j == 0 ? Math.min(p, problem.pressureInner()) : p;
+                lowest = j == nr - 1 ? Math.min(lowest, problem.pressureOuter()) : lowest;
+                knudsen = Math.max(knudsen, problem.viscosity() * Math.sqrt(Math.PI * gas / 2) / (lowest * h));
             }
         }
         int ring = grid.sectors();

@@ -10,7 +10,7 @@ final class FilmSolver {
     /** Largest imbalance of a cell that is called solved, as a share of the gas that passes through the film. */
     static final double CLOSED = 1e-10;
 
-    private static final int MOST_ITERATIONS = 30;
+    private static final int MOST_ITERATIONS = 40;
     private static final double SHORTEST_STEP = 1e-4;
     private static final double SMALLEST_SPEED_STEP = 1.0 / 128;
 
@@ -165,11 +165,12 @@ final class FilmSolver {
             if (!matrix.solve(jacobian, scale, residual, change)) {
                 return false;
             }
-            double length = longestStep(s, change);
+            double length = 1;
             double trialNorm;
             while (true) {
                 for (int n = 0; n < cells; n++) {
-                    trial[n] = s[n] - length * change[n];
+                    // a cell keeps at least a tenth of its s, so that no step leads below vacuum
+                    trial[n] = Math.max(s[n] - length * change[n], 0.1 * s[n]);
                 }
                 equations.evaluate(trial, omega, trialResidual, null, null, null);
                 trialNorm = norm(trialResidual);
@@ -192,17 +193,6 @@ final class FilmSolver {
             }
         }
         return imbalance <= CLOSED;
-    }
-
-    /** The whole Newton step, or as much of it as leaves every cell a tenth of its s. */
-    private double longestStep(double[] s, double[] change) {
-        double length = 1;
-        for (int n = 0; n < cells; n++) {
-            if (length * change[n] > 0.9 * s[n]) {
-                length = 0.9 * s[n] / change[n];
-            }
-        }
-        return length;
     }
 
     /** Gas that passes through the sector's film: half of all that crosses the diameters and the feed (kg/s). */

@@ -19,7 +19,7 @@ package org.whither.samples;
  * @param peakRadius radius of that cell's centre (m)
  * @param peakTheta angle of that cell's centre in the turning frame (rad)
  * @param reducedReynolds largest ρ |Ω| h²/µ of a cell
- * @param knudsen largest mean free path over film thickness of a cell
+ * @param knudsen largest mean free path over film thickness, that at the two diameters included
  * @param upwindedShare share of the faces along which the pressure upstream had to be mixed into the rotation flow
  */
 public record SolverFacts(

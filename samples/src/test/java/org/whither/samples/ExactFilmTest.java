@@ -80,4 +80,34 @@ class ExactFilmTest {
             }
         }
     }
+
+    /**
+     * Figures of a plain film as a whole: power π µ Ω² (r₂⁴ − r₁⁴)/(2 h) = 167.02 W and the mean free path at the inner
+     * edge from formulas computed outside the project, opening force against a fine sum over the exact pressure.
+     */
+    @Test
+    void plainFilm_hasTheKnownPowerAndForce() {
+        FilmProblem film = TestFilms.film(
+                TestFilms.even(0.050, 0.068, 12, 8, 160, 30),
+                (theta, r) -> FILM,
+                RATE,
+                TestFilms.ATMOSPHERE,
+                TestFilms.PROCESS);
+        SolverFacts facts = FactFinder.facts(film, TestFilms.solve(film));
+        assertEquals(167.02, facts.filmPower(), 0.02, "power, W; second order in the cells' height");
+        double low = TestFilms.ATMOSPHERE * TestFilms.ATMOSPHERE;
+        double high = TestFilms.PROCESS * TestFilms.PROCESS;
+        double force = 0;
+        int n = 100_000;
+        for (int m = 0; m < n; m++) {
+            double r = 0.050 + 0.018 * (m + 0.5) / n;
+            double p = Math.sqrt(low + (high - low) * Math.log(r / 0.050) / Math.log(0.068 / 0.050));
+            force += 2 * Math.PI * r * p * 0.018 / n;
+        }
+        assertEquals(1, facts.openingForce() / force, 1e-4, "opening force");
+        assertEquals(facts.innerOut(), facts.outerIn(), 1e-10 * facts.innerOut());
+        assertEquals(0.7e6, facts.peakPressure(), 0.01e6);
+        assertEquals(TestFilms.PROCESS / (296.8 * 300) * RATE * 16e-12 / 1.78e-5, facts.reducedReynolds(), 2e-4);
+        assertEquals(0.0164, facts.knudsen(), 1e-4, "0.022 at 3 µm and the same pressure");
+    }
 }

@@ -237,7 +237,7 @@ class SampleSealsTest {
         double toInner = facts.innerOut() / facts.supplyIn();
         assertTrue(toInner > 0.25 && toInner < 0.75, "share to the inner diameter " + toInner);
         assertTrue(facts.reducedReynolds() < 1, "reduced Reynolds number " + facts.reducedReynolds());
-        assertTrue(facts.knudsen() < 0.02, "mean free path over film thickness " + facts.knudsen());
+        assertTrue(facts.knudsen() < 0.03, "mean free path over film thickness " + facts.knudsen());
     }
 
     /** The point made to draw in process gas does so along part of the edge, and lets gas out along the rest. */
