@@ -24,7 +24,7 @@ import org.whither.film.FilmGrid;
 public final class Tracer {
     private static final double EDGE = 1e-10;
     private static final double SEALED_EDGE = 1e-9;
-    private static final int MOST_PIECES = 20_000_000;
+    private static final int MOST_PIECES = 3_000_000;
     private static final int MOST_HALVINGS = 60;
 
     private final FilmFlow flow;
