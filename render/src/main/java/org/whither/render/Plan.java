@@ -138,7 +138,7 @@ public final class Plan {
         Rectangle window = layout.ringWindow;
         Shape before = ink.pen.getClip();
         ink.pen.clip(window);
-        outlines(ink, layout.ring, 0.8 * ink.unit, 0, grid.sectors() - 1, 0.62);
+        outlines(ink, layout.ring, Math.max(0.75, 0.95 * ink.unit), 0, grid.sectors() - 1, 0.75);
         footprints(ink, layout.ring, 1.5 * ink.unit);
         ink.pen.setClip(before);
 
@@ -162,7 +162,7 @@ public final class Plan {
         double rate = conditions.rotationRate();
         double words = cy - 0.18 * hole;
         if (rate != 0) {
-            ink.arrow(rotationArrow(layout.ring, rate, 0.74e3 * grid.innerRadius()), 3 * ink.unit, ink.text);
+            ink.arrow(rotationArrow(layout.ring, rate, 0.74e3 * grid.innerRadius()), 2.4 * ink.unit, ink.text);
             ink.write(ink.heading, ink.text, "rotor turns, " + Words.speed(rate), cx, words, Ink.Side.MIDDLE);
         } else {
             ink.write(ink.heading, ink.text, "rotor stands still", cx, words, Ink.Side.MIDDLE);
@@ -262,10 +262,15 @@ public final class Plan {
 
     private static void add(Path2D.Double path, Camera camera, List<FilmShape.Edge> edges, double turn) {
         for (FilmShape.Edge edge : edges) {
+            double span = edge.theta1() - edge.theta0();
+            int parts = Math.max(1, (int) Math.ceil(Math.abs(span) / Math.toRadians(1)));
             Point2D a = at(camera, edge.theta0() + turn, edge.r0());
-            Point2D b = at(camera, edge.theta1() + turn, edge.r1());
             path.moveTo(a.getX(), a.getY());
-            path.lineTo(b.getX(), b.getY());
+            for (int n = 1; n <= parts; n++) {
+                double f = (double) n / parts;
+                Point2D b = at(camera, edge.theta0() + f * span + turn, edge.r0() + f * (edge.r1() - edge.r0()));
+                path.lineTo(b.getX(), b.getY());
+            }
         }
     }
 
@@ -347,7 +352,6 @@ public final class Plan {
         List<Rectangle2D> taken = new ArrayList<>();
         isobars(ink, layout, reach, taken);
         outlines(ink, layout.sector, 1.25 * ink.unit, -reach, reach, 0.85);
-        // In the ring, paths may go round more than once: each sector shows those of all others in its place.
         footprints(ink, layout.sector, 2.2 * ink.unit);
         ink.pen.setClip(before);
         ink.colour(ink.line);
@@ -362,7 +366,7 @@ public final class Plan {
         scaleBar(
                 ink,
                 window.x + 10 * ink.unit,
-                window.getMaxY() + ink.height(ink.small) + 3 * ink.unit,
+                window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit,
                 layout.sectorScale,
                 0.16 * window.width);
     }
@@ -375,19 +379,24 @@ public final class Plan {
     private void isobars(Ink ink, PlanLayout layout, int reach, List<Rectangle2D> taken) {
         double[] one = shape.nodePressures();
         int rows = grid.nj();
-        int per = grid.cellsTheta();
+        // Long cells are divided, so that the lines follow the circles.
+        int fine = Math.max(1, (int) Math.ceil(grid.pitch() / grid.cellsTheta() / Math.toRadians(1.25)));
+        int per = grid.cellsTheta() * fine;
         int columns = (2 * reach + 1) * per + 1;
         double[] x = new double[columns * rows];
         double[] y = new double[columns * rows];
         double[] values = new double[columns * rows];
         for (int c = 0; c < columns; c++) {
-            int i = c % per;
+            int i = c % per / fine;
+            double f = (double) (c % fine) / fine;
             double turn = (c / per - reach) * grid.pitch();
             for (int j = 0; j < rows; j++) {
-                Point2D p = at(layout.sector, grid.theta(i, j) + turn, grid.radius(j));
+                double theta = grid.theta(i, j) + f * (grid.theta(i + 1, j) - grid.theta(i, j));
+                Point2D p = at(layout.sector, theta + turn, grid.radius(j));
                 x[c * rows + j] = p.getX();
                 y[c * rows + j] = p.getY();
-                values[c * rows + j] = one[i * rows + j] / 1e5;
+                double a = one[grid.node(i, j)];
+                values[c * rows + j] = (a + f * (one[grid.node(i + 1, j)] - a)) / 1e5;
             }
         }
         double step = Ticks.step((range.high() - range.low()) / 1e5, ISOBARS);
@@ -534,9 +543,9 @@ public final class Plan {
                     y[n] + 0.25 * ink.body.getSize2D(),
                     Ink.Side.LEFT);
             ink.write(
-                    ink.fitting(ink.small, name.detail(), room),
+                    ink.small,
                     ink.faint,
-                    name.detail(),
+                    ink.fitted(ink.small, name.detail(), room),
                     layout.namesLeft,
                     y[n] + 0.25 * ink.body.getSize2D() + ink.height(ink.small),
                     Ink.Side.LEFT);
@@ -554,7 +563,7 @@ public final class Plan {
     }
 
     private static String between(FilmShape.Band band) {
-        return "⌀ " + Ticks.number(2e3 * band.from(), 1) + " – " + Ticks.number(2e3 * band.to(), 1) + " mm";
+        return "Ø " + Ticks.number(2e3 * band.from(), 1) + " – " + Ticks.number(2e3 * band.to(), 1) + " mm";
     }
 
     /** Finds where the circle of a radius meets the right edge of the enlarged view. */
@@ -640,7 +649,10 @@ public final class Plan {
             seen.add(destination);
             Point2D p =
                     unrolled(layout, point.release().theta(), point.release().radius());
-            ink.mark(destination.marker(p.getX(), p.getY(), size), destination.colour(), 0.9 * ink.unit);
+            ink.mark(
+                    destination.marker(p.getX(), p.getY(), size),
+                    destination.colour(),
+                    Math.min(0.9 * ink.unit, 0.08 * size));
         }
         ink.pen.setClip(before);
         ink.colour(ink.line);
@@ -648,7 +660,6 @@ public final class Plan {
         ink.pen.draw(window);
 
         double x = layout.namesLeft - 14 * ink.unit;
-        double room2 = layout.rightEdge - x;
         String upper = Words.diameter(feed.to());
         String lower = Words.diameter(feed.from());
         ink.write(ink.small, ink.text, upper, x, window.y + ink.ascent(ink.small), Ink.Side.LEFT);
@@ -675,37 +686,53 @@ public final class Plan {
         double length = Ticks.step(1e3 * along * 0.2, 1);
         ink.scaleBar(
                 window.x + 10 * ink.unit,
-                window.getMaxY() + ink.height(ink.small) + 3 * ink.unit,
+                window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit,
                 length * window.width / (1e3 * along),
                 Ticks.plain(length) + " mm along");
-        legend(ink, layout, seen, room2);
+        legend(ink, layout, seen);
     }
 
-    private void legend(Ink ink, PlanLayout layout, Set<Destination> seen, double unused) {
+    private void legend(Ink ink, PlanLayout layout, Set<Destination> seen) {
         var conditions = shape.flow().film().conditions();
         for (Path path : paths) {
             seen.add(Destination.of(path.end()));
         }
-        double x = layout.feedWindow.x;
-        double y = layout.legendBase + ink.height(ink.body);
-        double size = 11 * ink.unit;
+        List<Destination> entries = new ArrayList<>();
+        List<String> words = new ArrayList<>();
         for (Destination destination : Destination.values()) {
-            if (destination == Destination.UNKNOWN && !seen.contains(destination)) {
-                continue;
+            if (destination != Destination.UNKNOWN || seen.contains(destination)) {
+                entries.add(destination);
+                words.add(
+                        switch (destination) {
+                            case INNER -> "to the inner diameter (" + conditions.innerSide() + ")";
+                            case OUTER -> "to the outer diameter (" + conditions.outerSide() + ")";
+                            case BACK -> "back into the feed";
+                            case HELD -> "held in the film";
+                            case UNKNOWN -> "not followed to an end";
+                        });
             }
-            String words = switch (destination) {
-                case INNER -> "to the inner diameter (" + conditions.innerSide() + ")";
-                case OUTER -> "to the outer diameter (" + conditions.outerSide() + ")";
-                case BACK -> "back into the feed";
-                case HELD -> "held in the film";
-                case UNKNOWN -> "not followed to an end";
-            };
+        }
+        double size = 11 * ink.unit;
+        double before = size + 6 * ink.unit;
+        int perRow = (entries.size() + 1) / 2;
+        double x = layout.feedWindow.x;
+        double widest = 0;
+        for (int n = 0; n < entries.size(); n++) {
+            // Column by column, two rows.
+            if (n % 2 == 0 && n > 0) {
+                x += before + widest + 22 * ink.unit;
+                widest = 0;
+            }
+            double y = layout.legendBase + (n % 2) * 1.25 * ink.height(ink.small);
+            double room = (layout.rightEdge - layout.feedWindow.x) / perRow * 1.4;
+            String text = ink.fitted(ink.small, words.get(n), room);
+            Destination destination = entries.get(n);
             ink.mark(
-                    destination.marker(x + size / 2, y - 0.35 * ink.body.getSize2D(), size),
+                    destination.marker(x + size / 2, y - 0.36 * ink.small.getSize2D(), size),
                     destination.colour(),
                     ink.unit);
-            ink.write(ink.small, ink.text, words, x + size + 5 * ink.unit, y, Ink.Side.LEFT);
-            x += size + 5 * ink.unit + ink.width(ink.small, words) + 16 * ink.unit;
+            ink.write(ink.small, ink.text, text, x + before, y, Ink.Side.LEFT);
+            widest = Math.max(widest, ink.width(ink.small, text));
         }
     }
 }

@@ -35,7 +35,7 @@ final class Words {
     }
 
     static String diameter(double radius) {
-        return "⌀ " + Ticks.number(2e3 * radius, 1) + " mm";
+        return "Ø " + Ticks.number(2e3 * radius, 1) + " mm";
     }
 
     static String frame(Frame frame) {

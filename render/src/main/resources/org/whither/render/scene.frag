@@ -55,5 +55,6 @@ void main() {
     vec3 h = normalize(lamp + v);
     float shine = sun > 0.0 ? gloss * pow(max(0.0, dot(n, h)), 48.0) : 0.0;
     vec3 light = sky * vec3(0.94, 0.98, 1.06) + fill + 0.74 * sun * vec3(1.04, 1.0, 0.93);
+    light *= mix(0.72, 1.0, open);
     pixel = vec4(toScreen(toLinear(base) * light + 0.5 * shine), opacity);
 }
