@@ -93,9 +93,10 @@ public final class Gap {
     static Camera camera(GapScene gap, PictureSettings settings) {
         double unit = Ink.unit(settings);
         Rectangle window = new Rectangle(0, 0, settings.width(), settings.height());
+        // The legend below is three lines of small letters, which do not shrink as far as the picture does.
+        double below = 74 * unit + 6.9 * Math.max(Ink.LEAST_SMALL, Ink.SMALL * unit);
         Rectangle2D room = new Rectangle2D.Double(
-                
-                125 * unit, 116 * unit, settings.width() - 175 * unit, settings.height() - (116 + 150) * unit);
+                125 * unit, 116 * unit, settings.width() - 175 * unit, settings.height() - 116 * unit - below);
         List<double[]> extent = gap.extent();
         double[] away = {
             Math.cos(ELEVATION) * Math.cos(ASIDE), -Math.cos(ELEVATION) * Math.sin(ASIDE), Math.sin(ELEVATION)
@@ -174,18 +175,12 @@ public final class Gap {
         double captionBase = factsBase + 11 * u + ink.ascent(ink.body);
         ink.write(ink.title, ink.text, ink.fitted(ink.title, settings.title(), room), margin, titleBase, Ink.Side.LEFT);
         String facts = Words.facts(shape.flow().film());
-        ink.write(ink.fitting(ink.body, facts, room), ink.faint, facts, margin, factsBase, Ink.Side.LEFT);
+        ink.writeIn(room, ink.body, ink.faint, facts, margin, factsBase);
         String drawn = exaggerationWords();
-        ink.write(ink.fitting(ink.heading, drawn, room), ink.text, drawn, margin, captionBase, Ink.Side.LEFT);
+        ink.writeIn(room, ink.heading, ink.text, drawn, margin, captionBase);
 
         double cautionBase = settings.height() - 14 * u;
-        ink.write(
-                ink.fitting(ink.small, Words.CAUTION, room),
-                ink.faint,
-                Words.CAUTION,
-                margin,
-                cautionBase,
-                Ink.Side.LEFT);
+        ink.caution(room, margin, cautionBase);
         double barBase = cautionBase - ink.ascent(ink.small) - 12 * u - 2.1 * ink.ascent(ink.small) - 16 * u;
         if (!paths.isEmpty()) {
             double length = 0.36 * settings.width();
@@ -205,7 +200,8 @@ public final class Gap {
             ink.colour(GapScene.STATOR);
             ink.stroke(2.2 * u);
             ink.line(x - 8 * u, y - 0.35 * ink.small.getSize2D(), x + 8 * u, y - 0.35 * ink.small.getSize2D());
-            ink.write(ink.small, ink.text, "edge of the stator face where it is cut away", x + 15 * u, y, Ink.Side.LEFT);
+            ink.write(
+                    ink.small, ink.text, "edge of the stator face where it is cut away", x + 15 * u, y, Ink.Side.LEFT);
             y += 1.15 * ink.height(ink.small);
             ink.mark(Destination.HELD.marker(x, y - 0.35 * ink.small.getSize2D(), 10 * u), 0xf4f4f2, u);
             ink.write(ink.small, ink.text, "one marker each " + time(every), x + 15 * u, y, Ink.Side.LEFT);
@@ -253,12 +249,7 @@ public final class Gap {
         }
         String rotor = rate == 0 ? "rotor stands still" : "rotor turns, " + Words.speed(rate);
         under(ink, camera, 0.36, rotor, "seen from outside, stator above");
-        under(
-                ink,
-                camera,
-                0.7,
-                conditions.outerSide() + " side",
-                "outside, " + Words.bar(conditions.pressureOuter()));
+        under(ink, camera, 0.7, conditions.outerSide() + " side", "outside, " + Words.bar(conditions.pressureOuter()));
 
         double backTheta = gap.from + 0.1 * (gap.to - gap.from);
         Point2D back = at(camera, backTheta, inner, gap.height(gap.statorAt(backTheta, inner)));

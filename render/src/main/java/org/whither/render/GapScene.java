@@ -19,11 +19,11 @@ import org.whither.trace.PathPoint;
  */
 final class GapScene {
     private static final int ROTOR = 0xb3a594;
-    private static final int ROTOR_CUT = 0x978a7b;
+    private static final int ROTOR_CUT = 0x877b6e;
     static final int STATOR = 0x7f8b98;
     private static final int STATOR_CUT = 0x929eab;
-    /** The feed: a colour that no scale and no destination has. */
-    static final int FEED = 0xd9583b;
+    /** The feed: the reddish purple of Okabe and Ito, which no scale and no destination has. */
+    static final int FEED = 0xcc79a7;
 
     private final FilmShape shape;
     private final FilmFlow flow;
@@ -211,7 +211,7 @@ final class GapScene {
     }
 
     /**
-     * A face with its walls, and the far sides at the two diameters.
+     * A face with its walls.
      *
      * @param stator which ring
      * @param low first angle (rad)
@@ -231,12 +231,6 @@ final class GapScene {
             }
             wall(mesh, stator, i, j, turn, low, high, recess, feedOnly);
             step(mesh, stator, i, j, turn, low, high, recess, feedOnly);
-            if (!feedOnly && j == 0) {
-                side(mesh, stator, i, 0, 0, turn, low, high, recess);
-            }
-            if (!feedOnly && j + 1 == grid.cellsRadial()) {
-                side(mesh, stator, i, j, j + 1, turn, low, high, recess);
-            }
         });
         return mesh;
     }
@@ -512,9 +506,17 @@ final class GapScene {
         }
     }
 
-    /** The plane faces where a ring is cut at two angles. */
+    /** The sides of a ring at the two diameters, its far face, and the plane faces where it is cut at two angles. */
     private MeshBuilder cuts(boolean stator, double low, double high, boolean recess) {
         MeshBuilder mesh = new MeshBuilder();
+        cells(low, high, (i, j, turn) -> {
+            if (j == 0) {
+                side(mesh, stator, i, 0, 0, turn, low, high, recess);
+            }
+            if (j + 1 == grid.cellsRadial()) {
+                side(mesh, stator, i, j, j + 1, turn, low, high, recess);
+            }
+        });
         for (int end = 0; end < 2; end++) {
             double theta = end == 0 ? low : high;
             double side = end == 0 ? -1 : 1;
@@ -633,6 +635,20 @@ final class GapScene {
     private static final class Piece {
         final List<double[]> points = new ArrayList<>();
         final List<Double> values = new ArrayList<>();
+
+        /** Adds a point, unless it is nearer to the one before than a least distance. */
+        void add(double[] point, double value, double least) {
+            if (!points.isEmpty()) {
+                double[] before = points.get(points.size() - 1);
+                double distance =
+                        Math.hypot(Math.hypot(point[0] - before[0], point[1] - before[1]), point[2] - before[2]);
+                if (distance < least || distance == 0) {
+                    return;
+                }
+            }
+            points.add(point);
+            values.add(value);
+        }
     }
 
     /**
@@ -699,8 +715,10 @@ final class GapScene {
                     piece = new Piece();
                     pieces.add(piece);
                 }
-                piece.points.add(place(theta, mix(a.radius(), b.radius(), f), mix(a.z(), b.z(), f)));
-                piece.values.add((mix(a.speed(), b.speed(), f) - range.low()) / (range.high() - range.low()));
+                double[] point = place(theta, mix(a.radius(), b.radius(), f), mix(a.z(), b.z(), f));
+                double value = (mix(a.speed(), b.speed(), f) - range.low()) / (range.high() - range.low());
+                boolean end = n + 1 == points.size() && m == parts;
+                piece.add(point, value, end ? 0 : 0.8 * tubeRadius());
                 last = theta;
             }
         }

@@ -116,14 +116,8 @@ public final class Plan {
                 layout.titleBase,
                 Ink.Side.LEFT);
         String facts = Words.facts(shape.flow().film());
-        ink.write(ink.fitting(ink.body, facts, room), ink.faint, facts, layout.margin, layout.factsBase, Ink.Side.LEFT);
-        ink.write(
-                ink.fitting(ink.small, Words.CAUTION, room),
-                ink.faint,
-                Words.CAUTION,
-                layout.margin,
-                layout.cautionBase,
-                Ink.Side.LEFT);
+        ink.writeIn(room, ink.body, ink.faint, facts, layout.margin, layout.factsBase);
+        ink.caution(room, layout.margin, layout.cautionBase);
         ink.colourBar(
                 layout.pressureBar,
                 ColourScale.PRESSURE,
@@ -628,13 +622,7 @@ public final class Plan {
         double stretch = (window.height / feed.width()) / (window.width / along);
         String which = grid.sectors() > 1 ? "one sector" : "whole ring";
         String heading = "The feed, unrolled (" + which + "): where the gas of each point goes";
-        ink.write(
-                ink.fitting(ink.heading, heading, layout.rightEdge - window.x),
-                ink.text,
-                heading,
-                window.x,
-                window.y - 7 * ink.unit,
-                Ink.Side.LEFT);
+        ink.writeIn(layout.rightEdge - window.x, ink.heading, ink.text, heading, window.x, window.y - 7 * ink.unit);
         ink.colour(ink.dark() ? 0x1d2329 : 0xeff0ee);
         ink.pen.fill(window);
         Shape before = ink.pen.getClip();

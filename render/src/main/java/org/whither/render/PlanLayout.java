@@ -63,9 +63,9 @@ final class PlanLayout {
         Conditions conditions = shape.flow().film().conditions();
         double names = ink.width(ink.body, "dam, without grooves");
         String diameter = ", " + Words.diameter(0.1);
-        for (String detail : new String[] {
-            "Ø 000.0 – 000.0 mm", conditions.innerSide() + diameter, conditions.outerSide() + diameter
-        }) {
+        for (String detail :
+                new String[] {"Ø 000.0 – 000.0 mm", conditions.innerSide() + diameter, conditions.outerSide() + diameter
+                }) {
             names = Math.max(names, ink.width(ink.small, detail));
         }
         names = Math.min(0.2 * width, names + 24 * unit);

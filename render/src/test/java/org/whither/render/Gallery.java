@@ -48,11 +48,18 @@ final class Gallery {
         SpiralFilm usual = new SpiralFilm();
         for (double factor : new double[] {1, 150, 4000}) {
             write(
-                    Gap.draw(usual, usual.paths(Frame.STATIONARY), new GapSettings(settings.speedsIn(Frame.STATIONARY), factor)),
+                    Gap.draw(
+                            usual,
+                            usual.paths(Frame.STATIONARY),
+                            new GapSettings(settings.speedsIn(Frame.STATIONARY), factor)),
                     new File(folder, "gap-times-" + Math.round(factor) + ".png"));
         }
         write(
-                Plan.draw(usual, usual.fed(90, 30), usual.paths(Frame.ROTATING), settings.from(ViewingSide.ROTOR).pressures(2e5, 9e5)),
+                Plan.draw(
+                        usual,
+                        usual.fed(90, 30),
+                        usual.paths(Frame.ROTATING),
+                        settings.from(ViewingSide.ROTOR).pressures(2e5, 9e5)),
                 new File(folder, "plan-from-rotor.png"));
         SpiralFilm smooth = new SpiralFilm(12, -1000, false, Face.ROTOR);
         write(
