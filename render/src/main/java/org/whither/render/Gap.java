@@ -245,7 +245,7 @@ public final class Gap {
         double rate = conditions.rotationRate();
         double mid = 0.5 * (gap.bottom + gap.height(shape.rotorLow()));
         if (rate != 0) {
-            ink.arrow(rotationArrow(gap, camera, rate, 1e3 * outer, mid), 3 * u, 0x1c2126);
+            ink.arrow(rotationArrow(gap, camera, rate, 1e3 * outer, mid), 3 * u, 0xf6f3ee);
         }
         String rotor = rate == 0 ? "rotor stands still" : "rotor turns, " + Words.speed(rate);
         under(ink, camera, 0.36, rotor, "seen from outside, stator above");

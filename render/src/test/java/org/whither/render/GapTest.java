@@ -154,8 +154,8 @@ class GapTest {
         double[] p = new double[3];
         double[] q = new double[3];
         for (int c = 0; c < 3; c++) {
-            p[c] = Math.pow((a >> 8 * c & 0xff) / 255.0, 2.2);
-            q[c] = Math.pow((b >> 8 * c & 0xff) / 255.0, 2.2);
+            p[c] = Math.pow((a >> (8 * c) & 0xff) / 255.0, 2.2);
+            q[c] = Math.pow((b >> (8 * c) & 0xff) / 255.0, 2.2);
             la += p[c] * p[c];
             lb += q[c] * q[c];
         }

@@ -88,7 +88,7 @@ class PlanTest {
         // The head is drawn at the tip: more ink there than at the tail.
         SpiralFilm film = new SpiralFilm(12, rate * 1000, true, Face.STATOR);
         BufferedImage image = Plan.draw(film, List.of(), List.of(), SETTINGS.from(side));
-        assertTrue(inkAround(image, arrow[44]) > 1.4 * inkAround(image, arrow[4]));
+        assertTrue(inkAround(image, arrow[46]) > 1.4 * inkAround(image, arrow[4]));
     }
 
     private static int inkAround(BufferedImage image, Point2D point) {
@@ -171,7 +171,7 @@ class PlanTest {
         for (int n = 0; n < fed.size(); n++) {
             FedPoint point = fed.get(n);
             // By hand: angle along, radius up; seen from the stator +θ runs to the left where outwards is up.
-            double along = (n / 8 + 0.5) / pitchColumns;
+            double along = (Math.floorDiv(n, 8) + 0.5) / pitchColumns;
             double f = side == ViewingSide.STATOR ? 1 - along : along;
             double x = layout.feedWindow.x + f * layout.feedWindow.width;
             double y = layout.feedWindow.getMaxY() - (n % 8 + 0.5) / 8 * layout.feedWindow.height;
