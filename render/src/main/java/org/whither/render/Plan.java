@@ -64,15 +64,15 @@ public final class Plan {
     }
 
     /** The layout that a plan would have, for tests and for overlays. */
-    static PlanLayout layout(FilmFlow flow, PictureSettings settings, boolean withFeed) {
+    static PlanLayout layout(FilmShape shape, PictureSettings settings, boolean withFeed, boolean withLegend) {
         BufferedImage page = new BufferedImage(8, 8, BufferedImage.TYPE_INT_RGB);
         try (Ink ink = new Ink(page, settings)) {
-            return new PlanLayout(new FilmShape(flow), settings, ink, withFeed);
+            return new PlanLayout(shape, settings, ink, withFeed, withLegend);
         }
     }
 
     private BufferedImage draw() {
-        PlanLayout layout = layout(shape.flow(), settings, withFeed());
+        PlanLayout layout = layout(shape, settings, withFeed(), withFeed() || !paths.isEmpty());
         BufferedImage image;
         try (Canvas canvas = new Canvas(settings.width(), settings.height())) {
             Scene scene = scene();
@@ -86,6 +86,9 @@ public final class Plan {
             sector(ink, layout);
             if (layout.feedWindow != null) {
                 feed(ink, layout);
+            }
+            if (withFeed() || !paths.isEmpty()) {
+                legend(ink, layout);
             }
         }
         return image;
@@ -140,7 +143,9 @@ public final class Plan {
         double line = ink.height(ink.body);
         double x = window.x;
         double y = window.y + ink.ascent(ink.body);
-        ink.write(ink.heading, ink.text, conditions.outerSide() + " side", x, y, Ink.Side.LEFT);
+        // The corner of the window that the ring leaves free.
+        String outerSide = ink.fitted(ink.heading, conditions.outerSide() + " side", 0.37 * window.width);
+        ink.write(ink.heading, ink.text, outerSide, x, y, Ink.Side.LEFT);
         ink.write(
                 ink.small, ink.faint, "outside, " + Words.bar(conditions.pressureOuter()), x, y + line, Ink.Side.LEFT);
 
@@ -148,7 +153,7 @@ public final class Plan {
         double cy = window.getCenterY();
         double hole = 1e3 * grid.innerRadius() * layout.ringScale;
         double most = 1.5 * hole;
-        String inner = conditions.innerSide() + " side";
+        String inner = ink.fitted(ink.heading, conditions.innerSide() + " side", most);
         String inside = "inside, " + Words.bar(conditions.pressureInner());
         ink.write(ink.heading, ink.text, inner, cx, cy + 0.42 * hole, Ink.Side.MIDDLE);
         ink.write(ink.small, ink.faint, inside, cx, cy + 0.42 * hole + line, Ink.Side.MIDDLE);
@@ -352,6 +357,18 @@ public final class Plan {
         ink.stroke(Math.max(1, ink.unit));
         ink.pen.draw(window);
         names(ink, layout);
+        double rate = shape.flow().film().conditions().rotationRate();
+        if (rate != 0) {
+            // At the top of the ring +θ runs to the left, seen from the stator.
+            boolean left = rate > 0 == (settings.seenFrom() == ViewingSide.STATOR);
+            ink.write(
+                    ink.small,
+                    ink.faint,
+                    left ? "← rotor turns" : "rotor turns →",
+                    window.x + 8 * ink.unit,
+                    window.y + 6 * ink.unit + ink.ascent(ink.small),
+                    Ink.Side.LEFT);
+        }
         scaleBarOver(ink, layout);
     }
 
@@ -631,10 +648,8 @@ public final class Plan {
         size = Math.max(4 * ink.unit, Math.min(11 * ink.unit, size));
         Area room = new Area(window);
         ink.pen.clip(room);
-        Set<Destination> seen = EnumSet.noneOf(Destination.class);
         for (FedPoint point : fed) {
             Destination destination = Destination.of(point.end());
-            seen.add(destination);
             Point2D p =
                     unrolled(layout, point.release().theta(), point.release().radius());
             ink.mark(
@@ -677,14 +692,13 @@ public final class Plan {
                 window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit,
                 length * window.width / (1e3 * along),
                 Ticks.plain(length) + " mm along");
-        legend(ink, layout, seen);
     }
 
-    private void legend(Ink ink, PlanLayout layout, Set<Destination> seen) {
+    private void legend(Ink ink, PlanLayout layout) {
         var conditions = shape.flow().film().conditions();
-        for (Path path : paths) {
-            seen.add(Destination.of(path.end()));
-        }
+        Set<Destination> seen = EnumSet.noneOf(Destination.class);
+        fed.forEach(point -> seen.add(Destination.of(point.end())));
+        paths.forEach(path -> seen.add(Destination.of(path.end())));
         List<Destination> entries = new ArrayList<>();
         List<String> words = new ArrayList<>();
         for (Destination destination : Destination.values()) {
@@ -703,7 +717,7 @@ public final class Plan {
         double size = 11 * ink.unit;
         double before = size + 6 * ink.unit;
         int perRow = (entries.size() + 1) / 2;
-        double x = layout.feedWindow.x;
+        double x = layout.sectorWindow.x;
         double widest = 0;
         for (int n = 0; n < entries.size(); n++) {
             // Column by column, two rows.
@@ -712,7 +726,7 @@ public final class Plan {
                 widest = 0;
             }
             double y = layout.legendBase + (n % 2) * 1.25 * ink.height(ink.small);
-            double room = (layout.rightEdge - layout.feedWindow.x) / perRow * 1.4;
+            double room = (layout.rightEdge - layout.sectorWindow.x) / perRow * 1.4;
             String text = ink.fitted(ink.small, words.get(n), room);
             Destination destination = entries.get(n);
             ink.mark(

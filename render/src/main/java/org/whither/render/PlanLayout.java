@@ -35,7 +35,7 @@ final class PlanLayout {
     /** Middle angle of the enlarged sector (rad). */
     final double middle;
 
-    PlanLayout(FilmShape shape, PictureSettings settings, Ink ink, boolean withFeed) {
+    PlanLayout(FilmShape shape, PictureSettings settings, Ink ink, boolean withFeed, boolean withLegend) {
         unit = ink.unit;
         int width = settings.width();
         int height = settings.height();
@@ -71,7 +71,7 @@ final class PlanLayout {
         names = Math.min(0.2 * width, names + 24 * unit);
         double sectorWidth = rightEdge - left - names;
         double below = ink.ascent(ink.small) + 20 * unit;
-        double legendRoom = withFeed ? 2.4 * ink.height(ink.small) + 6 * unit : 0;
+        double legendRoom = withLegend ? 2.4 * ink.height(ink.small) + 6 * unit : 0;
         double feedRoom = withFeed ? heading + 0.135 * height + below : 0;
         double sectorHeight = bottom - top - heading - legendRoom - feedRoom - below;
         sectorWindow = rectangle(left, top + heading, sectorWidth, sectorHeight);

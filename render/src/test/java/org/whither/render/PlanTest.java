@@ -22,12 +22,16 @@ class PlanTest {
     private static final SpiralFilm FILM = new SpiralFilm();
     private static final PictureSettings SETTINGS = PictureSettings.standard("Invented face");
 
+    private static PlanLayout layout(PictureSettings settings, boolean withFeed) {
+        return Plan.layout(new FilmShape(FILM), settings, withFeed, withFeed);
+    }
+
     @ParameterizedTest
     @EnumSource(ViewingSide.class)
     void pressure_isReadBackThroughTheColourBar(ViewingSide side) {
         PictureSettings settings = SETTINGS.from(side);
         BufferedImage image = Plan.draw(FILM, List.of(), List.of(), settings);
-        PlanLayout layout = Plan.layout(FILM, settings, false);
+        PlanLayout layout = layout(settings, false);
         PictureSettings.Range range = new FilmShape(FILM).pressureRange();
         int[] bar = new int[layout.pressureBar.width];
         for (int n = 0; n < bar.length; n++) {
@@ -61,7 +65,7 @@ class PlanTest {
     @Test
     void fixedRange_setsTheBar() {
         BufferedImage image = Plan.draw(FILM, List.of(), List.of(), SETTINGS.pressures(0, 20e5));
-        PlanLayout layout = Plan.layout(FILM, SETTINGS, false);
+        PlanLayout layout = layout(SETTINGS, false);
         double r = 0.0565;
         double theta = Math.PI / 2;
         Point2D p = layout.ring.project(1e3 * r * Math.cos(theta), 1e3 * r * Math.sin(theta), 0);
@@ -73,7 +77,7 @@ class PlanTest {
     @CsvSource({"STATOR, 1, 1", "STATOR, -1, -1", "ROTOR, 1, -1", "ROTOR, -1, 1"})
     void rotationArrow_turnsAsTheRotorDoes(ViewingSide side, double rate, int anticlockwise) {
         // Right-hand rule about +z, z from the rotor to the stator: from the stator, +θ is anticlockwise.
-        PlanLayout layout = Plan.layout(FILM, SETTINGS.from(side), false);
+        PlanLayout layout = layout(SETTINGS.from(side), false);
         Point2D[] arrow = Plan.rotationArrow(layout.ring, rate * 1000, 37);
         Point2D middle = layout.ring.project(0, 0, 0);
         double turn = 0;
@@ -114,7 +118,7 @@ class PlanTest {
         assertEquals(SpiralFilm.TIP, shape.dam().to(), 1e-12);
 
         BufferedImage image = Plan.draw(FILM, List.of(), List.of(), SETTINGS);
-        PlanLayout layout = Plan.layout(FILM, SETTINGS, false);
+        PlanLayout layout = layout(SETTINGS, false);
         int dark = 0;
         for (FilmShape.Edge edge : edges) {
             double theta = 0.5 * (edge.theta0() + edge.theta1()) + grid.pitch() * 4;
@@ -153,7 +157,7 @@ class PlanTest {
         PictureSettings settings = SETTINGS.from(side);
         List<Path> paths = FILM.paths(Frame.ROTATING).subList(0, 1);
         BufferedImage image = Plan.draw(FILM, List.of(), paths, settings);
-        PlanLayout layout = Plan.layout(FILM, settings, false);
+        PlanLayout layout = layout(settings, false);
         PathPoint end = paths.get(0).points().get(paths.get(0).points().size() - 1);
         Point2D p = layout.ring.project(
                 1e3 * end.radius() * Math.cos(end.steadyTheta()), 1e3 * end.radius() * Math.sin(end.steadyTheta()), 0);
@@ -166,7 +170,7 @@ class PlanTest {
         PictureSettings settings = SETTINGS.from(side);
         List<FedPoint> fed = FILM.fed(30, 8);
         BufferedImage image = Plan.draw(FILM, fed, List.of(), settings);
-        PlanLayout layout = Plan.layout(FILM, settings, true);
+        PlanLayout layout = layout(settings, true);
         int pitchColumns = 30;
         for (int n = 0; n < fed.size(); n++) {
             FedPoint point = fed.get(n);
