@@ -14,7 +14,8 @@ final class Gallery {
     public static void main(String[] arguments) throws IOException {
         long start = System.nanoTime();
         File folder = new File(arguments[0]);
-        SpiralFilm film = new SpiralFilm();
+        int finer = arguments.length > 2 ? Integer.parseInt(arguments[2]) : 1;
+        SpiralFilm film = new SpiralFilm(12, 12000 * Math.PI / 30, true, Face.STATOR, finer);
         if (arguments.length > 1 && arguments[1].contains("others")) {
             others(folder);
             return;

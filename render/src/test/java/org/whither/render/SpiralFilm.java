@@ -48,9 +48,14 @@ final class SpiralFilm implements FilmFlow {
     }
 
     SpiralFilm(int sectors, double rotationRate, boolean stepped, Face feedFace) {
+        this(sectors, rotationRate, stepped, feedFace, 1);
+    }
+
+    /** As above, on a grid that is so many times finer both ways. */
+    SpiralFilm(int sectors, double rotationRate, boolean stepped, Face feedFace, int finer) {
         this.stepped = stepped;
-        double[] radius = radii();
-        int ni = 25;
+        double[] radius = radii(finer);
+        int ni = 24 * finer + 1;
         int nj = radius.length;
         double pitch = 2 * Math.PI / sectors;
         double[] theta = new double[ni * nj];
@@ -94,14 +99,14 @@ final class SpiralFilm implements FilmFlow {
                 Optional.of(supply));
     }
 
-    private static double[] radii() {
+    private static double[] radii(int finer) {
         List<Double> radii = new ArrayList<>();
         double[] ends = {INNER, FEED_FROM, FEED_TO, TIP, OUTER};
         int[] parts = {20, 4, 5, 18};
         radii.add(INNER);
         for (int n = 0; n < parts.length; n++) {
-            for (int m = 1; m <= parts[n]; m++) {
-                radii.add(ends[n] + (ends[n + 1] - ends[n]) * m / parts[n]);
+            for (int m = 1; m <= parts[n] * finer; m++) {
+                radii.add(ends[n] + (ends[n + 1] - ends[n]) * m / (parts[n] * finer));
             }
         }
         return radii.stream().mapToDouble(Double::doubleValue).toArray();
