@@ -62,6 +62,13 @@ final class Gallery {
                         usual.paths(Frame.ROTATING),
                         settings.from(ViewingSide.ROTOR).pressures(2e5, 9e5)),
                 new File(folder, "plan-from-rotor.png"));
+        SpiralFilm named = SpiralFilm.withLongNames();
+        write(
+                Plan.draw(named, named.fed(30, 8), named.paths(Frame.ROTATING), settings),
+                new File(folder, "plan-names.png"));
+        write(
+                Gap.draw(named, named.paths(Frame.ROTATING), new GapSettings(settings, 1000)),
+                new File(folder, "gap-names.png"));
         SpiralFilm smooth = new SpiralFilm(12, -1000, false, Face.ROTOR);
         write(
                 Gap.draw(smooth, smooth.paths(Frame.ROTATING), new GapSettings(settings, 1000)),

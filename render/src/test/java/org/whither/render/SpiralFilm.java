@@ -39,7 +39,7 @@ final class SpiralFilm implements FilmFlow {
     static final double FEED_TO = 0.0600;
 
     private final FilmGrid grid;
-    private final Film film;
+    private Film film;
     private final boolean stepped;
     private final double groovedShare = 0.5;
 
@@ -49,6 +49,31 @@ final class SpiralFilm implements FilmFlow {
 
     SpiralFilm(int sectors, double rotationRate, boolean stepped, Face feedFace) {
         this(sectors, rotationRate, stepped, feedFace, 1);
+    }
+
+    /** With names as long as somebody may give them. */
+    static SpiralFilm withLongNames() {
+        SpiralFilm film = new SpiralFilm();
+        Film f = film.film;
+        Conditions c = f.conditions();
+        film.film = new Film(
+                f.heading(),
+                new Conditions(
+                        c.rotationRate(),
+                        c.pressureInner(),
+                        c.pressureOuter(),
+                        c.pressureSupply(),
+                        c.temperature(),
+                        "vent to the separation chamber and the bearing housing",
+                        "process gas, a wet mixture of light hydrocarbons and hydrogen"),
+                new Gas("nitrogen of industrial purity with traces of everything else", 0.0280134, 1.78e-5, 1),
+                f.grid(),
+                f.faces(),
+                f.velocityFrame(),
+                f.steadyIn(),
+                f.field(),
+                f.supply());
+        return film;
     }
 
     /** As above, on a grid that is so many times finer both ways. */
