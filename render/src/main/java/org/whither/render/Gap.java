@@ -297,6 +297,9 @@ public final class Gap {
     private void under(Ink ink, Camera camera, double share, String heading, String detail) {
         double x = at(camera, gap.from + share * (gap.to - gap.from), grid.outerRadius(), gap.bottom)
                 .getX();
+        double room = settings.width() - 20 * ink.unit - x;
+        heading = ink.fitted(ink.heading, heading, room);
+        detail = ink.fitted(ink.small, detail, room);
         double wide = Math.max(ink.width(ink.heading, heading), ink.width(ink.small, detail));
         double y = below(camera, x, x + wide) + 10 * ink.unit + ink.ascent(ink.heading);
         ink.write(ink.heading, ink.text, heading, x, y, Ink.Side.LEFT);
@@ -312,6 +315,8 @@ public final class Gap {
         leader.lineTo(words.getX(), words.getY() + gapBelow);
         ink.pen.draw(leader);
         ink.mark(Destination.HELD.marker(place.getX(), place.getY(), 5 * ink.unit), ink.text, ink.unit);
+        double room = words.getX() - 20 * ink.unit;
+        heading = ink.fitted(ink.heading, heading, room);
         double x = words.getX() + (side == Ink.Side.LEFT ? -4 : side == Ink.Side.RIGHT ? 4 : 0) * ink.unit;
         ink.write(ink.heading, ink.text, heading, x, words.getY(), side);
         ink.write(ink.small, ink.faint, detail, x, words.getY() + ink.height(ink.small), side);

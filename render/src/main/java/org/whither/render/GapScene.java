@@ -636,12 +636,19 @@ final class GapScene {
         final List<double[]> points = new ArrayList<>();
         final List<Double> values = new ArrayList<>();
 
+        /** Length of the straight line from its first to its last point (mm). */
+        double length() {
+            return points.isEmpty() ? 0 : distance(points.get(0), points.get(points.size() - 1));
+        }
+
+        private static double distance(double[] a, double[] b) {
+            return Math.hypot(Math.hypot(b[0] - a[0], b[1] - a[1]), b[2] - a[2]);
+        }
+
         /** Adds a point, unless it is nearer to the one before than a least distance. */
         void add(double[] point, double value, double least) {
             if (!points.isEmpty()) {
-                double[] before = points.get(points.size() - 1);
-                double distance =
-                        Math.hypot(Math.hypot(point[0] - before[0], point[1] - before[1]), point[2] - before[2]);
+                double distance = distance(points.get(points.size() - 1), point);
                 if (distance < least || distance == 0) {
                     return;
                 }
@@ -664,7 +671,8 @@ final class GapScene {
         MeshBuilder markers = new MeshBuilder();
         double radius = tubeRadius();
         for (Path path : paths) {
-            for (Piece piece : fold(path, range)) {
+            List<Piece> pieces = fold(path, range);
+            for (Piece piece : pieces) {
                 double[] line = new double[3 * piece.points.size()];
                 double[] values = new double[piece.points.size()];
                 for (int n = 0; n < values.length; n++) {
@@ -674,7 +682,10 @@ final class GapScene {
                 Tubes.tube(tubes, line, values, radius);
             }
             markers(path, every, markers, 2.3 * radius);
-            head(path, range, tubes, radius);
+            // A cone longer than the piece it ends would hang in the air.
+            if (!pieces.isEmpty() && pieces.get(pieces.size() - 1).length() > 4 * radius) {
+                head(path, range, tubes, radius);
+            }
         }
         List<Scene.Item> items = new ArrayList<>();
         add(items, tubes, Scene.Material.scaled(ColourScale.SPEED, true));

@@ -348,10 +348,10 @@ public final class Plan {
         ink.pen.clip(window);
         double half = Math.asin(Math.min(1, 0.75 * window.width / layout.sectorScale / (1e3 * grid.innerRadius())));
         int reach = Math.min(grid.sectors() / 2 + 1, 1 + spiralReach() + (int) Math.ceil(half / grid.pitch()));
-        List<Rectangle2D> taken = new ArrayList<>();
-        isobars(ink, layout, reach, taken);
+        List<Runnable> labels = isobars(ink, layout, reach);
         outlines(ink, layout.sector, 1.25 * ink.unit, -reach, reach, 0.85);
         footprints(ink, layout.sector, 2.2 * ink.unit);
+        labels.forEach(Runnable::run);
         ink.pen.setClip(before);
         ink.colour(ink.line);
         ink.stroke(Math.max(1, ink.unit));
@@ -387,7 +387,10 @@ public final class Plan {
         return (int) Math.ceil(Math.abs(grid.theta(0, grid.nj() - 1) - grid.theta(0, 0)) / grid.pitch());
     }
 
-    private void isobars(Ink ink, PlanLayout layout, int reach, List<Rectangle2D> taken) {
+    /** Draws the isobars and returns what writes their values, to be run when all other lines are drawn. */
+    private List<Runnable> isobars(Ink ink, PlanLayout layout, int reach) {
+        List<Rectangle2D> taken = new ArrayList<>();
+        List<Runnable> labels = new ArrayList<>();
         double[] one = shape.nodePressures();
         int rows = grid.nj();
         // Long cells are divided, so that the lines follow the circles.
@@ -414,19 +417,21 @@ public final class Plan {
         for (double level : Ticks.between(range.low() / 1e5, range.high() / 1e5, ISOBARS)) {
             int colour = ColourScale.PRESSURE.colour((level * 1e5 - range.low()) / (range.high() - range.low()));
             boolean onDark = Colours.lightness(colour) < 58;
-            int ink1 = onDark ? 0xffffff : 0x14181c;
+            int contrast = onDark ? 0xffffff : 0x14181c;
             for (double[] line : Isobars.lines(rows, x, y, values, level)) {
                 Path2D.Double path = new Path2D.Double();
                 path.moveTo(line[0], line[1]);
                 for (int n = 2; n < line.length; n += 2) {
                     path.lineTo(line[n], line[n + 1]);
                 }
-                ink.colour(ink1, 0.8);
+                ink.colour(contrast, 0.8);
                 ink.stroke(0.9 * ink.unit);
                 ink.pen.draw(path);
-                label(ink, layout.sectorWindow, line, Ticks.number(level, Ticks.decimals(step)), ink1, colour, taken);
+                String words = Ticks.number(level, Ticks.decimals(step));
+                labels.add(() -> label(ink, layout.sectorWindow, line, words, contrast, colour, taken));
             }
         }
+        return labels;
     }
 
     /** Writes a value on a line where it is straight, inside the window and clear of other values; else not at all. */
@@ -504,7 +509,7 @@ public final class Plan {
                 layout,
                 grid.outerRadius(),
                 "outer diameter",
-                conditions.outerSide() + ", " + Words.diameter(grid.outerRadius()));
+                Words.diameter(grid.outerRadius()) + ", " + conditions.outerSide());
         for (FilmShape.Band band : shape.grooveBands()) {
             add(names, layout, 0.5 * (band.from() + band.to()), "grooves", between(band));
         }
@@ -524,7 +529,7 @@ public final class Plan {
                 layout,
                 grid.innerRadius(),
                 "inner diameter",
-                conditions.innerSide() + ", " + Words.diameter(grid.innerRadius()));
+                Words.diameter(grid.innerRadius()) + ", " + conditions.innerSide());
         names.sort((a, b) -> Double.compare(a.wantedY(), b.wantedY()));
         double pitch = ink.height(ink.body) + ink.height(ink.small) + 3 * ink.unit;
         double[] y = spread(

@@ -14,7 +14,8 @@ final class Gallery {
     public static void main(String[] arguments) throws IOException {
         long start = System.nanoTime();
         File folder = new File(arguments[0]);
-        SpiralFilm film = new SpiralFilm();
+        int finer = arguments.length > 2 ? Integer.parseInt(arguments[2]) : 1;
+        SpiralFilm film = new SpiralFilm(12, 12000 * Math.PI / 30, true, Face.STATOR, finer);
         if (arguments.length > 1 && arguments[1].contains("others")) {
             others(folder);
             return;
@@ -61,6 +62,13 @@ final class Gallery {
                         usual.paths(Frame.ROTATING),
                         settings.from(ViewingSide.ROTOR).pressures(2e5, 9e5)),
                 new File(folder, "plan-from-rotor.png"));
+        SpiralFilm named = SpiralFilm.withLongNames();
+        write(
+                Plan.draw(named, named.fed(30, 8), named.paths(Frame.ROTATING), settings),
+                new File(folder, "plan-names.png"));
+        write(
+                Gap.draw(named, named.paths(Frame.ROTATING), new GapSettings(settings, 1000)),
+                new File(folder, "gap-names.png"));
         SpiralFilm smooth = new SpiralFilm(12, -1000, false, Face.ROTOR);
         write(
                 Gap.draw(smooth, smooth.paths(Frame.ROTATING), new GapSettings(settings, 1000)),

@@ -199,6 +199,15 @@ class PlanTest {
                 Gap.draw(FILM, FILM.paths(Frame.ROTATING).subList(0, 2), new GapSettings(settings, 1000)), settings);
     }
 
+    @Test
+    void longNames_stayInThePicture() {
+        SpiralFilm film = SpiralFilm.withLongNames();
+        PictureSettings settings = PictureSettings.standard("A title that nobody would read to its end, ".repeat(5));
+        List<Path> paths = film.paths(Frame.ROTATING).subList(0, 2);
+        edgeIsClear(Plan.draw(film, film.fed(30, 8), paths, settings), settings);
+        edgeIsClear(Gap.draw(film, paths, new GapSettings(settings, 1000)), settings);
+    }
+
     private static void edgeIsClear(BufferedImage image, PictureSettings settings) {
         int rim = (int) Math.max(3, 8 * Ink.unit(settings));
         int paper = Ink.paper(settings);
