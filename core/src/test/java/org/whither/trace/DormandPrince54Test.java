@@ -102,23 +102,58 @@ class DormandPrince54Test {
         assertEquals(start[1], end[1], 1e-6);
     }
 
-    /** T. E. Hull, W. H. Enright, B. M. Fellen and A. E. Sedgwick, SIAM J. Numer. Anal. 9 (1972): A4 and B5 at t = 20. */
+    /**
+     * T. E. Hull, W. H. Enright, B. M. Fellen and A. E. Sedgwick, SIAM J. Numer. Anal. 9 (1972) 603: problems A4, B1, B5, D5
+     * and E2 at t = 20. The values were computed for the project's check values in extended precision.
+     */
     @Test
     void step_detestProblems_reachReferenceValues() {
-        double[] a4 = integrate((t, y, d) -> d[0] = y[0] / 4 * (1 - y[0] / 20), new double[] {1}, 20, 1e-11);
-        assertEquals(17.7301664813, a4[0], 1e-8);
-        double[] b5 = integrate(
+        check((t, y, d) -> d[0] = y[0] / 4 * (1 - y[0] / 20), new double[] {1}, 17.7301664813);
+        check(
+                (t, y, d) -> {
+                    d[0] = 2 * (y[0] - y[0] * y[1]);
+                    d[1] = -(y[1] - y[0] * y[1]);
+                },
+                new double[] {1, 3},
+                0.676187600858,
+                0.186081609964);
+        check(
                 (t, y, d) -> {
                     d[0] = y[1] * y[2];
                     d[1] = -y[0] * y[2];
                     d[2] = -0.51 * y[0] * y[1];
                 },
                 new double[] {0, 1, 1},
-                20,
-                1e-11);
-        assertEquals(-0.939657079873, b5[0], 1e-8);
-        assertEquals(-0.342117775400, b5[1], 1e-8);
-        assertEquals(0.741412659620, b5[2], 1e-8);
+                -0.939657079873,
+                -0.342117775400,
+                0.741412659620);
+        double e = 0.9;
+        check(
+                (t, y, d) -> {
+                    double cube = Math.pow(y[0] * y[0] + y[1] * y[1], 1.5);
+                    d[0] = y[2];
+                    d[1] = y[3];
+                    d[2] = -y[0] / cube;
+                    d[3] = -y[1] / cube;
+                },
+                new double[] {1 - e, 0, 0, Math.sqrt((1 + e) / (1 - e))},
+                -1.29526625099,
+                0.400393896379);
+        check(
+                (t, y, d) -> {
+                    d[0] = y[1];
+                    d[1] = (1 - y[0] * y[0]) * y[1] - y[0];
+                },
+                new double[] {2, 0},
+                2.00814976217,
+                -0.0425088752732);
+    }
+
+    private static void check(RightHandSide f, double[] start, double... expected) {
+        double[] end = integrate(f, start, 20, 1e-12);
+        for (int n = 0; n < expected.length; n++) {
+            assertEquals(expected[n], end[n], 2e-8, "component " + n);
+        }
     }
 
     /** Halving the step divides the error of a step by 2⁶ at its end and by about 2⁵ within it. */
@@ -146,7 +181,7 @@ class DormandPrince54Test {
         assertTrue(Math.log(within[0] / within[1]) / Math.log(2) > 4.5);
     }
 
-    private static double[] integrate(RightHandSide f, double[] start, double until, double tolerance) {
+    static double[] integrate(RightHandSide f, double[] start, double until, double tolerance) {
         DormandPrince54 stepper = new DormandPrince54(start.length);
         StepControl control = new StepControl();
         double[] y = start.clone();
