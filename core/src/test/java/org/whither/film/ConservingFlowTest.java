@@ -1,7 +1,6 @@
 package org.whither.film;
 
 import static org.junit.jupiter.api.Assertions.assertEquals;
-import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import java.util.SplittableRandom;
@@ -185,10 +184,6 @@ class ConservingFlowTest {
     }
 
     @Test
-    void constructor_fullField_isRefused() {
-        Film film = RadialCase.fullFilm(LEANING, 5, Frame.ROTATING, Frame.ROTATING);
-        assertThrows(IllegalArgumentException.class, () -> new ConservingFlow(film));
-    }
 
     /** A film whose pressure and film thickness wave around the ring. */
     static Film wavy(FilmGrid grid, boolean withFlows) {
