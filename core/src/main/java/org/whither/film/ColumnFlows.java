@@ -19,8 +19,8 @@ import org.apache.commons.math3.linear.RealVector;
  * much enters as leaves over the two diameters, and they are corrected with the rest.
  */
 public final class ColumnFlows {
-    /** A residual below this share of the flow through the film is rounding, not divergence. */
-    private static final double ROUNDING = 1e-13;
+    /** A residual below this share of the mean flow through a face is rounding, not divergence. */
+    private static final double ROUNDING = 1e-10;
 
     /** Where the nodes of the feed say less than this share of what leaves, or that much more, they say nothing. */
     private static final double LEAST_SCALE = 0.5;

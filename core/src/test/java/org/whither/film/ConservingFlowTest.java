@@ -183,8 +183,6 @@ class ConservingFlowTest {
         }
     }
 
-    @Test
-
     /** A film whose pressure and film thickness wave around the ring. */
     static Film wavy(FilmGrid grid, boolean withFlows) {
         double[] pressure = new double[grid.nodes()];
