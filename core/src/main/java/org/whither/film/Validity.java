@@ -43,13 +43,16 @@ public record Validity(double reducedReynolds, double knudsen, double exitMach, 
         double slope = 0;
         for (int i = 0; i < grid.cellsTheta(); i++) {
             for (int j = 0; j < grid.cellsRadial(); j++) {
-                double r = 0.5 * (grid.radius(j) + grid.radius(j + 1));
-                double theta = 0.5 * (grid.lineTheta(i, j, r) + grid.lineTheta(i + 1, j, r));
-                double h = flow.thickness(i, j, theta, r);
-                double rho = flow.density(i, j, 0, theta, r, 0);
-                double p = flow.pressure(i, j, 0, theta, r, 0);
-                reynolds = Math.max(reynolds, rho * omega * h * h / viscosity);
-                knudsen = Math.max(knudsen, viscosity / p * Math.sqrt(Math.PI * thermal / 2) / h);
+                // At both ends of the cell along r, since the pressure is lowest on the very edge of a diameter.
+                for (int end = 0; end <= 1; end++) {
+                    double r = grid.radius(j + end);
+                    double theta = 0.5 * (grid.theta(i, j + end) + grid.theta(i + 1, j + end));
+                    double h = flow.thickness(i, j, theta, r);
+                    double rho = flow.density(i, j, 0, theta, r, 0);
+                    double p = flow.pressure(i, j, 0, theta, r, 0);
+                    reynolds = Math.max(reynolds, rho * omega * h * h / viscosity);
+                    knudsen = Math.max(knudsen, viscosity / p * Math.sqrt(Math.PI * thermal / 2) / h);
+                }
                 if (film.faces().at() == Location.NODE) {
                     double rise = film.faces().thickness(grid.node(i, j + 1))
                             - film.faces().thickness(grid.node(i, j));

@@ -16,9 +16,9 @@ import java.nio.ByteBuffer;
 import java.nio.IntBuffer;
 import java.nio.charset.StandardCharsets;
 import java.util.ArrayList;
+import java.util.EnumMap;
 import java.util.IdentityHashMap;
 import java.util.List;
-import java.util.Map;
 
 /**
  * Draws scenes by OpenGL 3.3 core into an anti-aliased framebuffer of its own and hands back the pixels. Meshes are sent
@@ -34,13 +34,24 @@ final class Canvas implements AutoCloseable {
     /** A scene and how it falls on the picture. */
     record View(Scene scene, Camera camera) {}
 
-    private record Stored(int array, int[] buffers, int corners) {}
+    /** A mesh in the storage of OpenGL: its vertex array, its four buffers, and how many corners it has. */
+    private static final class Stored {
+        final int array;
+        final int[] buffers;
+        final int corners;
+
+        Stored(int array, int[] buffers, int corners) {
+            this.array = array;
+            this.buffers = buffers;
+            this.corners = corners;
+        }
+    }
 
     private final int width;
     private final int height;
     private final GLOffscreenAutoDrawable drawable;
-    private final Map<Mesh, Stored> stored = new IdentityHashMap<>();
-    private final Map<ColourScale, Integer> scales = new IdentityHashMap<>();
+    private final IdentityHashMap<Mesh, Stored> stored = new IdentityHashMap<>();
+    private final EnumMap<ColourScale, Integer> scales = new EnumMap<>(ColourScale.class);
     private final List<Integer> programs = new ArrayList<>();
     private final int[] framebuffers = new int[3];
     private final int[] renderbuffers = new int[3];
@@ -354,8 +365,8 @@ final class Canvas implements AutoCloseable {
     private void mesh(GL3 gl, int turn, Scene.Item item) {
         Stored mesh = stored.get(item.mesh());
         gl.glUniform2f(turn, (float) Math.cos(item.turn()), (float) Math.sin(item.turn()));
-        gl.glBindVertexArray(mesh.array());
-        gl.glDrawElements(GL.GL_TRIANGLES, mesh.corners(), GL.GL_UNSIGNED_INT, 0);
+        gl.glBindVertexArray(mesh.array);
+        gl.glDrawElements(GL.GL_TRIANGLES, mesh.corners, GL.GL_UNSIGNED_INT, 0);
     }
 
     private double[] castShadows(GL3 gl, Scene scene) {
@@ -455,8 +466,8 @@ final class Canvas implements AutoCloseable {
 
     private void release(GL3 gl) {
         for (Stored mesh : stored.values()) {
-            gl.glDeleteBuffers(mesh.buffers().length, mesh.buffers(), 0);
-            gl.glDeleteVertexArrays(1, new int[] {mesh.array()}, 0);
+            gl.glDeleteBuffers(mesh.buffers.length, mesh.buffers, 0);
+            gl.glDeleteVertexArrays(1, new int[] {mesh.array}, 0);
         }
         stored.clear();
         for (int texture : scales.values()) {

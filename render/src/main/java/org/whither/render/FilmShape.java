@@ -44,6 +44,7 @@ final class FilmShape {
     private final double rotorLow;
     private final double rotorHigh;
     private final double leastThickness;
+    private final List<Edge> grooveEdges;
 
     FilmShape(FilmFlow flow) {
         this.flow = flow;
@@ -69,6 +70,7 @@ final class FilmShape {
         this.rotorLow = low;
         this.rotorHigh = high;
         this.leastThickness = thin;
+        this.grooveEdges = List.copyOf(findGrooveEdges());
     }
 
     FilmFlow flow() {
@@ -167,6 +169,10 @@ final class FilmShape {
      * where the face is continuous but steep, the line at half height.
      */
     List<Edge> grooveEdges() {
+        return grooveEdges;
+    }
+
+    private List<Edge> findGrooveEdges() {
         List<Edge> edges = new ArrayList<>();
         double range = rotorHigh - rotorLow;
         if (range <= GROOVE_SHARE * leastThickness) {

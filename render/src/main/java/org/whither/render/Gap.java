@@ -20,10 +20,10 @@ import org.whither.trace.PathPoint;
  */
 public final class Gap {
     /** Height of the eye above the plane of the faces (rad). */
-    private static final double ELEVATION = Math.toRadians(31);
+    private static final double ELEVATION = Math.toRadians(33);
 
     /** How far the eye is turned from the middle of the part shown, towards −θ (rad). */
-    private static final double ASIDE = Math.toRadians(24);
+    private static final double ASIDE = Math.toRadians(20);
 
     private static final double FIELD_OF_VIEW = Math.toRadians(22);
 
@@ -93,8 +93,10 @@ public final class Gap {
     static Camera camera(GapScene gap, PictureSettings settings) {
         double unit = Ink.unit(settings);
         Rectangle window = new Rectangle(0, 0, settings.width(), settings.height());
+        // The legend below is three lines of small letters, which do not shrink as far as the picture does.
+        double below = 74 * unit + 6.9 * Math.max(Ink.LEAST_SMALL, Ink.SMALL * unit);
         Rectangle2D room = new Rectangle2D.Double(
-                70 * unit, 96 * unit, settings.width() - 140 * unit, settings.height() - (96 + 128) * unit);
+                125 * unit, 116 * unit, settings.width() - 175 * unit, settings.height() - 116 * unit - below);
         List<double[]> extent = gap.extent();
         double[] away = {
             Math.cos(ELEVATION) * Math.cos(ASIDE), -Math.cos(ELEVATION) * Math.sin(ASIDE), Math.sin(ELEVATION)
@@ -170,21 +172,15 @@ public final class Gap {
         double room = settings.width() - 2 * margin;
         double titleBase = margin + ink.ascent(ink.title);
         double factsBase = titleBase + 9 * u + ink.ascent(ink.body);
-        double captionBase = factsBase + 6 * u + ink.ascent(ink.body);
+        double captionBase = factsBase + 11 * u + ink.ascent(ink.body);
         ink.write(ink.title, ink.text, ink.fitted(ink.title, settings.title(), room), margin, titleBase, Ink.Side.LEFT);
         String facts = Words.facts(shape.flow().film());
-        ink.write(ink.fitting(ink.body, facts, room), ink.faint, facts, margin, factsBase, Ink.Side.LEFT);
+        ink.writeIn(room, ink.body, ink.faint, facts, margin, factsBase);
         String drawn = exaggerationWords();
-        ink.write(ink.fitting(ink.heading, drawn, room), ink.text, drawn, margin, captionBase, Ink.Side.LEFT);
+        ink.writeIn(room, ink.heading, ink.text, drawn, margin, captionBase);
 
         double cautionBase = settings.height() - 14 * u;
-        ink.write(
-                ink.fitting(ink.small, Words.CAUTION, room),
-                ink.faint,
-                Words.CAUTION,
-                margin,
-                cautionBase,
-                Ink.Side.LEFT);
+        ink.caution(room, margin, cautionBase);
         double barBase = cautionBase - ink.ascent(ink.small) - 12 * u - 2.1 * ink.ascent(ink.small) - 16 * u;
         if (!paths.isEmpty()) {
             double length = 0.36 * settings.width();
@@ -197,16 +193,25 @@ public final class Gap {
                     slowest < range.low(),
                     fastest > range.high(),
                     "speed of the gas " + Words.frame(settings.speedFrame()) + ", m/s");
-            double x = margin + 7 * u;
-            double y = barBase + 12 * u;
-            ink.mark(Destination.HELD.marker(x, y - 0.35 * ink.body.getSize2D(), 11 * u), 0xf4f4f2, u);
-            ink.write(ink.small, ink.text, "one marker each " + time(every), x + 12 * u, y, Ink.Side.LEFT);
+            double x = margin + 9 * u;
+            double y = barBase + 12 * u - 2.15 * ink.height(ink.small);
+            ink.write(ink.small, ink.text, gap.part(), margin, y, Ink.Side.LEFT);
+            y += 1.15 * ink.height(ink.small);
+            ink.colour(GapScene.STATOR);
+            ink.stroke(2.2 * u);
+            ink.line(x - 8 * u, y - 0.35 * ink.small.getSize2D(), x + 8 * u, y - 0.35 * ink.small.getSize2D());
+            ink.write(
+                    ink.small, ink.text, "edge of the stator face where it is cut away", x + 15 * u, y, Ink.Side.LEFT);
+            y += 1.15 * ink.height(ink.small);
+            ink.mark(Destination.HELD.marker(x, y - 0.35 * ink.small.getSize2D(), 10 * u), 0xf4f4f2, u);
+            ink.write(ink.small, ink.text, "one marker each " + time(every), x + 15 * u, y, Ink.Side.LEFT);
+            String each = "one marker each " + time(every);
             ink.write(
                     ink.small,
                     ink.faint,
-                    "tubes and markers: size not to scale",
-                    x + 12 * u,
-                    y + ink.height(ink.small),
+                    ";  tubes and markers are not drawn to size",
+                    x + 15 * u + ink.width(ink.small, each),
+                    y,
                     Ink.Side.LEFT);
         }
     }
@@ -240,36 +245,14 @@ public final class Gap {
         double rate = conditions.rotationRate();
         double mid = 0.5 * (gap.bottom + gap.height(shape.rotorLow()));
         if (rate != 0) {
-            ink.arrow(rotationArrow(gap, camera, rate, 1e3 * outer, mid), 3 * u, 0x1c2126);
+            ink.arrow(rotationArrow(gap, camera, rate, 1e3 * outer, mid), 3 * u, 0xf6f3ee);
         }
-        double frontTheta = gap.from + 0.5 * (gap.to - gap.from);
-        Point2D under = at(camera, frontTheta, outer, gap.bottom);
-        String rotor = "rotor, " + Words.speed(rate).replace("rotor stands still", "standing still");
-        ink.write(
-                ink.heading,
-                ink.text,
-                rotor,
-                under.getX(),
-                under.getY() + ink.ascent(ink.heading) + 12 * u,
-                Ink.Side.MIDDLE);
-        ink.write(
-                ink.small,
-                ink.faint,
-                "outside: " + conditions.outerSide() + " side, " + Words.bar(conditions.pressureOuter()),
-                under.getX(),
-                under.getY() + ink.ascent(ink.heading) + 12 * u + ink.height(ink.small),
-                Ink.Side.MIDDLE);
+        String rotor = rate == 0 ? "rotor stands still" : "rotor turns, " + Words.speed(rate);
+        under(ink, camera, 0.36, rotor, "seen from outside, stator above");
+        under(ink, camera, 0.7, conditions.outerSide() + " side", "outside, " + Words.bar(conditions.pressureOuter()));
 
-        double backTheta = gap.from + 0.3 * (gap.to - gap.from);
+        double backTheta = gap.from + 0.1 * (gap.to - gap.from);
         Point2D back = at(camera, backTheta, inner, gap.height(gap.statorAt(backTheta, inner)));
-        callOut(
-                ink,
-                back,
-                new Point2D.Double(back.getX() - 60 * u, back.getY() - 46 * u),
-                conditions.innerSide() + " side",
-                "inside, " + Words.bar(conditions.pressureInner()),
-                Ink.Side.RIGHT);
-
         double statorTheta = gap.cut + 0.5 * (gap.to - gap.cut);
         Point2D stator = at(camera, statorTheta, 0.5 * (inner + outer), gap.top);
         ink.write(
@@ -280,21 +263,47 @@ public final class Gap {
                 stator.getY() + 0.3 * ink.heading.getSize2D(),
                 Ink.Side.MIDDLE);
 
+        double most = Double.POSITIVE_INFINITY;
         FilmShape.Band feed = shape.feed();
         if (feed != null) {
             boolean above = shape.flow().film().supply().orElseThrow().face() == Face.STATOR;
-            double theta = gap.from + 0.52 * (gap.to - gap.from);
+            double theta = gap.from + 0.4 * (gap.to - gap.from);
             double r = 0.5 * (feed.from() + feed.to());
             Point2D p = at(camera, theta, r, gap.height(above ? gap.statorAt(theta, r) : gap.rotorAt(theta, r)));
+            Point2D rim = at(camera, theta, inner, gap.height(gap.statorAt(theta, inner)));
+            String enters = "supply gas enters here";
+            most = p.getX() - 24 * u - ink.width(ink.small, enters) - 16 * u;
             callOut(
                     ink,
                     p,
-                    new Point2D.Double(p.getX() - 10 * u, 118 * u + ink.height(ink.small)),
+                    new Point2D.Double(p.getX() - 24 * u, rim.getY() - 40 * u),
                     "feed in the " + (above ? "stator" : "rotor"),
-                    "supply gas enters the film here",
-                    Ink.Side.LEFT);
+                    enters,
+                    Ink.Side.RIGHT);
         }
+        String inside = "inside, " + Words.bar(conditions.pressureInner());
+        double x = Math.min(back.getX() - 30 * u, most);
+        callOut(
+                ink,
+                back,
+                new Point2D.Double(x, back.getY() - 40 * u),
+                conditions.innerSide() + " side",
+                inside,
+                Ink.Side.RIGHT);
         scales(ink, camera);
+    }
+
+    /** Writes two lines under the front edge of the drawn block, clear of it, from a share of its length on. */
+    private void under(Ink ink, Camera camera, double share, String heading, String detail) {
+        double x = at(camera, gap.from + share * (gap.to - gap.from), grid.outerRadius(), gap.bottom)
+                .getX();
+        double room = settings.width() - 20 * ink.unit - x;
+        heading = ink.fitted(ink.heading, heading, room);
+        detail = ink.fitted(ink.small, detail, room);
+        double wide = Math.max(ink.width(ink.heading, heading), ink.width(ink.small, detail));
+        double y = below(camera, x, x + wide) + 10 * ink.unit + ink.ascent(ink.heading);
+        ink.write(ink.heading, ink.text, heading, x, y, Ink.Side.LEFT);
+        ink.write(ink.small, ink.faint, detail, x, y + ink.height(ink.small), Ink.Side.LEFT);
     }
 
     private static void callOut(Ink ink, Point2D place, Point2D words, String heading, String detail, Ink.Side side) {
@@ -306,9 +315,23 @@ public final class Gap {
         leader.lineTo(words.getX(), words.getY() + gapBelow);
         ink.pen.draw(leader);
         ink.mark(Destination.HELD.marker(place.getX(), place.getY(), 5 * ink.unit), ink.text, ink.unit);
+        double room = words.getX() - 20 * ink.unit;
+        heading = ink.fitted(ink.heading, heading, room);
         double x = words.getX() + (side == Ink.Side.LEFT ? -4 : side == Ink.Side.RIGHT ? 4 : 0) * ink.unit;
         ink.write(ink.heading, ink.text, heading, x, words.getY(), side);
         ink.write(ink.small, ink.faint, detail, x, words.getY() + ink.height(ink.small), side);
+    }
+
+    /** The lowest place of the drawn block between two picture columns (pixels from the top). */
+    private double below(Camera camera, double left, double right) {
+        double lowest = 0;
+        for (int n = 0; n <= 200; n++) {
+            Point2D p = at(camera, gap.from + (gap.to - gap.from) * n / 200, grid.outerRadius(), gap.bottom);
+            if (p.getX() >= left && p.getX() <= right) {
+                lowest = Math.max(lowest, p.getY());
+            }
+        }
+        return lowest;
     }
 
     private Point2D at(Camera camera, double theta, double r, double drawnZ) {
@@ -355,14 +378,11 @@ public final class Gap {
         ink.colour(ink.text);
         ink.stroke(Math.max(1.2, 1.6 * u));
         ink.pen.draw(bar);
-        Point2D m = at(camera, 0.5 * (first + last), outer, gap.bottom);
+        String along = Ticks.plain(length) + " mm along the outer diameter";
+        Point2D start = at(camera, first, outer, gap.bottom);
+        double base0 = below(camera, start.getX(), start.getX() + ink.width(ink.small, along));
         ink.write(
-                ink.small,
-                ink.text,
-                Ticks.plain(length) + " mm along the outer diameter",
-                m.getX(),
-                m.getY() + drop + 8 * u + ink.ascent(ink.small),
-                Ink.Side.MIDDLE);
+                ink.small, ink.text, along, start.getX(), base0 + drop + 8 * u + ink.ascent(ink.small), Ink.Side.LEFT);
 
         // Across the film, beside the front left corner.
         double thick = gap.statorAt(gap.from, outer) - gap.rotorAt(gap.from, outer);
@@ -387,7 +407,7 @@ public final class Gap {
         ink.write(
                 ink.small,
                 ink.faint,
-                "of film",
+                "across the film",
                 x - 8 * u,
                 0.5 * (a.getY() + b.getY()) + ink.height(ink.small),
                 Ink.Side.RIGHT);

@@ -19,11 +19,11 @@ import org.whither.trace.PathPoint;
  */
 final class GapScene {
     private static final int ROTOR = 0xb3a594;
-    private static final int ROTOR_CUT = 0x978a7b;
-    private static final int STATOR = 0x7f8b98;
+    private static final int ROTOR_CUT = 0x877b6e;
+    static final int STATOR = 0x7f8b98;
     private static final int STATOR_CUT = 0x929eab;
-    /** The feed: a colour that no scale and no destination has. */
-    static final int FEED = 0xd9583b;
+    /** The feed: the reddish purple of Okabe and Ito, which no scale and no destination has. */
+    static final int FEED = 0xcc79a7;
 
     private final FilmShape shape;
     private final FilmFlow flow;
@@ -56,13 +56,11 @@ final class GapScene {
         double span = grid.outerRadius() - grid.innerRadius();
         double mean = 0.5 * (grid.outerRadius() + grid.innerRadius());
         double pitch = grid.pitch();
-        // Whole sectors, about twice as long as the face is wide; of a longer sector, as much.
-        double wish = 2.1 * span / mean;
+        // Whole sectors, about three times as long as the face is wide; of a longer sector, as much.
+        double wish = 2.9 * span / mean;
         double whole = Math.max(1, Math.rint(wish / pitch)) * pitch;
         double width = Math.min(whole > 1.5 * wish ? wish : whole, Math.toRadians(100));
-        int row = grid.row(grid.outerRadius());
-        double centre = 0.5
-                * (grid.lineTheta(0, row, grid.outerRadius()) + grid.lineTheta(grid.ni() - 1, row, grid.outerRadius()));
+        double centre = landMiddle() + 0.5 * width;
         this.middle = centre;
         this.from = centre - 0.5 * width;
         this.to = centre + 0.5 * width;
@@ -83,8 +81,51 @@ final class GapScene {
         this.top = height(high) + 0.24 * face;
     }
 
+    /** The middle of the longest land between grooves, where a cut shows lands at both ends (rad). */
+    private double landMiddle() {
+        int row = grid.cellsRadial() - 1;
+        List<FilmShape.Band> bands = shape.grooveBands();
+        if (!bands.isEmpty()) {
+            FilmShape.Band last = bands.get(bands.size() - 1);
+            row = Math.max(0, grid.row(last.to() - 1e-9 * last.to()));
+        }
+        double r = 0.5 * (grid.radius(row) + grid.radius(row + 1));
+        double half = 0.5 * (shape.rotorLow() + shape.rotorHigh());
+        int columns = grid.cellsTheta();
+        double best = -1;
+        double result = grid.lineTheta(0, row, r);
+        for (int start = 0; start < columns; start++) {
+            int n = 0;
+            double length = 0;
+            while (n < columns) {
+                int i = (start + n) % columns;
+                double theta = 0.5 * (grid.lineTheta(i, row, r) + grid.lineTheta(i + 1, row, r));
+                if (flow.rotorZ(i, row, theta, r) < half) {
+                    break;
+                }
+                length += grid.lineTheta(i + 1, row, r) - grid.lineTheta(i, row, r);
+                n++;
+            }
+            if (length > best + 1e-9 && n < columns) {
+                best = length;
+                result = grid.lineTheta(start, row, r) + 0.5 * length;
+            }
+        }
+        return result;
+    }
+
     private double statorZ(int i, int j, double theta, double r) {
         return flow.rotorZ(i, j, theta, r) + flow.thickness(i, j, theta, r);
+    }
+
+    /** Which part of the ring is shown, in words. */
+    String part() {
+        double sectors = (to - from) / grid.pitch();
+        String back = "; a path that leaves at one end comes back at the other";
+        if (Math.abs(sectors - Math.rint(sectors)) < 1e-6) {
+            return Ticks.number(sectors, 0) + " of " + grid.sectors() + " equal sectors" + back;
+        }
+        return Ticks.number(Math.toDegrees(to - from), 0) + "° of the ring; paths are shown only there";
     }
 
     /** The drawn z of a height (mm). */
@@ -126,9 +167,9 @@ final class GapScene {
         add(items, cuts(true, cut, to, above), Scene.Material.solid(STATOR_CUT, 0.05));
         add(items, ring(true, cut, to, above, true), Scene.Material.solid(FEED, 0.1));
         add(items, ring(false, from, to, !above, true), Scene.Material.solid(FEED, 0.1));
-        add(items, rim(), Scene.Material.solid(STATOR, 0.1));
+        add(items, rim(), Scene.Material.plain(STATOR, 1));
         if (above) {
-            add(items, feedBand(), Scene.Material.plain(FEED, 0.5));
+            add(items, feedBand(), Scene.Material.plain(FEED, 0.6));
         }
         return items;
     }
@@ -170,7 +211,7 @@ final class GapScene {
     }
 
     /**
-     * A face with its walls, and the far sides at the two diameters.
+     * A face with its walls.
      *
      * @param stator which ring
      * @param low first angle (rad)
@@ -190,12 +231,6 @@ final class GapScene {
             }
             wall(mesh, stator, i, j, turn, low, high, recess, feedOnly);
             step(mesh, stator, i, j, turn, low, high, recess, feedOnly);
-            if (!feedOnly && j == 0) {
-                side(mesh, stator, i, 0, 0, turn, low, high, recess);
-            }
-            if (!feedOnly && j + 1 == grid.cellsRadial()) {
-                side(mesh, stator, i, j, j + 1, turn, low, high, recess);
-            }
         });
         return mesh;
     }
@@ -471,9 +506,17 @@ final class GapScene {
         }
     }
 
-    /** The plane faces where a ring is cut at two angles. */
+    /** The sides of a ring at the two diameters, its far face, and the plane faces where it is cut at two angles. */
     private MeshBuilder cuts(boolean stator, double low, double high, boolean recess) {
         MeshBuilder mesh = new MeshBuilder();
+        cells(low, high, (i, j, turn) -> {
+            if (j == 0) {
+                side(mesh, stator, i, 0, 0, turn, low, high, recess);
+            }
+            if (j + 1 == grid.cellsRadial()) {
+                side(mesh, stator, i, j, j + 1, turn, low, high, recess);
+            }
+        });
         for (int end = 0; end < 2; end++) {
             double theta = end == 0 ? low : high;
             double side = end == 0 ? -1 : 1;
@@ -592,6 +635,27 @@ final class GapScene {
     private static final class Piece {
         final List<double[]> points = new ArrayList<>();
         final List<Double> values = new ArrayList<>();
+
+        /** Length of the straight line from its first to its last point (mm). */
+        double length() {
+            return points.isEmpty() ? 0 : distance(points.get(0), points.get(points.size() - 1));
+        }
+
+        private static double distance(double[] a, double[] b) {
+            return Math.hypot(Math.hypot(b[0] - a[0], b[1] - a[1]), b[2] - a[2]);
+        }
+
+        /** Adds a point, unless it is nearer to the one before than a least distance. */
+        void add(double[] point, double value, double least) {
+            if (!points.isEmpty()) {
+                double distance = distance(points.get(points.size() - 1), point);
+                if (distance < least || distance == 0) {
+                    return;
+                }
+            }
+            points.add(point);
+            values.add(value);
+        }
     }
 
     /**
@@ -607,7 +671,8 @@ final class GapScene {
         MeshBuilder markers = new MeshBuilder();
         double radius = tubeRadius();
         for (Path path : paths) {
-            for (Piece piece : fold(path, range)) {
+            List<Piece> pieces = fold(path, range);
+            for (Piece piece : pieces) {
                 double[] line = new double[3 * piece.points.size()];
                 double[] values = new double[piece.points.size()];
                 for (int n = 0; n < values.length; n++) {
@@ -617,7 +682,10 @@ final class GapScene {
                 Tubes.tube(tubes, line, values, radius);
             }
             markers(path, every, markers, 2.3 * radius);
-            head(path, range, tubes, radius);
+            // A cone longer than the piece it ends would hang in the air.
+            if (!pieces.isEmpty() && pieces.get(pieces.size() - 1).length() > 4 * radius) {
+                head(path, range, tubes, radius);
+            }
         }
         List<Scene.Item> items = new ArrayList<>();
         add(items, tubes, Scene.Material.scaled(ColourScale.SPEED, true));
@@ -658,8 +726,10 @@ final class GapScene {
                     piece = new Piece();
                     pieces.add(piece);
                 }
-                piece.points.add(place(theta, mix(a.radius(), b.radius(), f), mix(a.z(), b.z(), f)));
-                piece.values.add((mix(a.speed(), b.speed(), f) - range.low()) / (range.high() - range.low()));
+                double[] point = place(theta, mix(a.radius(), b.radius(), f), mix(a.z(), b.z(), f));
+                double value = (mix(a.speed(), b.speed(), f) - range.low()) / (range.high() - range.low());
+                boolean end = n + 1 == points.size() && m == parts;
+                piece.add(point, value, end ? 0 : 0.8 * tubeRadius());
                 last = theta;
             }
         }
@@ -719,8 +789,8 @@ final class GapScene {
                 mesh,
                 place(theta, b.radius(), b.z()),
                 direction,
-                7 * radius,
-                2.6 * radius,
+                5.6 * radius,
+                2.3 * radius,
                 (b.speed() - range.low()) / (range.high() - range.low()));
     }
 

@@ -1,6 +1,7 @@
 package org.whither.render;
 
 import com.jogamp.common.jvm.JNILibLoaderBase;
+import com.jogamp.common.os.NativeLibrary;
 import com.jogamp.common.os.Platform;
 import com.jogamp.common.util.cache.TempJarCache;
 import com.jogamp.nativewindow.AbstractGraphicsDevice;
@@ -27,6 +28,12 @@ import java.lang.reflect.Method;
 final class HeadlessGL extends JNILibLoaderBase {
     /** EGL_PLATFORM_SURFACELESS_MESA, of the EGL extension EGL_MESA_platform_surfaceless. */
     private static final int SURFACELESS = 0x31DD;
+
+    /**
+     * System libraries that JOGL needs on Linux. Looked for first: where one is missing, JOGL fails half-way and prints a
+     * stack trace when the process ends.
+     */
+    private static final String[] NEEDED = {"libEGL.so.1", "libGL.so.1", "libGLESv2.so.2", "libXrender.so.1"};
 
     private static GLDrawableFactory factory;
     private static AbstractGraphicsDevice device;
@@ -61,7 +68,14 @@ final class HeadlessGL extends JNILibLoaderBase {
         // Otherwise AWT starts a display connection of its own, which is fatal where DISPLAY is stale.
         System.setProperty("java.awt.headless", "true");
         Platform.initSingleton();
-        ClassLoader loader = GLProfile.class.getClassLoader();
+        ClassLoader loader = HeadlessGL.class.getClassLoader();
+        if (Platform.getOSType() == Platform.OSType.LINUX) {
+            for (String library : NEEDED) {
+                if (NativeLibrary.open(library, true, true, loader, true) == null) {
+                    throw new GLException(library + " cannot be loaded");
+                }
+            }
+        }
         set(GLRendererQuirks.class, "_bitmaskOverrideForce", 1 << GLRendererQuirks.NoSurfacelessCtx);
         set(GLRendererQuirks.class, "_bitmaskOverrideIgnore", 1 << GLRendererQuirks.GLES3ViaEGLES2Config);
         if (TempJarCache.isInitialized(true)) {

@@ -29,6 +29,11 @@ final class Ink implements AutoCloseable {
         RIGHT
     }
 
+    /** Size of small letters in a picture of 1280 × 720, and their least size in any (pixels). */
+    static final double SMALL = 11.5;
+
+    static final double LEAST_SMALL = 9.2;
+
     private static String family;
 
     final Graphics2D pen;
@@ -62,7 +67,7 @@ final class Ink implements AutoCloseable {
             title = font(Font.BOLD, 21, 13);
             heading = font(Font.BOLD, 13, 9.6);
             body = font(Font.PLAIN, 13, 9.6);
-            small = font(Font.PLAIN, 11.5, 9.2);
+            small = font(Font.PLAIN, SMALL, LEAST_SMALL);
             graphics.setFont(body);
             graphics.getFontMetrics().stringWidth("0");
         } catch (RuntimeException | LinkageError | InternalError problem) {
@@ -160,6 +165,18 @@ final class Ink implements AutoCloseable {
         return ratio >= 1 ? font : font.deriveFont((float) Math.max(8.5, font.getSize2D() * ratio));
     }
 
+    /** Writes a line of text in a room: in smaller letters where it must, and cut off with an ellipsis where it must. */
+    void writeIn(double room, Font font, int colour, String words, double x, double y) {
+        Font fits = fitting(font, words, room);
+        write(fits, colour, fitted(fits, words, room), x, y, Side.LEFT);
+    }
+
+    /** The caution at the foot of a picture, short where the long one has no room. */
+    void caution(double room, double x, double y) {
+        boolean fits = width(fitting(small, Words.CAUTION, room), Words.CAUTION) <= room;
+        writeIn(room, small, faint, fits ? Words.CAUTION : Words.SHORT_CAUTION, x, y);
+    }
+
     void stroke(double width) {
         pen.setStroke(new BasicStroke((float) width, BasicStroke.CAP_ROUND, BasicStroke.JOIN_ROUND));
     }
@@ -239,7 +256,8 @@ final class Ink implements AutoCloseable {
             line(x, y0 + h, x, y0 + h + 4 * unit);
             write(small, text, Ticks.number(tick, decimals), x, y0 + h + 5.5 * unit + ascent(small) + 1, Side.MIDDLE);
         }
-        write(heading, text, fitted(heading, caption, w * 1.15), x0, y0 - 6 * unit, Side.LEFT);
+        Font captions = fitting(heading, caption, w);
+        write(captions, text, fitted(captions, caption, w), x0, y0 - 6 * unit, Side.LEFT);
     }
 
     private void end(int colour, double x, double y, double h, int way) {
@@ -266,7 +284,7 @@ final class Ink implements AutoCloseable {
     /** A curved or straight shaft that ends in a filled head. */
     void arrow(Point2D[] shaft, double width, int colour) {
         Point2D tip = shaft[shaft.length - 1];
-        double head = 4.6 * width;
+        double head = 5.6 * width;
         int back = shaft.length - 1;
         while (back > 0 && tip.distance(shaft[back]) < head) {
             back--;

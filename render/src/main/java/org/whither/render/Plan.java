@@ -64,15 +64,15 @@ public final class Plan {
     }
 
     /** The layout that a plan would have, for tests and for overlays. */
-    static PlanLayout layout(FilmFlow flow, PictureSettings settings, boolean withFeed) {
+    static PlanLayout layout(FilmShape shape, PictureSettings settings, boolean withFeed, boolean withLegend) {
         BufferedImage page = new BufferedImage(8, 8, BufferedImage.TYPE_INT_RGB);
         try (Ink ink = new Ink(page, settings)) {
-            return new PlanLayout(new FilmShape(flow), settings, ink, withFeed);
+            return new PlanLayout(shape, settings, ink, withFeed, withLegend);
         }
     }
 
     private BufferedImage draw() {
-        PlanLayout layout = layout(shape.flow(), settings, withFeed());
+        PlanLayout layout = layout(shape, settings, withFeed(), withFeed() || !paths.isEmpty());
         BufferedImage image;
         try (Canvas canvas = new Canvas(settings.width(), settings.height())) {
             Scene scene = scene();
@@ -86,6 +86,9 @@ public final class Plan {
             sector(ink, layout);
             if (layout.feedWindow != null) {
                 feed(ink, layout);
+            }
+            if (withFeed() || !paths.isEmpty()) {
+                legend(ink, layout);
             }
         }
         return image;
@@ -116,14 +119,8 @@ public final class Plan {
                 layout.titleBase,
                 Ink.Side.LEFT);
         String facts = Words.facts(shape.flow().film());
-        ink.write(ink.fitting(ink.body, facts, room), ink.faint, facts, layout.margin, layout.factsBase, Ink.Side.LEFT);
-        ink.write(
-                ink.fitting(ink.small, Words.CAUTION, room),
-                ink.faint,
-                Words.CAUTION,
-                layout.margin,
-                layout.cautionBase,
-                Ink.Side.LEFT);
+        ink.writeIn(room, ink.body, ink.faint, facts, layout.margin, layout.factsBase);
+        ink.caution(room, layout.margin, layout.cautionBase);
         ink.colourBar(
                 layout.pressureBar,
                 ColourScale.PRESSURE,
@@ -138,7 +135,7 @@ public final class Plan {
         Rectangle window = layout.ringWindow;
         Shape before = ink.pen.getClip();
         ink.pen.clip(window);
-        outlines(ink, layout.ring, 0.8 * ink.unit, 0, grid.sectors() - 1, 0.62);
+        outlines(ink, layout.ring, Math.max(0.75, 0.95 * ink.unit), 0, grid.sectors() - 1, 0.75);
         footprints(ink, layout.ring, 1.5 * ink.unit);
         ink.pen.setClip(before);
 
@@ -146,7 +143,9 @@ public final class Plan {
         double line = ink.height(ink.body);
         double x = window.x;
         double y = window.y + ink.ascent(ink.body);
-        ink.write(ink.heading, ink.text, conditions.outerSide() + " side", x, y, Ink.Side.LEFT);
+        // The corner of the window that the ring leaves free.
+        String outerSide = ink.fitted(ink.heading, conditions.outerSide() + " side", 0.37 * window.width);
+        ink.write(ink.heading, ink.text, outerSide, x, y, Ink.Side.LEFT);
         ink.write(
                 ink.small, ink.faint, "outside, " + Words.bar(conditions.pressureOuter()), x, y + line, Ink.Side.LEFT);
 
@@ -154,7 +153,7 @@ public final class Plan {
         double cy = window.getCenterY();
         double hole = 1e3 * grid.innerRadius() * layout.ringScale;
         double most = 1.5 * hole;
-        String inner = conditions.innerSide() + " side";
+        String inner = ink.fitted(ink.heading, conditions.innerSide() + " side", most);
         String inside = "inside, " + Words.bar(conditions.pressureInner());
         ink.write(ink.heading, ink.text, inner, cx, cy + 0.42 * hole, Ink.Side.MIDDLE);
         ink.write(ink.small, ink.faint, inside, cx, cy + 0.42 * hole + line, Ink.Side.MIDDLE);
@@ -162,7 +161,7 @@ public final class Plan {
         double rate = conditions.rotationRate();
         double words = cy - 0.18 * hole;
         if (rate != 0) {
-            ink.arrow(rotationArrow(layout.ring, rate, 0.74e3 * grid.innerRadius()), 3 * ink.unit, ink.text);
+            ink.arrow(rotationArrow(layout.ring, rate, 0.74e3 * grid.innerRadius()), 2.4 * ink.unit, ink.text);
             ink.write(ink.heading, ink.text, "rotor turns, " + Words.speed(rate), cx, words, Ink.Side.MIDDLE);
         } else {
             ink.write(ink.heading, ink.text, "rotor stands still", cx, words, Ink.Side.MIDDLE);
@@ -262,10 +261,15 @@ public final class Plan {
 
     private static void add(Path2D.Double path, Camera camera, List<FilmShape.Edge> edges, double turn) {
         for (FilmShape.Edge edge : edges) {
+            double span = edge.theta1() - edge.theta0();
+            int parts = Math.max(1, (int) Math.ceil(Math.abs(span) / Math.toRadians(1)));
             Point2D a = at(camera, edge.theta0() + turn, edge.r0());
-            Point2D b = at(camera, edge.theta1() + turn, edge.r1());
             path.moveTo(a.getX(), a.getY());
-            path.lineTo(b.getX(), b.getY());
+            for (int n = 1; n <= parts; n++) {
+                double f = (double) n / parts;
+                Point2D b = at(camera, edge.theta0() + f * span + turn, edge.r0() + f * (edge.r1() - edge.r0()));
+                path.lineTo(b.getX(), b.getY());
+            }
         }
     }
 
@@ -344,16 +348,27 @@ public final class Plan {
         ink.pen.clip(window);
         double half = Math.asin(Math.min(1, 0.75 * window.width / layout.sectorScale / (1e3 * grid.innerRadius())));
         int reach = Math.min(grid.sectors() / 2 + 1, 1 + spiralReach() + (int) Math.ceil(half / grid.pitch()));
-        List<Rectangle2D> taken = new ArrayList<>();
-        isobars(ink, layout, reach, taken);
+        List<Runnable> labels = isobars(ink, layout, reach);
         outlines(ink, layout.sector, 1.25 * ink.unit, -reach, reach, 0.85);
-        // In the ring, paths may go round more than once: each sector shows those of all others in its place.
         footprints(ink, layout.sector, 2.2 * ink.unit);
+        labels.forEach(Runnable::run);
         ink.pen.setClip(before);
         ink.colour(ink.line);
         ink.stroke(Math.max(1, ink.unit));
         ink.pen.draw(window);
         names(ink, layout);
+        double rate = shape.flow().film().conditions().rotationRate();
+        if (rate != 0) {
+            // At the top of the ring +θ runs to the left, seen from the stator.
+            boolean left = rate > 0 == (settings.seenFrom() == ViewingSide.STATOR);
+            ink.write(
+                    ink.small,
+                    ink.faint,
+                    left ? "← rotor turns" : "rotor turns →",
+                    window.x + 8 * ink.unit,
+                    window.y + 6 * ink.unit + ink.ascent(ink.small),
+                    Ink.Side.LEFT);
+        }
         scaleBarOver(ink, layout);
     }
 
@@ -362,7 +377,7 @@ public final class Plan {
         scaleBar(
                 ink,
                 window.x + 10 * ink.unit,
-                window.getMaxY() + ink.height(ink.small) + 3 * ink.unit,
+                window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit,
                 layout.sectorScale,
                 0.16 * window.width);
     }
@@ -372,41 +387,51 @@ public final class Plan {
         return (int) Math.ceil(Math.abs(grid.theta(0, grid.nj() - 1) - grid.theta(0, 0)) / grid.pitch());
     }
 
-    private void isobars(Ink ink, PlanLayout layout, int reach, List<Rectangle2D> taken) {
+    /** Draws the isobars and returns what writes their values, to be run when all other lines are drawn. */
+    private List<Runnable> isobars(Ink ink, PlanLayout layout, int reach) {
+        List<Rectangle2D> taken = new ArrayList<>();
+        List<Runnable> labels = new ArrayList<>();
         double[] one = shape.nodePressures();
         int rows = grid.nj();
-        int per = grid.cellsTheta();
+        // Long cells are divided, so that the lines follow the circles.
+        int fine = Math.max(1, (int) Math.ceil(grid.pitch() / grid.cellsTheta() / Math.toRadians(1.25)));
+        int per = grid.cellsTheta() * fine;
         int columns = (2 * reach + 1) * per + 1;
         double[] x = new double[columns * rows];
         double[] y = new double[columns * rows];
         double[] values = new double[columns * rows];
         for (int c = 0; c < columns; c++) {
-            int i = c % per;
+            int i = c % per / fine;
+            double f = (double) (c % fine) / fine;
             double turn = (c / per - reach) * grid.pitch();
             for (int j = 0; j < rows; j++) {
-                Point2D p = at(layout.sector, grid.theta(i, j) + turn, grid.radius(j));
+                double theta = grid.theta(i, j) + f * (grid.theta(i + 1, j) - grid.theta(i, j));
+                Point2D p = at(layout.sector, theta + turn, grid.radius(j));
                 x[c * rows + j] = p.getX();
                 y[c * rows + j] = p.getY();
-                values[c * rows + j] = one[i * rows + j] / 1e5;
+                double a = one[grid.node(i, j)];
+                values[c * rows + j] = (a + f * (one[grid.node(i + 1, j)] - a)) / 1e5;
             }
         }
         double step = Ticks.step((range.high() - range.low()) / 1e5, ISOBARS);
         for (double level : Ticks.between(range.low() / 1e5, range.high() / 1e5, ISOBARS)) {
             int colour = ColourScale.PRESSURE.colour((level * 1e5 - range.low()) / (range.high() - range.low()));
             boolean onDark = Colours.lightness(colour) < 58;
-            int ink1 = onDark ? 0xffffff : 0x14181c;
+            int contrast = onDark ? 0xffffff : 0x14181c;
             for (double[] line : Isobars.lines(rows, x, y, values, level)) {
                 Path2D.Double path = new Path2D.Double();
                 path.moveTo(line[0], line[1]);
                 for (int n = 2; n < line.length; n += 2) {
                     path.lineTo(line[n], line[n + 1]);
                 }
-                ink.colour(ink1, 0.8);
+                ink.colour(contrast, 0.8);
                 ink.stroke(0.9 * ink.unit);
                 ink.pen.draw(path);
-                label(ink, layout.sectorWindow, line, Ticks.number(level, Ticks.decimals(step)), ink1, colour, taken);
+                String words = Ticks.number(level, Ticks.decimals(step));
+                labels.add(() -> label(ink, layout.sectorWindow, line, words, contrast, colour, taken));
             }
         }
+        return labels;
     }
 
     /** Writes a value on a line where it is straight, inside the window and clear of other values; else not at all. */
@@ -484,7 +509,7 @@ public final class Plan {
                 layout,
                 grid.outerRadius(),
                 "outer diameter",
-                conditions.outerSide() + ", " + Words.diameter(grid.outerRadius()));
+                Words.diameter(grid.outerRadius()) + ", " + conditions.outerSide());
         for (FilmShape.Band band : shape.grooveBands()) {
             add(names, layout, 0.5 * (band.from() + band.to()), "grooves", between(band));
         }
@@ -504,7 +529,7 @@ public final class Plan {
                 layout,
                 grid.innerRadius(),
                 "inner diameter",
-                conditions.innerSide() + ", " + Words.diameter(grid.innerRadius()));
+                Words.diameter(grid.innerRadius()) + ", " + conditions.innerSide());
         names.sort((a, b) -> Double.compare(a.wantedY(), b.wantedY()));
         double pitch = ink.height(ink.body) + ink.height(ink.small) + 3 * ink.unit;
         double[] y = spread(
@@ -534,9 +559,9 @@ public final class Plan {
                     y[n] + 0.25 * ink.body.getSize2D(),
                     Ink.Side.LEFT);
             ink.write(
-                    ink.fitting(ink.small, name.detail(), room),
+                    ink.small,
                     ink.faint,
-                    name.detail(),
+                    ink.fitted(ink.small, name.detail(), room),
                     layout.namesLeft,
                     y[n] + 0.25 * ink.body.getSize2D() + ink.height(ink.small),
                     Ink.Side.LEFT);
@@ -554,7 +579,7 @@ public final class Plan {
     }
 
     private static String between(FilmShape.Band band) {
-        return "⌀ " + Ticks.number(2e3 * band.from(), 1) + " – " + Ticks.number(2e3 * band.to(), 1) + " mm";
+        return "Ø " + Ticks.number(2e3 * band.from(), 1) + " – " + Ticks.number(2e3 * band.to(), 1) + " mm";
     }
 
     /** Finds where the circle of a radius meets the right edge of the enlarged view. */
@@ -619,13 +644,7 @@ public final class Plan {
         double stretch = (window.height / feed.width()) / (window.width / along);
         String which = grid.sectors() > 1 ? "one sector" : "whole ring";
         String heading = "The feed, unrolled (" + which + "): where the gas of each point goes";
-        ink.write(
-                ink.fitting(ink.heading, heading, layout.rightEdge - window.x),
-                ink.text,
-                heading,
-                window.x,
-                window.y - 7 * ink.unit,
-                Ink.Side.LEFT);
+        ink.writeIn(layout.rightEdge - window.x, ink.heading, ink.text, heading, window.x, window.y - 7 * ink.unit);
         ink.colour(ink.dark() ? 0x1d2329 : 0xeff0ee);
         ink.pen.fill(window);
         Shape before = ink.pen.getClip();
@@ -634,13 +653,14 @@ public final class Plan {
         size = Math.max(4 * ink.unit, Math.min(11 * ink.unit, size));
         Area room = new Area(window);
         ink.pen.clip(room);
-        Set<Destination> seen = EnumSet.noneOf(Destination.class);
         for (FedPoint point : fed) {
             Destination destination = Destination.of(point.end());
-            seen.add(destination);
             Point2D p =
                     unrolled(layout, point.release().theta(), point.release().radius());
-            ink.mark(destination.marker(p.getX(), p.getY(), size), destination.colour(), 0.9 * ink.unit);
+            ink.mark(
+                    destination.marker(p.getX(), p.getY(), size),
+                    destination.colour(),
+                    Math.min(0.9 * ink.unit, 0.08 * size));
         }
         ink.pen.setClip(before);
         ink.colour(ink.line);
@@ -648,7 +668,6 @@ public final class Plan {
         ink.pen.draw(window);
 
         double x = layout.namesLeft - 14 * ink.unit;
-        double room2 = layout.rightEdge - x;
         String upper = Words.diameter(feed.to());
         String lower = Words.diameter(feed.from());
         ink.write(ink.small, ink.text, upper, x, window.y + ink.ascent(ink.small), Ink.Side.LEFT);
@@ -675,37 +694,52 @@ public final class Plan {
         double length = Ticks.step(1e3 * along * 0.2, 1);
         ink.scaleBar(
                 window.x + 10 * ink.unit,
-                window.getMaxY() + ink.height(ink.small) + 3 * ink.unit,
+                window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit,
                 length * window.width / (1e3 * along),
                 Ticks.plain(length) + " mm along");
-        legend(ink, layout, seen, room2);
     }
 
-    private void legend(Ink ink, PlanLayout layout, Set<Destination> seen, double unused) {
+    private void legend(Ink ink, PlanLayout layout) {
         var conditions = shape.flow().film().conditions();
-        for (Path path : paths) {
-            seen.add(Destination.of(path.end()));
-        }
-        double x = layout.feedWindow.x;
-        double y = layout.legendBase + ink.height(ink.body);
-        double size = 11 * ink.unit;
+        Set<Destination> seen = EnumSet.noneOf(Destination.class);
+        fed.forEach(point -> seen.add(Destination.of(point.end())));
+        paths.forEach(path -> seen.add(Destination.of(path.end())));
+        List<Destination> entries = new ArrayList<>();
+        List<String> words = new ArrayList<>();
         for (Destination destination : Destination.values()) {
-            if (destination == Destination.UNKNOWN && !seen.contains(destination)) {
-                continue;
+            if (destination != Destination.UNKNOWN || seen.contains(destination)) {
+                entries.add(destination);
+                words.add(
+                        switch (destination) {
+                            case INNER -> "to the inner diameter (" + conditions.innerSide() + ")";
+                            case OUTER -> "to the outer diameter (" + conditions.outerSide() + ")";
+                            case BACK -> "back into the feed";
+                            case HELD -> "held in the film";
+                            case UNKNOWN -> "not followed to an end";
+                        });
             }
-            String words = switch (destination) {
-                case INNER -> "to the inner diameter (" + conditions.innerSide() + ")";
-                case OUTER -> "to the outer diameter (" + conditions.outerSide() + ")";
-                case BACK -> "back into the feed";
-                case HELD -> "held in the film";
-                case UNKNOWN -> "not followed to an end";
-            };
+        }
+        double size = 11 * ink.unit;
+        double before = size + 6 * ink.unit;
+        int perRow = (entries.size() + 1) / 2;
+        double x = layout.sectorWindow.x;
+        double widest = 0;
+        for (int n = 0; n < entries.size(); n++) {
+            // Column by column, two rows.
+            if (n % 2 == 0 && n > 0) {
+                x += before + widest + 22 * ink.unit;
+                widest = 0;
+            }
+            double y = layout.legendBase + (n % 2) * 1.25 * ink.height(ink.small);
+            double room = (layout.rightEdge - layout.sectorWindow.x) / perRow * 1.4;
+            String text = ink.fitted(ink.small, words.get(n), room);
+            Destination destination = entries.get(n);
             ink.mark(
-                    destination.marker(x + size / 2, y - 0.35 * ink.body.getSize2D(), size),
+                    destination.marker(x + size / 2, y - 0.36 * ink.small.getSize2D(), size),
                     destination.colour(),
                     ink.unit);
-            ink.write(ink.small, ink.text, words, x + size + 5 * ink.unit, y, Ink.Side.LEFT);
-            x += size + 5 * ink.unit + ink.width(ink.small, words) + 16 * ink.unit;
+            ink.write(ink.small, ink.text, text, x + before, y, Ink.Side.LEFT);
+            widest = Math.max(widest, ink.width(ink.small, text));
         }
     }
 }

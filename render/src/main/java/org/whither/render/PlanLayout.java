@@ -1,6 +1,7 @@
 package org.whither.render;
 
 import java.awt.Rectangle;
+import org.whither.film.Conditions;
 
 /**
  * Where things lie in a plan: the whole ring on the left, one sector enlarged on the right, the feed unrolled below it.
@@ -34,7 +35,7 @@ final class PlanLayout {
     /** Middle angle of the enlarged sector (rad). */
     final double middle;
 
-    PlanLayout(FilmShape shape, PictureSettings settings, Ink ink, boolean withFeed) {
+    PlanLayout(FilmShape shape, PictureSettings settings, Ink ink, boolean withFeed, boolean withLegend) {
         unit = ink.unit;
         int width = settings.width();
         int height = settings.height();
@@ -59,25 +60,29 @@ final class PlanLayout {
 
         double left = margin + side + 30 * unit;
         rightEdge = width - margin;
-        double names = Math.max(
-                        ink.width(ink.body, "outer diameter"),
-                        Math.max(
-                                ink.width(ink.small, "⌀ 000.0 – 000.0 mm"),
-                                ink.width(ink.small, "process 00.00 bar(a)")))
-                + 26 * unit;
+        Conditions conditions = shape.flow().film().conditions();
+        double names = ink.width(ink.body, "dam, without grooves");
+        String diameter = ", " + Words.diameter(0.1);
+        for (String detail :
+                new String[] {"Ø 000.0 – 000.0 mm", conditions.innerSide() + diameter, conditions.outerSide() + diameter
+                }) {
+            names = Math.max(names, ink.width(ink.small, detail));
+        }
+        names = Math.min(0.2 * width, names + 24 * unit);
         double sectorWidth = rightEdge - left - names;
-        double legendRoom = withFeed ? 2 * ink.height(ink.body) + 14 * unit : 0;
-        double feedRoom = withFeed ? heading + 0.135 * height + ink.height(ink.small) + 16 * unit : 0;
-        double sectorHeight = bottom - top - heading - legendRoom - feedRoom - ink.height(ink.small) - 6 * unit;
+        double below = ink.ascent(ink.small) + 20 * unit;
+        double legendRoom = withLegend ? 2.4 * ink.height(ink.small) + 6 * unit : 0;
+        double feedRoom = withFeed ? heading + 0.135 * height + below : 0;
+        double sectorHeight = bottom - top - heading - legendRoom - feedRoom - below;
         sectorWindow = rectangle(left, top + heading, sectorWidth, sectorHeight);
         namesLeft = left + sectorWidth + 22 * unit;
         if (withFeed) {
-            double feedTop = bottom - legendRoom - ink.height(ink.small) - 0.135 * height - 6 * unit;
+            double feedTop = bottom - legendRoom - below - 0.135 * height;
             feedWindow = rectangle(left, feedTop, sectorWidth, 0.135 * height);
         } else {
             feedWindow = null;
         }
-        legendBase = bottom - ink.height(ink.body) - 4 * unit;
+        legendBase = bottom - 1.25 * ink.height(ink.small) - 2 * unit;
 
         double inner = 1e3 * shape.grid().innerRadius();
         double outer = 1e3 * shape.grid().outerRadius();

@@ -9,6 +9,9 @@ final class Words {
     static final String CAUTION = "Shows the supplied computed field, not the machine: no approval and no guarantee of"
             + " leakage. Local codes, the seal maker and licensed practice decide.";
 
+    static final String SHORT_CAUTION =
+            "Shows the supplied computed field, not the machine: no approval, no guarantee of leakage.";
+
     private Words() {}
 
     /** The operating point in one line. */
@@ -35,7 +38,7 @@ final class Words {
     }
 
     static String diameter(double radius) {
-        return "⌀ " + Ticks.number(2e3 * radius, 1) + " mm";
+        return "Ø " + Ticks.number(2e3 * radius, 1) + " mm";
     }
 
     static String frame(Frame frame) {

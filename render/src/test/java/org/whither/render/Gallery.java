@@ -4,6 +4,7 @@ import java.awt.image.BufferedImage;
 import java.io.File;
 import java.io.IOException;
 import javax.imageio.ImageIO;
+import org.whither.film.Face;
 import org.whither.film.Frame;
 
 /** Writes every kind of picture of the invented film into a folder, to be looked at. */
@@ -13,7 +14,12 @@ final class Gallery {
     public static void main(String[] arguments) throws IOException {
         long start = System.nanoTime();
         File folder = new File(arguments[0]);
-        SpiralFilm film = new SpiralFilm();
+        int finer = arguments.length > 2 ? Integer.parseInt(arguments[2]) : 1;
+        SpiralFilm film = new SpiralFilm(12, 12000 * Math.PI / 30, true, Face.STATOR, finer);
+        if (arguments.length > 1 && arguments[1].contains("others")) {
+            others(folder);
+            return;
+        }
         int[][] sizes = {{1280, 720}, {1920, 1080}, {800, 450}};
         for (int[] size : sizes) {
             for (PictureSettings.Background background : PictureSettings.Background.values()) {
@@ -35,6 +41,46 @@ final class Gallery {
                 }
             }
         }
+    }
+
+    /** Films of other kinds, seen from the other side, with other exaggerations. */
+    private static void others(File folder) throws IOException {
+        PictureSettings settings = PictureSettings.standard("Another invented face, to test the pictures");
+        SpiralFilm usual = new SpiralFilm();
+        for (double factor : new double[] {1, 150, 4000}) {
+            write(
+                    Gap.draw(
+                            usual,
+                            usual.paths(Frame.STATIONARY),
+                            new GapSettings(settings.speedsIn(Frame.STATIONARY), factor)),
+                    new File(folder, "gap-times-" + Math.round(factor) + ".png"));
+        }
+        write(
+                Plan.draw(
+                        usual,
+                        usual.fed(90, 30),
+                        usual.paths(Frame.ROTATING),
+                        settings.from(ViewingSide.ROTOR).pressures(2e5, 9e5)),
+                new File(folder, "plan-from-rotor.png"));
+        SpiralFilm named = SpiralFilm.withLongNames();
+        write(
+                Plan.draw(named, named.fed(30, 8), named.paths(Frame.ROTATING), settings),
+                new File(folder, "plan-names.png"));
+        write(
+                Gap.draw(named, named.paths(Frame.ROTATING), new GapSettings(settings, 1000)),
+                new File(folder, "gap-names.png"));
+        SpiralFilm smooth = new SpiralFilm(12, -1000, false, Face.ROTOR);
+        write(
+                Gap.draw(smooth, smooth.paths(Frame.ROTATING), new GapSettings(settings, 1000)),
+                new File(folder, "gap-smooth.png"));
+        write(
+                Plan.draw(smooth, smooth.fed(30, 8), smooth.paths(Frame.ROTATING), settings),
+                new File(folder, "plan-smooth.png"));
+        SpiralFilm whole = new SpiralFilm(1, 0, true, Face.STATOR);
+        write(
+                Gap.draw(whole, whole.paths(Frame.ROTATING), new GapSettings(settings, 1000)),
+                new File(folder, "gap-whole.png"));
+        write(Plan.draw(whole, java.util.List.of(), java.util.List.of(), settings), new File(folder, "plan-whole.png"));
     }
 
     private static void say(String what, long start) {

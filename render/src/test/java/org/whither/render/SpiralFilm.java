@@ -39,7 +39,7 @@ final class SpiralFilm implements FilmFlow {
     static final double FEED_TO = 0.0600;
 
     private final FilmGrid grid;
-    private final Film film;
+    private Film film;
     private final boolean stepped;
     private final double groovedShare = 0.5;
 
@@ -48,9 +48,39 @@ final class SpiralFilm implements FilmFlow {
     }
 
     SpiralFilm(int sectors, double rotationRate, boolean stepped, Face feedFace) {
+        this(sectors, rotationRate, stepped, feedFace, 1);
+    }
+
+    /** With names as long as somebody may give them. */
+    static SpiralFilm withLongNames() {
+        SpiralFilm film = new SpiralFilm();
+        Film f = film.film;
+        Conditions c = f.conditions();
+        film.film = new Film(
+                f.heading(),
+                new Conditions(
+                        c.rotationRate(),
+                        c.pressureInner(),
+                        c.pressureOuter(),
+                        c.pressureSupply(),
+                        c.temperature(),
+                        "vent to the separation chamber and the bearing housing",
+                        "process gas, a wet mixture of light hydrocarbons and hydrogen"),
+                new Gas("nitrogen of industrial purity with traces of everything else", 0.0280134, 1.78e-5, 1),
+                f.grid(),
+                f.faces(),
+                f.velocityFrame(),
+                f.steadyIn(),
+                f.field(),
+                f.supply());
+        return film;
+    }
+
+    /** As above, on a grid that is so many times finer both ways. */
+    SpiralFilm(int sectors, double rotationRate, boolean stepped, Face feedFace, int finer) {
         this.stepped = stepped;
-        double[] radius = radii();
-        int ni = 25;
+        double[] radius = radii(finer);
+        int ni = 24 * finer + 1;
         int nj = radius.length;
         double pitch = 2 * Math.PI / sectors;
         double[] theta = new double[ni * nj];
@@ -94,14 +124,14 @@ final class SpiralFilm implements FilmFlow {
                 Optional.of(supply));
     }
 
-    private static double[] radii() {
+    private static double[] radii(int finer) {
         List<Double> radii = new ArrayList<>();
         double[] ends = {INNER, FEED_FROM, FEED_TO, TIP, OUTER};
         int[] parts = {20, 4, 5, 18};
         radii.add(INNER);
         for (int n = 0; n < parts.length; n++) {
-            for (int m = 1; m <= parts[n]; m++) {
-                radii.add(ends[n] + (ends[n + 1] - ends[n]) * m / parts[n]);
+            for (int m = 1; m <= parts[n] * finer; m++) {
+                radii.add(ends[n] + (ends[n + 1] - ends[n]) * m / (parts[n] * finer));
             }
         }
         return radii.stream().mapToDouble(Double::doubleValue).toArray();

@@ -1,0 +1,237 @@
+package org.whither.render;
+
+import static org.junit.jupiter.api.Assertions.assertArrayEquals;
+import static org.junit.jupiter.api.Assertions.assertEquals;
+import static org.junit.jupiter.api.Assertions.assertThrows;
+import static org.junit.jupiter.api.Assertions.assertTrue;
+
+import java.awt.geom.Point2D;
+import java.awt.image.BufferedImage;
+import java.util.ArrayList;
+import java.util.List;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
+import org.whither.film.Frame;
+import org.whither.trace.Path;
+import org.whither.trace.PathPoint;
+import org.whither.trace.Release;
+
+class GapTest {
+    private static final SpiralFilm FILM = new SpiralFilm();
+    private static final PictureSettings SETTINGS = PictureSettings.standard("Invented face");
+
+    @ParameterizedTest
+    @ValueSource(doubles = {500, 1000, 2500})
+    void grooveDepth_inThePicture_isTheExaggeratedOne(double exaggeration) {
+        GapScene gap = new GapScene(new FilmShape(FILM), exaggeration);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        BufferedImage image = Gap.draw(FILM, List.of(), new GapSettings(SETTINGS, exaggeration));
+        // Two places on the front rim: the part shown begins in the middle of a land, whose groove lies half a pitch
+        // on.
+        double pitch = FILM.film().grid().pitch();
+        double land = gap.from + 0.1 * pitch;
+        double groove = gap.from + 0.42 * pitch;
+        double r = SpiralFilm.OUTER;
+        double landTop = edge(image, place(camera, gap, land, r, SpiralFilm.DATUM));
+        double floor = edge(image, place(camera, gap, groove, r, SpiralFilm.DATUM - SpiralFilm.DEPTH));
+        Point2D landThere = place(camera, gap, groove, r, SpiralFilm.DATUM);
+        double drawn = floor - landThere.getY();
+        Point2D up = place(camera, gap, groove, r, SpiralFilm.DATUM - SpiralFilm.DEPTH + 1e-6);
+        Point2D foot = place(camera, gap, groove, r, SpiralFilm.DATUM - SpiralFilm.DEPTH);
+        double perMicrometre = foot.getY() - up.getY();
+        assertEquals(5, drawn / perMicrometre, 5 * 0.06, "groove of 5 µm, measured in the picture");
+        assertEquals(place(camera, gap, land, r, SpiralFilm.DATUM).getY(), landTop, 1.6);
+        // And the scale itself: 1 µm is drawn as exaggeration times 1 µm.
+        assertEquals(1e-3 * exaggeration, gap.height(SpiralFilm.DATUM + 1e-6), 1e-9);
+    }
+
+    private static Point2D place(Camera camera, GapScene gap, double theta, double r, double z) {
+        double[] p = gap.place(theta, r, z);
+        return camera.project(p[0], p[1], p[2]);
+    }
+
+    /** The row near a point, in its column, at which the picture changes most: the rim between a face and its side. */
+    private static double edge(BufferedImage image, Point2D near) {
+        int x = (int) near.getX();
+        double best = -1;
+        int row = 0;
+        for (int y = (int) near.getY() - 9; y <= near.getY() + 9; y++) {
+            double change = PlanTest.distance(PlanTest.rgb(image, x, y - 2), PlanTest.rgb(image, x, y + 1));
+            if (change > best) {
+                best = change;
+                row = y;
+            }
+        }
+        assertTrue(best > 12, "a rim near row " + near.getY() + "; largest change " + best);
+        return row;
+    }
+
+    @Test
+    void walls_areUprightAndAsHighAsTheStep() {
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        Mesh rotor = gap.rings().get(0).mesh();
+        float[] p = rotor.positions();
+        float[] n = rotor.normals();
+        int walls = 0;
+        int[] t = rotor.triangles();
+        for (int k = 0; k < t.length; k += 3) {
+            int a = t[k];
+            double r = Math.hypot(p[3 * a], p[3 * a + 1]);
+            boolean upright = n[3 * a + 2] == 0;
+            boolean inside = r > 1e3 * SpiralFilm.INNER + 0.01;
+            for (int c = 0; c < 3; c++) {
+                inside &= Math.hypot(p[3 * t[k + c]], p[3 * t[k + c] + 1]) < 1e3 * SpiralFilm.OUTER - 0.01;
+            }
+            if (upright && inside) {
+                double low = Math.min(p[3 * a + 2], Math.min(p[3 * t[k + 1] + 2], p[3 * t[k + 2] + 2]));
+                double high = Math.max(p[3 * a + 2], Math.max(p[3 * t[k + 1] + 2], p[3 * t[k + 2] + 2]));
+                assertEquals(5.0, high - low, 1e-4, "5 µm drawn 1000 times too large is 5 mm");
+                walls++;
+            }
+        }
+        assertTrue(walls > 60, walls + " triangles of walls");
+    }
+
+    @Test
+    void directions_areCarriedAsPointsAre() {
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        double theta = gap.from + 0.3;
+        double r = 0.06;
+        double z = SpiralFilm.DATUM + 1e-6;
+        double[] v = {3, -20, 0.002};
+        double dt = 1e-8;
+        double[] a = gap.place(theta, r, z);
+        double[] b = gap.place(theta + v[1] * dt / r, r + v[0] * dt, z + v[2] * dt);
+        double[] d = {b[0] - a[0], b[1] - a[1], b[2] - a[2]};
+        double length = Math.sqrt(d[0] * d[0] + d[1] * d[1] + d[2] * d[2]);
+        double[] drawn = gap.drawnDirection(theta, v[0], v[1], v[2]);
+        assertArrayEquals(new double[] {d[0] / length, d[1] / length, d[2] / length}, drawn, 1e-4);
+    }
+
+    /** A path at constant radius over the dam, and its speed. */
+    private static Path arc(double from, double to, double r, double sigma, double speed) {
+        List<PathPoint> points = new ArrayList<>();
+        double z = SpiralFilm.DATUM + sigma * SpiralFilm.LAND;
+        for (int n = 0; n <= 40; n++) {
+            double theta = from + (to - from) * n / 40;
+            points.add(new PathPoint(n * 1e-5, theta, theta, r, z, sigma, speed, 5e5));
+        }
+        return new Path(
+                new Release(from, r, sigma, 1e-6),
+                points,
+                new org.whither.trace.PathEnd.StillInside(
+                        4e-4, new org.whither.trace.PathEnd.Position(to, to, r, sigma)));
+    }
+
+    @ParameterizedTest
+    @ValueSource(doubles = {8, 25, 52})
+    void speed_isReadBackFromTheTube(double speed) {
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        Path path = arc(gap.from + 0.1, gap.from + 0.5, 0.055, 0.5, speed);
+        BufferedImage image = Gap.draw(FILM, List.of(path), new GapSettings(SETTINGS.speeds(0, 60), 1000));
+        // Between two markers, which stand at every twentieth of a millisecond; light changes brightness, not hue.
+        Point2D p = place(
+                camera, gap, gap.from + 0.1 + 0.4 * 0.45 + 0.4 * 0.02, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
+        int seen = PlanTest.rgb(image, p.getX(), p.getY());
+        double best = 0;
+        double least = Double.POSITIVE_INFINITY;
+        for (int n = 0; n <= 600; n++) {
+            double difference = hueDistance(seen, ColourScale.SPEED.colour(n / 600.0));
+            if (difference < least) {
+                least = difference;
+                best = n / 10.0;
+            }
+        }
+        assertEquals(speed, best, 5, "speed read from the hue of the tube");
+    }
+
+    private static double hueDistance(int a, int b) {
+        double sum = 0;
+        double la = 0;
+        double lb = 0;
+        double[] p = new double[3];
+        double[] q = new double[3];
+        for (int c = 0; c < 3; c++) {
+            p[c] = Math.pow((a >> (8 * c) & 0xff) / 255.0, 2.2);
+            q[c] = Math.pow((b >> (8 * c) & 0xff) / 255.0, 2.2);
+            la += p[c] * p[c];
+            lb += q[c] * q[c];
+        }
+        for (int c = 0; c < 3; c++) {
+            sum += Math.pow(p[c] / Math.sqrt(la) - q[c] / Math.sqrt(lb), 2);
+        }
+        return sum;
+    }
+
+    @Test
+    void markers_standAtEqualTimes() {
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        Path path = arc(gap.from + 0.1, gap.from + 0.5, 0.055, 0.5, 10);
+        BufferedImage image = Gap.draw(FILM, List.of(path), new GapSettings(SETTINGS, 1000));
+        // The path lasts 400 µs: a marker each 50 µs.
+        for (int n = 0; n < 8; n++) {
+            Point2D on =
+                    place(camera, gap, gap.from + 0.1 + 0.4 * n / 8, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
+            assertTrue(whiteness(PlanTest.rgb(image, on.getX(), on.getY())) > 0.9, "marker " + n);
+            Point2D between = place(
+                    camera, gap, gap.from + 0.1 + 0.4 * (n + 0.5) / 8, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
+            assertTrue(whiteness(PlanTest.rgb(image, between.getX(), between.getY())) < 0.8, "after marker " + n);
+        }
+    }
+
+    /** Least over greatest channel: 1 for a grey. */
+    private static double whiteness(int colour) {
+        int r = colour >> 16 & 0xff;
+        int g = colour >> 8 & 0xff;
+        int b = colour & 0xff;
+        return (double) Math.min(r, Math.min(g, b)) / Math.max(1, Math.max(r, Math.max(g, b)));
+    }
+
+    @Test
+    void rotationArrow_pointsToTheRightForPositiveRotation() {
+        // The eye is outside and the stator above: right = up × towards the eye = z × r = θ.
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        Point2D[] forward = Gap.rotationArrow(gap, camera, 100, 68, -5);
+        Point2D[] backward = Gap.rotationArrow(gap, camera, -100, 68, -5);
+        assertTrue(forward[40].getX() > forward[0].getX() + 50);
+        assertTrue(backward[40].getX() < backward[0].getX() - 50);
+        double[] a = gap.place(gap.middle, 0.068, SpiralFilm.DATUM);
+        double[] b = gap.place(gap.middle + 0.01, 0.068, SpiralFilm.DATUM);
+        assertTrue(camera.project(b[0], b[1], b[2]).x > camera.project(a[0], a[1], a[2]).x);
+    }
+
+    @Test
+    void longPaths_comeBackAtTheOtherEnd() {
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        double width = gap.to - gap.from;
+        assertEquals(gap.from + 0.2, gap.folded(gap.from + 0.2 + 3 * width), 1e-12);
+        assertEquals(gap.to - 0.1, gap.folded(gap.from - 0.1), 1e-12);
+        assertEquals(0, Math.IEEEremainder(width, FILM.film().grid().pitch()), 1e-12);
+    }
+
+    @Test
+    void exaggeration_mustBePositive() {
+        assertThrows(IllegalArgumentException.class, () -> new GapSettings(SETTINGS, 0));
+        assertThrows(IllegalArgumentException.class, () -> new GapSettings(SETTINGS, Double.NaN));
+        assertTrue(Gap.draw(FILM, FILM.paths(Frame.STATIONARY), new GapSettings(SETTINGS.sized(640, 360), 0.5))
+                        .getWidth()
+                == 640);
+    }
+
+    @Test
+    void clip_keepsThePartOnOneSide() {
+        double[] square = {0, 0, 1, 0, 1, 1, 0, 1};
+        double[] part = GapScene.clip(square, 0.25, true);
+        double area = 0;
+        for (int n = 0; n < part.length; n += 2) {
+            int m = (n + 2) % part.length;
+            area += 0.5 * (part[n] * part[m + 1] - part[m] * part[n + 1]);
+        }
+        assertEquals(0.75, area, 1e-12);
+        assertEquals(0, GapScene.clip(square, 2, true).length);
+    }
+}
