@@ -1,5 +1,7 @@
 package org.whither.film;
 
+import java.util.Optional;
+
 /**
  * The motion of the gas in a film, conserving mass at every point.
  *
@@ -279,6 +281,11 @@ public final class ConservingFlow implements FilmFlow {
         return profiles == null
                 ? flows.radial(i, j) * sigma * sigma * (3 - 2 * sigma)
                 : profiles.radialBelow(i, j, sigma);
+    }
+
+    @Override
+    public Optional<Correction> correction() {
+        return Optional.of(new Correction(flows.closure(), flows.correction(), flows.largestCorrection()));
     }
 
     @Override

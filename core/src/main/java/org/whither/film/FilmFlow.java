@@ -1,5 +1,7 @@
 package org.whither.film;
 
+import java.util.Optional;
+
 /**
  * The motion of the gas in a film, interpolated between what the solver computed. It is smooth inside each
  * <em>piece</em>: cell (i, j) of the grid, layer k between two levels across the film. All rates are seen from the frame
@@ -82,6 +84,11 @@ public interface FilmFlow {
         int k = Math.min(layers() - 1, part / PARTS_OF_LAYER);
         double c = (part - k * PARTS_OF_LAYER) / (double) PARTS_OF_LAYER;
         return level(k) + c * (level(k + 1) - level(k));
+    }
+
+    /** What had to be changed in the field so that mass is conserved; empty for an interpolation that takes it as it is. */
+    default Optional<Correction> correction() {
+        return Optional.empty();
     }
 
     /** Which interpolation this is, as written in results: {@code conserving} or {@code nodal}. */
