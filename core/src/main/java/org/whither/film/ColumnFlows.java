@@ -1,5 +1,6 @@
 package org.whither.film;
 
+import java.util.function.BiConsumer;
 import org.apache.commons.math3.linear.ArrayRealVector;
 import org.apache.commons.math3.linear.ConjugateGradient;
 import org.apache.commons.math3.linear.RealLinearOperator;
@@ -8,18 +9,31 @@ import org.apache.commons.math3.linear.RealVector;
 /**
  * Mass flows of the film columns through the faces of the cells, seen from the frame in which the film is steady, in
  * balance: what leaves a cell through its four faces is what its feed brings in. They are the solver's own where it gave
- * them, and else formed from the film pressure; what is then left of divergence is removed by the smallest change of the
- * flows (least squares, a projection on the graph of the cells).
+ * them, and else formed from the film pressure, or from the velocities at the nodes; what is then left of divergence is
+ * removed by the smallest change of the flows, a projection on the graph of the cells: the least sum of squares, each
+ * change taken as a share of the mean flow in its direction, since the flow that the rotor drags round is often a hundred
+ * times the leakage and so are its errors.
+ *
+ * <p>What enters through the feed is what the file says. Where it says nothing, a lubrication field lets in what the
+ * columns of the feed need; for a full field the velocities at the face tell where it enters, scaled so that in all as
+ * much enters as leaves over the two diameters, and they are corrected with the rest.
  */
 public final class ColumnFlows {
-    /** A residual below this share of the flow through the film is rounding, not divergence. */
-    private static final double ROUNDING = 1e-13;
+    /** A residual below this share of the mean flow through a face is rounding, not divergence. */
+    private static final double ROUNDING = 1e-10;
+
+    /** Where the nodes of the feed say less than this share of what leaves, or that much more, they say nothing. */
+    private static final double LEAST_SCALE = 0.5;
+
+    /** Least size of the flows of a direction, as a share of the other's, with which its changes are weighed. */
+    private static final double LEAST_SIZE = 1e-3;
 
     private final FilmGrid grid;
     private final double[] theta;
     private final double[] radial;
     private final double[] supply;
     private final boolean formed;
+    private double closure;
     private double correction;
     private double largestCorrection;
 
@@ -46,9 +60,17 @@ public final class ColumnFlows {
         return supply[grid.cell(i, j)];
     }
 
-    /** Whether the flows were formed from the film pressure, since the solver gave none. */
+    /** Whether the flows were formed from film pressure or nodal velocities, since the solver gave none. */
     public boolean formed() {
         return formed;
+    }
+
+    /**
+     * How far the field closed before the correction, column by column: (all inflow − all outflow) / all inflow over the
+     * feed and the two diameters. 0 where nothing enters.
+     */
+    public double closure() {
+        return closure;
     }
 
     /** Size of the correction that removed the remaining divergence: Σ|change| / Σ|flow| over all cell faces. */
@@ -86,7 +108,22 @@ public final class ColumnFlows {
             turn(grid, columns, theta, observer - film.steadyFrameSpeed());
         }
         ColumnFlows flows = new ColumnFlows(grid, theta, radial, new double[grid.cells()], formed);
-        flows.balance(film);
+        flows.balance(film, null);
+        return flows;
+    }
+
+    /**
+     * The column flows of a full field.
+     *
+     * @param film the film
+     * @param theta flows through the constant-i faces, ni × (nj − 1), row-major (kg/s); kept and changed
+     * @param radial flows through the constant-j faces, (ni − 1) × nj, row-major (kg/s); kept and changed
+     * @param supply what enters through each cell of the feed by the velocities there (kg/s); kept and changed
+     * @return balanced flows
+     */
+    static ColumnFlows of(Film film, double[] theta, double[] radial, double[] supply) {
+        ColumnFlows flows = new ColumnFlows(film.grid(), theta, radial, supply, true);
+        flows.balance(film, supply);
         return flows;
     }
 
@@ -193,37 +230,46 @@ public final class ColumnFlows {
         return theta(i + 1, j) - theta(i, j) + radial(i, j + 1) - radial(i, j);
     }
 
-    private void balance(Film film) {
-        int nci = grid.cellsTheta();
-        int ncj = grid.cellsRadial();
+    /** Balances the flows; {@code fed} is what enters the feed by the field itself, or null where it does not say. */
+    private void balance(Film film, double[] fed) {
         boolean given = film.supply().isPresent() && film.supply().get().hasMassFlux();
-        double[] residual = new double[grid.cells()];
-        boolean[] free = new boolean[grid.cells()];
-        double through = 0;
-        for (double flow : radial) {
-            through += Math.abs(flow);
-        }
-        for (double flow : theta) {
-            through += Math.abs(flow);
-        }
-        through /= radial.length + theta.length;
-        double worst = 0;
-        for (int i = 0; i < nci; i++) {
-            for (int j = 0; j < ncj; j++) {
+        double[] entering = new double[grid.cells()];
+        double enteringFeed = 0;
+        double inflow = 0;
+        double leaving = 0;
+        for (int i = 0; i < grid.cellsTheta(); i++) {
+            for (int j = 0; j < grid.cellsRadial(); j++) {
                 int cell = grid.cell(i, j);
                 if (film.feeds(cell)) {
-                    supply[cell] = given ? film.supply().get().massFlux(cell) * grid.cellArea(i, j) : divergence(i, j);
-                    free[cell] = !given;
+                    double flux = given ? film.supply().get().massFlux(cell) * grid.cellArea(i, j) : 0;
+                    entering[cell] = given ? flux : fed != null ? fed[cell] : divergence(i, j);
                 }
+                enteringFeed += entering[cell];
+                inflow += Math.max(0, entering[cell]);
+            }
+            leaving += radial(i, grid.cellsRadial()) - radial(i, 0);
+            inflow += Math.max(0, radial(i, 0)) + Math.max(0, -radial(i, grid.cellsRadial()));
+        }
+        closure = inflow > 0 ? (enteringFeed - leaving) / inflow : 0;
+        double scale = leaving / enteringFeed;
+        boolean linked = !given && fed != null && scale > LEAST_SCALE && scale < 1 / LEAST_SCALE;
+        boolean[] free = new boolean[grid.cells()];
+        double[] residual = new double[grid.cells()];
+        double worst = 0;
+        for (int i = 0; i < grid.cellsTheta(); i++) {
+            for (int j = 0; j < grid.cellsRadial(); j++) {
+                int cell = grid.cell(i, j);
+                free[cell] = film.feeds(cell) && !given && !linked;
+                supply[cell] = linked ? scale * entering[cell] : entering[cell];
                 residual[cell] = free[cell] ? 0 : supply[cell] - divergence(i, j);
                 worst = Math.max(worst, Math.abs(residual[cell]));
             }
         }
-        if (worst > ROUNDING * through) {
-            remove(residual, free);
+        if (worst > ROUNDING * 0.5 * (meanSize(theta) + meanSize(radial))) {
+            remove(residual, free, linked);
         }
-        for (int i = 0; i < nci; i++) {
-            for (int j = 0; j < ncj; j++) {
+        for (int i = 0; i < grid.cellsTheta(); i++) {
+            for (int j = 0; j < grid.cellsRadial(); j++) {
                 int cell = grid.cell(i, j);
                 if (film.feeds(cell)) {
                     supply[cell] = divergence(i, j);
@@ -232,48 +278,37 @@ public final class ColumnFlows {
         }
     }
 
-    /** Removes the residual by the least-squares change of the flows: δ(A→B) = λ_A − λ_B, with L λ = residual. */
-    private void remove(double[] residual, boolean[] free) {
+    private static double meanSize(double[] flows) {
+        double sum = 0;
+        for (double flow : flows) {
+            sum += Math.abs(flow);
+        }
+        return sum / flows.length;
+    }
+
+    /** Removes the residual by the weighted least change of the flows: δ(A→B) = w (λ_A − λ_B), with L λ = residual. */
+    private void remove(double[] residual, boolean[] free, boolean linked) {
         int nci = grid.cellsTheta();
         int ncj = grid.cellsRadial();
-        RealLinearOperator laplacian = new RealLinearOperator() {
-            @Override
-            public int getRowDimension() {
-                return residual.length;
+        double sizeTheta = meanSize(theta);
+        double sizeRadial = meanSize(radial);
+        double most = Math.max(sizeTheta, sizeRadial);
+        double alongTheta = weight(sizeTheta / most);
+        double alongRadial = weight(sizeRadial / most);
+        double throughFeed = 0;
+        if (linked) {
+            int cells = 0;
+            for (double flow : supply) {
+                throughFeed += Math.abs(flow);
+                cells += flow != 0 ? 1 : 0;
             }
-
-            @Override
-            public int getColumnDimension() {
-                return residual.length;
-            }
-
-            @Override
-            public RealVector operate(RealVector x) {
-                double[] lambda = ((ArrayRealVector) x).getDataRef();
-                double[] y = new double[lambda.length];
-                for (int i = 0; i < nci; i++) {
-                    int left = Math.floorMod(i - 1, nci);
-                    int right = (i + 1) % nci;
-                    for (int j = 0; j < ncj; j++) {
-                        int cell = i * ncj + j;
-                        if (free[cell]) {
-                            y[cell] = lambda[cell];
-                            continue;
-                        }
-                        double sum = 4 * lambda[cell];
-                        sum -= at(lambda, free, left * ncj + j);
-                        sum -= at(lambda, free, right * ncj + j);
-                        sum -= j > 0 ? at(lambda, free, cell - 1) : 0;
-                        sum -= j < ncj - 1 ? at(lambda, free, cell + 1) : 0;
-                        y[cell] = sum;
-                    }
-                }
-                return new ArrayRealVector(y, false);
-            }
-        };
-        ConjugateGradient solver = new ConjugateGradient(100_000, 1e-12, false);
-        double[] lambda =
-                solver.solve(laplacian, new ArrayRealVector(residual, false)).toArray();
+            throughFeed = weight(throughFeed / cells / most);
+        }
+        double[] outside = new double[residual.length];
+        for (int cell = 0; cell < outside.length; cell++) {
+            outside[cell] = supply[cell] != 0 ? throughFeed : 0;
+        }
+        double[] lambda = solve(residual, free, alongTheta, alongRadial, outside);
         double changed = 0;
         double total = 0;
         double[] cellChange = new double[residual.length];
@@ -282,7 +317,7 @@ public final class ColumnFlows {
             int left = Math.floorMod(i - 1, nci);
             int right = i % nci;
             for (int j = 0; j < ncj; j++) {
-                double change = at(lambda, free, left * ncj + j) - at(lambda, free, right * ncj + j);
+                double change = alongTheta * (lambda[left * ncj + j] - lambda[right * ncj + j]);
                 theta[i * ncj + j] += change;
                 double flow = Math.abs(theta[i * ncj + j]);
                 note(cellChange, cellFlow, i > 0 ? left * ncj + j : -1, change, flow);
@@ -293,9 +328,9 @@ public final class ColumnFlows {
         }
         for (int i = 0; i < nci; i++) {
             for (int j = 0; j <= ncj; j++) {
-                double below = j > 0 ? at(lambda, free, i * ncj + j - 1) : 0;
-                double above = j < ncj ? at(lambda, free, i * ncj + j) : 0;
-                double change = below - above;
+                double below = j > 0 ? lambda[i * ncj + j - 1] : 0;
+                double above = j < ncj ? lambda[i * ncj + j] : 0;
+                double change = alongRadial * (below - above);
                 radial[i * (ncj + 1) + j] += change;
                 double flow = Math.abs(radial[i * (ncj + 1) + j]);
                 note(cellChange, cellFlow, j > 0 ? i * ncj + j - 1 : -1, change, flow);
@@ -310,6 +345,59 @@ public final class ColumnFlows {
                 largestCorrection = Math.max(largestCorrection, cellChange[cell] / cellFlow[cell]);
             }
         }
+    }
+
+    private static double weight(double size) {
+        double within = Math.max(size, LEAST_SIZE);
+        return within * within;
+    }
+
+    /** Solves L λ = residual, L the weighted Laplacian of the cells; λ is 0 in a free cell and outside the film. */
+    private double[] solve(double[] residual, boolean[] free, double alongTheta, double alongRadial, double[] outside) {
+        int nci = grid.cellsTheta();
+        int ncj = grid.cellsRadial();
+        RealLinearOperator laplacian = operator(residual.length, (lambda, y) -> {
+            for (int i = 0; i < nci; i++) {
+                int left = Math.floorMod(i - 1, nci) * ncj;
+                int right = (i + 1) % nci * ncj;
+                for (int j = 0; j < ncj; j++) {
+                    int cell = i * ncj + j;
+                    if (free[cell]) {
+                        y[cell] = lambda[cell];
+                        continue;
+                    }
+                    double around = at(lambda, free, left + j) + at(lambda, free, right + j);
+                    double out = j > 0 ? at(lambda, free, cell - 1) : 0;
+                    out += j < ncj - 1 ? at(lambda, free, cell + 1) : 0;
+                    y[cell] = (2 * (alongTheta + alongRadial) + outside[cell]) * lambda[cell]
+                            - alongTheta * around
+                            - alongRadial * out;
+                }
+            }
+        });
+        ConjugateGradient solver = new ConjugateGradient(100_000, 1e-12, false);
+        return solver.solve(laplacian, new ArrayRealVector(residual, false)).toArray();
+    }
+
+    private static RealLinearOperator operator(int size, BiConsumer<double[], double[]> into) {
+        return new RealLinearOperator() {
+            @Override
+            public int getRowDimension() {
+                return size;
+            }
+
+            @Override
+            public int getColumnDimension() {
+                return size;
+            }
+
+            @Override
+            public RealVector operate(RealVector x) {
+                double[] y = new double[size];
+                into.accept(((ArrayRealVector) x).getDataRef(), y);
+                return new ArrayRealVector(y, false);
+            }
+        };
     }
 
     private static double at(double[] lambda, boolean[] free, int cell) {

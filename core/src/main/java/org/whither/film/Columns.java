@@ -6,7 +6,7 @@ package org.whither.film;
  * nodes the square of the pressure is interpolated: it is what the isothermal film obeys, and it is linear in ln r in a
  * plain one.
  */
-final class Columns {
+final class Columns implements GasState {
     private final Film film;
     private final FilmGrid grid;
     private final double[] nodePressure;
@@ -98,6 +98,16 @@ final class Columns {
                 + a * ((1 - b) * nodeSquare[m] + b * nodeSquare[m + 1]);
     }
 
+    @Override
+    public double pressure(int i, int j, int k, double a, double b, double sigma) {
+        return Math.sqrt(square(i, j, a, b));
+    }
+
+    @Override
+    public double density(int i, int j, int k, double a, double b, double sigma) {
+        return densityOverPressure * Math.sqrt(square(i, j, a, b));
+    }
+
     double nodeSquare(int i, int j) {
         return nodeSquare[grid.node(i, j)];
     }
@@ -116,11 +126,6 @@ final class Columns {
 
     double rho(int i, int j) {
         return densityOverPressure * cellPressure[grid.cell(i, j)];
-    }
-
-    /** Density of a pressure (kg/m³). */
-    double rho(double pressure) {
-        return densityOverPressure * pressure;
     }
 
     /**
@@ -142,11 +147,9 @@ final class Columns {
         return 0.5 * (grid.lineSlope(i, j) + grid.lineSlope(i + 1, j));
     }
 
-    /**
-     * What a turn of the observer by 1 rad/s adds to the flow through a constant-i face: ∫ρh r dr, with the mean of both
-     * sides where the film thickness jumps (kg).
-     */
-    double rotationMoment(int i, int j) {
+    /** With the mean of both sides where the film thickness jumps. */
+    @Override
+    public double rotationMoment(int i, int j) {
         int nci = grid.cellsTheta();
         int left = Math.floorMod(i - 1, nci);
         int right = i % nci;
@@ -168,15 +171,17 @@ final class Columns {
         };
     }
 
-    /** How far ρ r leans along row j of a constant-i face: half its change over its mean. */
-    double leanRadial(int i, int j) {
+    /** Of ρ r. */
+    @Override
+    public double leanRadial(int i, int j) {
         double[] along = alongLine(i % grid.cellsTheta(), j);
         double mean = (along[0] + 4 * along[1] + along[2]) / 6;
         return 0.5 * (along[2] - along[0]) / mean;
     }
 
-    /** How far ρ r bends along row j of a constant-i face: the mean of its ends over its mean, less 1. */
-    double bendRadial(int i, int j) {
+    /** Of ρ r. */
+    @Override
+    public double bendRadial(int i, int j) {
         double[] along = alongLine(i % grid.cellsTheta(), j);
         double mean = (along[0] + 4 * along[1] + along[2]) / 6;
         return 0.5 * (along[2] + along[0]) / mean - 1;

@@ -1,7 +1,9 @@
 package org.whither.film;
 
+import java.util.Optional;
+
 /**
- * The motion of the gas in a lubrication film, conserving mass at every point.
+ * The motion of the gas in a film, conserving mass at every point.
  *
  * <p>Let a, b in 0 … 1 be the place within a cell along θ and r. The mass flow in (a, b, σ) is the derivative of two
  * column potentials: P, the flow below σ through a line of constant a, linear between the two constant-i faces of the
@@ -13,16 +15,23 @@ package org.whither.film;
  * 1) + λ (6b² − 6b + 1) of mean 1, so that the speed is right at every point of a row over which the pressure falls
  * steeply; a term b − ∫w in Q takes up what that shifts, so that the divergence stays even over the cell.
  *
- * <p>Across the film each face of the grid has one profile, shared by both cells: the exact one of the thin film (Reynolds
- * 1886), a part linear in σ that the turning faces drag along and a parabola that the pressure drives, so that ψ(σ) = R
- * (2σ − σ²) + S σ² + (F − R − S)(3σ² − 2σ³), with F the column flow and R, S what rotor and stator drag along. Sharing
- * it keeps the gas level by level across a groove edge.
+ * <p>Across the film each face of the grid has one profile, shared by both cells. Sharing it keeps the gas level by level
+ * across a groove edge. For a lubrication field it is the exact one of the thin film (Reynolds 1886), a part linear in σ
+ * that the turning faces drag along and a parabola that the pressure drives, so that ψ(σ) = R (2σ − σ²) + S σ² + (F − R −
+ * S)(3σ² − 2σ³), with F the column flow and R, S what rotor and stator drag along. For a full field the rest beside R and
+ * S is a spline through the fluxes of the nodes (see {@link FaceProfiles}), and what the column flows need to balance is
+ * spread over it as that parabola. The rate across the film then follows from continuity; of the velocities along the
+ * shaft only those at the feed count.
  */
 public final class ConservingFlow implements FilmFlow {
     private final Film film;
     private final FilmGrid grid;
-    private final Columns columns;
+    private final GasState gas;
     private final ColumnFlows flows;
+    /** Profiles across the film of a full field; null for a lubrication field, whose profiles are parabolas. */
+    private final FaceProfiles profiles;
+
+    private final double[] levels;
     private final double[] dragRotor;
     private final double[] dragStator;
     private final double[] leanRadial;
@@ -33,18 +42,12 @@ public final class ConservingFlow implements FilmFlow {
     /**
      * The motion of the gas in a film.
      *
-     * @param film a film whose field is a {@link LubricationField}
-     * @throws IllegalArgumentException where the field is of another kind
+     * @param film a film
+     * @throws IllegalArgumentException where its field is a {@link FullField} and its faces are not given at the nodes
      */
     public ConservingFlow(Film film) {
-        if (!(film.field() instanceof LubricationField)) {
-            throw new IllegalArgumentException("conserving flow of a "
-                    + film.field().getClass().getSimpleName() + "; expected a lubrication field");
-        }
         this.film = film;
         this.grid = film.grid();
-        this.columns = new Columns(film);
-        this.flows = ColumnFlows.of(film, columns);
         this.nodalThickness = film.faces().at() == Location.NODE;
         this.fedThroughRotor = film.supply().isPresent() && film.supply().get().face() == Face.ROTOR;
         double rotor = film.conditions().rotationRate() - film.steadyFrameSpeed();
@@ -53,15 +56,72 @@ public final class ConservingFlow implements FilmFlow {
         dragStator = new double[dragRotor.length];
         leanRadial = new double[dragRotor.length];
         bendRadial = new double[dragRotor.length];
+        if (film.field() instanceof FullField full) {
+            NodalFlow nodal = new NodalFlow(film);
+            Levels atLevels = new Levels(film);
+            gas = atLevels;
+            drag(rotor, stator);
+            profiles = new FaceProfiles(nodal, atLevels, rotor, stator);
+            levels = new double[full.nk()];
+            for (int k = 0; k < levels.length; k++) {
+                levels[k] = full.sigma(k);
+            }
+            flows = balanced(nodal);
+        } else {
+            Columns columns = new Columns(film);
+            gas = columns;
+            drag(rotor, stator);
+            profiles = null;
+            levels = new double[] {0, 1};
+            flows = ColumnFlows.of(film, columns);
+        }
+    }
+
+    private void drag(double rotor, double stator) {
         for (int i = 0; i < grid.ni(); i++) {
             for (int j = 0; j < grid.cellsRadial(); j++) {
-                double moment = columns.rotationMoment(i, j);
-                leanRadial[i * grid.cellsRadial() + j] = columns.leanRadial(i, j);
-                bendRadial[i * grid.cellsRadial() + j] = columns.bendRadial(i, j);
+                double moment = gas.rotationMoment(i, j);
+                leanRadial[i * grid.cellsRadial() + j] = gas.leanRadial(i, j);
+                bendRadial[i * grid.cellsRadial() + j] = gas.bendRadial(i, j);
                 dragRotor[i * grid.cellsRadial() + j] = 0.5 * rotor * moment;
                 dragStator[i * grid.cellsRadial() + j] = 0.5 * stator * moment;
             }
         }
+    }
+
+    /** Balances the column flows of the profiles, and makes the profiles carry them. */
+    private ColumnFlows balanced(NodalFlow nodal) {
+        int ncj = grid.cellsRadial();
+        double[] theta = new double[grid.ni() * ncj];
+        double[] radial = new double[grid.cellsTheta() * grid.nj()];
+        double[] supply = new double[grid.cells()];
+        for (int i = 0; i < grid.ni(); i++) {
+            for (int j = 0; j < ncj; j++) {
+                int face = i * ncj + j;
+                theta[face] = profiles.thetaTotal(i, j) + dragRotor[face] + dragStator[face];
+            }
+        }
+        for (int i = 0; i < grid.cellsTheta(); i++) {
+            for (int j = 0; j < grid.nj(); j++) {
+                radial[i * grid.nj() + j] = profiles.radialTotal(i, j);
+            }
+            for (int j = 0; j < ncj; j++) {
+                supply[grid.cell(i, j)] = nodal.supplyFlow(i, j);
+            }
+        }
+        ColumnFlows balanced = ColumnFlows.of(film, theta, radial, supply);
+        for (int i = 0; i < grid.ni(); i++) {
+            for (int j = 0; j < ncj; j++) {
+                int face = i * ncj + j;
+                profiles.carryTheta(i, j, balanced.theta(i, j) - dragRotor[face] - dragStator[face]);
+            }
+        }
+        for (int i = 0; i < grid.cellsTheta(); i++) {
+            for (int j = 0; j < grid.nj(); j++) {
+                profiles.carryRadial(i, j, balanced.radial(i, j));
+            }
+        }
+        return balanced;
     }
 
     /** The balanced flows of the columns. */
@@ -76,12 +136,12 @@ public final class ConservingFlow implements FilmFlow {
 
     @Override
     public int layers() {
-        return 1;
+        return levels.length - 1;
     }
 
     @Override
     public double level(int k) {
-        return k;
+        return levels[k];
     }
 
     @Override
@@ -96,41 +156,64 @@ public final class ConservingFlow implements FilmFlow {
         double left = left0 + b * leftRise;
         double width = right0 + b * rightRise - left;
         double a = (theta - left) / width;
-        double mass = columns.rho(Math.sqrt(columns.square(i, j, a, b))) * localThickness(i, j, a, b) * r * dr * width;
+        double mass = gas.density(i, j, k, a, b, sigma) * localThickness(i, j, a, b) * r * dr * width;
 
+        // Here: the flow density at this height; below: the flow under it, what leaves the cell less what enters.
         int face = i * (grid.nj() - 1) + j;
         int next = face + grid.nj() - 1;
         double square = sigma * sigma;
-        double rotorBelow = 2 * sigma - square;
-        double pressureBelow = square * (3 - 2 * sigma);
         double rotorHere = 2 - 2 * sigma;
         double statorHere = 2 * sigma;
-        double pressureHere = 6 * sigma * (1 - sigma);
-        double driven0 = flows.theta(i, j) - dragRotor[face] - dragStator[face];
-        double driven1 = flows.theta(i + 1, j) - dragRotor[next] - dragStator[next];
-        double inner = flows.radial(i, j);
-        double outer = flows.radial(i, j + 1);
-
         double drag0 = dragRotor[face] * rotorHere + dragStator[face] * statorHere;
         double drag1 = dragRotor[next] * rotorHere + dragStator[next] * statorHere;
+        double spread = (dragRotor[next] - dragRotor[face]) * (2 * sigma - square)
+                + (dragStator[next] - dragStator[face]) * square;
+        double driven0;
+        double driven1;
+        double inner;
+        double outer;
+        if (profiles == null) {
+            double pressureHere = 6 * sigma * (1 - sigma);
+            double column0 = flows.theta(i, j) - dragRotor[face] - dragStator[face];
+            double column1 = flows.theta(i + 1, j) - dragRotor[next] - dragStator[next];
+            double columnInner = flows.radial(i, j);
+            double columnOuter = flows.radial(i, j + 1);
+            driven0 = column0 * pressureHere;
+            driven1 = column1 * pressureHere;
+            inner = columnInner * pressureHere;
+            outer = columnOuter * pressureHere;
+            spread += (column1 - column0 + columnOuter - columnInner) * square * (3 - 2 * sigma);
+        } else {
+            double thick = levels[k + 1] - levels[k];
+            double c = (sigma - levels[k]) / thick;
+            double[] around = profiles.theta();
+            double[] out = profiles.radial();
+            int at0 = profiles.thetaPiece(i, j, k);
+            int at1 = profiles.thetaPiece(i + 1, j, k);
+            int atInner = profiles.radialPiece(i, j, k);
+            int atOuter = profiles.radialPiece(i, j + 1, k);
+            driven0 = FaceProfiles.density(around, at0, c, thick);
+            driven1 = FaceProfiles.density(around, at1, c, thick);
+            inner = FaceProfiles.density(out, atInner, c, thick);
+            outer = FaceProfiles.density(out, atOuter, c, thick);
+            spread += FaceProfiles.below(around, at1, c, thick)
+                    - FaceProfiles.below(around, at0, c, thick)
+                    + FaceProfiles.below(out, atOuter, c, thick)
+                    - FaceProfiles.below(out, atInner, c, thick);
+        }
+
         double bCentre = 2 * b - 1;
         double bBubble = b * (1 - b);
         double bCurve = 1 - 6 * bBubble;
-        double aRate = ((1 - a)
-                                * (drag0 * (1 + leanRadial[face] * bCentre + bendRadial[face] * bCurve)
-                                        + driven0 * pressureHere)
-                        + a
-                                * (drag1 * (1 + leanRadial[next] * bCentre + bendRadial[next] * bCurve)
-                                        + driven1 * pressureHere))
+        double aRate = ((1 - a) * (drag0 * (1 + leanRadial[face] * bCentre + bendRadial[face] * bCurve) + driven0)
+                        + a * (drag1 * (1 + leanRadial[next] * bCentre + bendRadial[next] * bCurve) + driven1))
                 / mass;
-        double bRate = (((1 - b) * inner + b * outer) * pressureHere
+        double bRate = ((1 - b) * inner
+                        + b * outer
                         + bBubble
                                 * ((leanRadial[next] + bendRadial[next] * bCentre) * drag1
                                         - (leanRadial[face] + bendRadial[face] * bCentre) * drag0))
                 / mass;
-        double spread = (dragRotor[next] - dragRotor[face]) * rotorBelow
-                + (dragStator[next] - dragStator[face]) * square
-                + (driven1 - driven0 + outer - inner) * pressureBelow;
         if (fedThroughRotor) {
             spread -= flows.supply(i, j);
         }
@@ -141,7 +224,7 @@ public final class ConservingFlow implements FilmFlow {
 
     private double localThickness(int i, int j, double a, double b) {
         if (!nodalThickness) {
-            return columns.h(i, j);
+            return film.faces().thickness(grid.cell(i, j));
         }
         RingFaces faces = film.faces();
         int n = grid.node(i, j);
@@ -161,12 +244,12 @@ public final class ConservingFlow implements FilmFlow {
 
     @Override
     public double pressure(int i, int j, int k, double theta, double r, double sigma) {
-        return Math.sqrt(columns.square(i, j, across(i, j, theta, r), along(j, r)));
+        return gas.pressure(i, j, k, across(i, j, theta, r), along(j, r), sigma);
     }
 
     @Override
     public double density(int i, int j, int k, double theta, double r, double sigma) {
-        return columns.rho(pressure(i, j, k, theta, r, sigma));
+        return gas.density(i, j, k, across(i, j, theta, r), along(j, r), sigma);
     }
 
     @Override
@@ -195,7 +278,14 @@ public final class ConservingFlow implements FilmFlow {
 
     @Override
     public double radialFlowBelow(int i, int j, double sigma) {
-        return flows.radial(i, j) * sigma * sigma * (3 - 2 * sigma);
+        return profiles == null
+                ? flows.radial(i, j) * sigma * sigma * (3 - 2 * sigma)
+                : profiles.radialBelow(i, j, sigma);
+    }
+
+    @Override
+    public Optional<Correction> correction() {
+        return Optional.of(new Correction(flows.closure(), flows.correction(), flows.largestCorrection()));
     }
 
     @Override

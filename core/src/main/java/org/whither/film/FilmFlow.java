@@ -1,20 +1,24 @@
 package org.whither.film;
 
+import java.util.Optional;
+
 /**
  * The motion of the gas in a film, interpolated between what the solver computed. It is smooth inside each
  * <em>piece</em>: cell (i, j) of the grid, layer k between two levels across the film. All rates are seen from the frame
  * in which the film is steady; all flows are those of one sector. Implementations can be used from many threads.
  */
 public interface FilmFlow {
+    /** Parts of a layer in which a profile of several layers is taken to run one way. */
+    int PARTS_OF_LAYER = 8;
+
     /**
-     * The motion of the gas in a film, by the interpolation that suits its field: conserving for a lubrication field,
-     * nodal for a full field.
+     * The motion of the gas in a film, by the interpolation that conserves mass at every point.
      *
      * @param film the film
      * @return its motion
      */
     static FilmFlow of(Film film) {
-        return film.field() instanceof LubricationField ? new ConservingFlow(film) : new NodalFlow(film);
+        return new ConservingFlow(film);
     }
 
     /** The film. */
@@ -66,15 +70,25 @@ public interface FilmFlow {
 
     /**
      * Number of parts, each between two heights, in which the radial flow through a constant-j face is taken to run one
-     * way; 1 where a pressure that is constant across the film drives it.
+     * way: 1 where a pressure that is constant across the film drives it, else several a layer.
      */
     default int profileParts() {
-        return 1;
+        return layers() == 1 ? 1 : layers() * PARTS_OF_LAYER;
     }
 
     /** Lower bound of such a part, or 1 for part = profileParts(), as a fraction of the film thickness. */
     default double profilePart(int part) {
-        return part;
+        if (layers() == 1) {
+            return part;
+        }
+        int k = Math.min(layers() - 1, part / PARTS_OF_LAYER);
+        double c = (part - k * PARTS_OF_LAYER) / (double) PARTS_OF_LAYER;
+        return level(k) + c * (level(k + 1) - level(k));
+    }
+
+    /** What had to be changed in the field so that mass is conserved; empty for an interpolation that takes it as it is. */
+    default Optional<Correction> correction() {
+        return Optional.empty();
     }
 
     /** Which interpolation this is, as written in results: {@code conserving} or {@code nodal}. */

@@ -6,8 +6,6 @@ package org.whither.film;
  * cell, and then divided. It does not conserve mass exactly; how far it does is told by the closure of its border flows.
  */
 public final class NodalFlow implements FilmFlow {
-    private static final int SUBDIVISIONS = 8;
-
     private final Film film;
     private final FilmGrid grid;
     private final FullField field;
@@ -120,6 +118,16 @@ public final class NodalFlow implements FilmFlow {
         double alongLine = (faceZ(i, above, stator) - faceZ(i, below, stator)) / dr;
         double lineSlope = (grid.theta(i, above) - grid.theta(i, below)) / dr;
         return alongLine - lineSlope * slopeTheta;
+    }
+
+    /** Mass flux ρh u_θ at a node index and level, in the frame in which the film is steady (kg/(m s)). */
+    double fluxTheta(int node, int k) {
+        return fluxTheta[node * nk + k];
+    }
+
+    /** Mass flux ρh r u_r at a node index and level (kg/s a radian). */
+    double fluxRadial(int node, int k) {
+        return fluxRadial[node * nk + k];
     }
 
     @Override
@@ -246,18 +254,6 @@ public final class NodalFlow implements FilmFlow {
             sum += thick * c * (lower + 0.5 * c * (upper - lower));
         }
         return sum * width;
-    }
-
-    @Override
-    public int profileParts() {
-        return layers() * SUBDIVISIONS;
-    }
-
-    @Override
-    public double profilePart(int part) {
-        int k = Math.min(layers() - 1, part / SUBDIVISIONS);
-        double c = (part - k * SUBDIVISIONS) / (double) SUBDIVISIONS;
-        return field.sigma(k) + c * (field.sigma(k + 1) - field.sigma(k));
     }
 
     @Override

@@ -1,7 +1,6 @@
 package org.whither.film;
 
 import static org.junit.jupiter.api.Assertions.assertEquals;
-import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import java.util.SplittableRandom;
@@ -182,12 +181,6 @@ class ConservingFlowTest {
             assertEquals(a[1], b[1], 1e-9);
             assertEquals(a[2], b[2], 1e-4 * Math.abs(a[2]) + 1e-3);
         }
-    }
-
-    @Test
-    void constructor_fullField_isRefused() {
-        Film film = RadialCase.fullFilm(LEANING, 5, Frame.ROTATING, Frame.ROTATING);
-        assertThrows(IllegalArgumentException.class, () -> new ConservingFlow(film));
     }
 
     /** A film whose pressure and film thickness wave around the ring. */

@@ -141,12 +141,19 @@ public final class RadialCase {
                 Optional.of(supply(grid)));
     }
 
-    /** The same film as a full field: the thin-film velocities at the nodes, measured in a frame, steady in another. */
-    public static Film fullFilm(FilmGrid grid, int nk, Frame velocityFrame, Frame steadyIn) {
+    /** Levels across the film, close to each other near the faces. */
+    static double[] levels(int nk) {
         double[] sigma = new double[nk];
         for (int k = 0; k < nk; k++) {
             sigma[k] = 0.5 * (1 - Math.cos(Math.PI * k / (nk - 1)));
         }
+        sigma[nk - 1] = 1;
+        return sigma;
+    }
+
+    /** The same film as a full field: the thin-film velocities at the nodes, measured in a frame, steady in another. */
+    public static Film fullFilm(FilmGrid grid, int nk, Frame velocityFrame, Frame steadyIn) {
+        double[] sigma = levels(nk);
         int size = grid.nodes() * nk;
         double[] pressure = new double[size];
         double[] ur = new double[size];

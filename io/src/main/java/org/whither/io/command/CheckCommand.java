@@ -26,7 +26,7 @@ final class CheckCommand implements Callable<Integer> {
 
     @Override
     public Integer call() throws IOException {
-        FieldInput input = FieldInput.read(field.file(), talk);
+        FieldInput input = FieldInput.read(field, talk);
         FieldSummary summary = new FieldSummary(input.flow());
         if (talk.json()) {
             talk.out()

@@ -108,7 +108,7 @@ final class DrawCommand implements Callable<Integer> {
         }
         PictureSettings plain = pictureSettings();
         GapSettings gapSettings = gapSettings(plain);
-        FieldInput input = FieldInput.read(field.file(), talk);
+        FieldInput input = FieldInput.read(field, talk);
         PictureSettings titled = new PictureSettings(
                 plain.width(),
                 plain.height(),

@@ -21,8 +21,17 @@ import org.whither.io.hdf5.FieldReader;
 record FieldInput(Path file, String sha256, FilmFlow flow) {
     /** Reads a field file; refuses it as {@link FieldReader} does. */
     static FieldInput read(Path file, Talk talk) throws IOException {
+        return read(file, Interpolation.CONSERVING, talk);
+    }
+
+    /** Reads the field file of a command line, with the interpolation asked for. */
+    static FieldInput read(FieldParameter field, Talk talk) throws IOException {
+        return read(field.file(), field.interpolation(), talk);
+    }
+
+    private static FieldInput read(Path file, Interpolation interpolation, Talk talk) throws IOException {
         try (Talk.Stretch stretch = talk.begin("Reading " + file.getFileName())) {
-            FilmFlow flow = FilmFlow.of(FieldReader.read(file));
+            FilmFlow flow = interpolation.of(FieldReader.read(file), file);
             stretch.accept(0.9);
             return new FieldInput(file, sha256(file), flow);
         }

@@ -53,7 +53,7 @@ final class SplitCommand implements Callable<Integer> {
     public Integer call() throws IOException {
         SplitSettings settings = tracing.split();
         boolean files = folder.given() || !talk.json();
-        FieldInput input = FieldInput.read(field.file(), talk);
+        FieldInput input = FieldInput.read(field, talk);
         Path target = folder.or(input.defaultFolder());
         if (files) {
             WholeFolder.check(target);

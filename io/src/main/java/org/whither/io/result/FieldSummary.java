@@ -8,7 +8,7 @@ import java.util.Locale;
 import java.util.Optional;
 import org.whither.fate.BorderBalance;
 import org.whither.fate.FilmMass;
-import org.whither.film.ConservingFlow;
+import org.whither.film.Correction;
 import org.whither.film.Film;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
@@ -22,6 +22,8 @@ import org.whither.film.Validity;
 public final class FieldSummary {
     /** Closure beyond which a field is doubtful, as a share of the inflow. */
     public static final double DOUBTFUL_CLOSURE = 0.005;
+
+    private static final double DOUBTFUL_CORRECTION = 0.01;
 
     private final FilmFlow flow;
     private final Film film;
@@ -64,9 +66,14 @@ public final class FieldSummary {
         range[1] = Math.max(range[1], value);
     }
 
-    /** Whether the border flows close well enough to act on. */
+    /** Whether the border flows of the field, before any correction, close well enough to act on. */
     public boolean closes() {
-        return Math.abs(balance.closure()) <= DOUBTFUL_CLOSURE;
+        return Math.abs(closure()) <= DOUBTFUL_CLOSURE;
+    }
+
+    /** How the border flows close by the field itself, before any correction, as a share of the inflow. */
+    private double closure() {
+        return flow.correction().map(Correction::closure).orElse(balance.closure());
     }
 
     /** What a user must know, a sentence each. */
@@ -79,7 +86,7 @@ public final class FieldSummary {
                     Locale.ROOT,
                     "The border flows do not close: %.2f %% of the inflow is missing or too much, above %.1f %%; the field"
                             + " may not be converged, or a part of its border is not in the file.",
-                    100 * balance.closure(),
+                    100 * closure(),
                     100 * DOUBTFUL_CLOSURE));
         }
         if (film.supply().isEmpty()) {
@@ -87,13 +94,14 @@ public final class FieldSummary {
         } else if (!(balance.supplyIn() > 0)) {
             said.add("No gas enters through the feed.");
         }
-        if (flow instanceof ConservingFlow conserving
-                && conserving.columnFlows().correction() > 0.01) {
+        double changed = flow.correction().map(Correction::share).orElse(0.0);
+        if (changed > DOUBTFUL_CORRECTION) {
             said.add(String.format(
                     Locale.ROOT,
-                    "The mass flows of the cells had to be changed by %.1f %% to balance: the pressure and the film"
-                            + " thickness in the file do not satisfy continuity well.",
-                    100 * conserving.columnFlows().correction()));
+                    "The mass flows of the cells had to be changed by %.1f %% to balance: the %s in the file do not"
+                            + " satisfy continuity well.",
+                    100 * changed,
+                    film.field() instanceof FullField ? "velocities" : "pressure and the film thickness"));
         }
         said.addAll(validity.warnings());
         return said;
@@ -176,8 +184,17 @@ public final class FieldSummary {
                 s,
                 "Closure",
                 balance.inflow() > 0
-                        ? String.format(Locale.ROOT, "%.4f %% of the inflow", 100 * balance.closure())
+                        ? String.format(Locale.ROOT, "%.4f %% of the inflow", 100 * closure())
                         : "none: nothing enters");
+        flow.correction()
+                .ifPresent(correction -> line(
+                        s,
+                        "Correction",
+                        String.format(
+                                Locale.ROOT,
+                                "%.2g %% of the flows between cells, at most %.2g %% of those of one cell",
+                                100 * correction.share(),
+                                100 * correction.largestShare())));
         line(s, "Gas in the film", String.format(Locale.ROOT, "%.4g mg", 1e6 * mass));
         s.append('\n');
         bound(s, "Reduced Reynolds", validity.reducedReynolds(), Validity.REYNOLDS_BOUND);
@@ -253,9 +270,11 @@ public final class FieldSummary {
         root.putArray("pressure").add(pressure[0]).add(pressure[1]);
         root.put("rotation_rate", film.conditions().rotationRate());
         root.put("interpolation", flow.interpolation());
-        if (flow instanceof ConservingFlow conserving) {
-            root.put("flow_correction", conserving.columnFlows().correction());
-        }
+        root.put("field_closure", closure());
+        flow.correction().ifPresent(correction -> {
+            root.put("flow_correction", correction.share());
+            root.put("largest_flow_correction", correction.largestShare());
+        });
         root.put("film_mass", mass);
         root.set("balance", ResultJson.balance(balance));
         root.set("validity", ResultJson.validity(validity));

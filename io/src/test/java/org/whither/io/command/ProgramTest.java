@@ -138,6 +138,23 @@ class ProgramTest {
     }
 
     @Test
+    void check_fullField_byEitherInterpolation() throws IOException {
+        String full =
+                Path.of("src", "test", "resources", "fields", "full-plain.h5").toString();
+        JsonNode conserving = json(run("check", full, "--json", "--quiet").out());
+        assertEquals("conserving", conserving.get("interpolation").asText());
+        assertEquals(0, conserving.at("/balance/closure").asDouble(), 1e-9);
+        assertTrue(conserving.get("flow_correction").asDouble() > 0, "an invented field without continuity");
+        JsonNode nodal = json(run("check", full, "--json", "--quiet", "--interpolation", "nodal")
+                .out());
+        assertEquals("nodal", nodal.get("interpolation").asText());
+        assertFalse(nodal.has("flow_correction"));
+        Run film = run("check", FIELD.toString(), "--interpolation", "nodal");
+        assertEquals(3, film.status());
+        assertTrue(film.err().contains("--interpolation nodal"), film.err());
+    }
+
+    @Test
     void draw_bothViews_addsToEarlierResults() throws IOException {
         Path out = folder.resolve("r");
         assertEquals(
