@@ -177,7 +177,7 @@ final class FaceWords {
                 }
             }
         }
-        if (good < 0.6 * all) {
+        if (good < 0.5 * all) {
             return Double.NEGATIVE_INFINITY;
         }
         double clear = Double.POSITIVE_INFINITY;
@@ -188,6 +188,6 @@ final class FaceWords {
             double down = Math.abs(py * cos - px * sin);
             clear = Math.min(clear, Math.hypot(Math.max(0, along - 0.5 * width), Math.max(0, down - 0.5 * height)));
         }
-        return 3.0 * good / all + 2 * Math.min(1, clear / height);
+        return 2.0 * good / all + 2 * Math.min(1, clear / height);
     }
 }

@@ -25,10 +25,10 @@ public final class Gap {
      * Height of the eye above the plane of the faces (rad): a groove is drawn about as deep as it is wide, and from lower
      * down its floor is hidden by the land in front.
      */
-    private static final double ELEVATION = Math.toRadians(60);
+    private static final double ELEVATION = Math.toRadians(54);
 
-    /** How far the eye is turned from the middle of the part shown, away from the stator's block (rad). */
-    private static final double ASIDE = Math.toRadians(1);
+    /** How far the eye is turned from the middle of the part shown towards the open end, to look into the grooves (rad). */
+    private static final double ASIDE = Math.toRadians(6);
 
     private static final double FIELD_OF_VIEW = Math.toRadians(22);
 
@@ -101,8 +101,10 @@ public final class Gap {
         Rectangle window = new Rectangle(0, 0, settings.width(), settings.height());
         // The legend below is three lines of small letters, which do not shrink as far as the picture does.
         double below = 62 * unit + 6.9 * Math.max(Ink.LEAST_SMALL, Ink.SMALL * unit);
+        // So are the lines above it, and the names over the far rim.
+        double above = Math.max(128 * unit, 64 * unit + 4.6 * Math.max(9.6, 13 * unit));
         Rectangle2D room = new Rectangle2D.Double(
-                74 * unit, 128 * unit, settings.width() - 128 * unit, settings.height() - 128 * unit - below);
+                74 * unit, above, settings.width() - 128 * unit, settings.height() - above - below);
         List<double[]> extent = gap.extent();
         double aside = gap.upstreamIsTo ? ASIDE : -ASIDE;
         double[] away = {
@@ -317,8 +319,10 @@ public final class Gap {
         }
         String rotor = rate == 0 ? "rotor stands still" : "rotor turns, " + Words.speed(rate);
         double x = at(camera, gap.middle, inner, gap.bottom).getX();
-        double y = below(camera, x - 60 * u, x + 60 * u) + 12 * u + ink.ascent(ink.heading);
-        y = twoLines(ink, rotor, "seen over the bore, stator above", x, y);
+        String seen = "seen over the bore, stator above";
+        double wide = 0.5 * Math.max(ink.width(ink.heading, rotor), ink.width(ink.small, seen)) + 8 * u;
+        double y = below(camera, x - wide, x + wide) + 10 * u + ink.ascent(ink.heading);
+        y = twoLines(ink, rotor, seen, x, y);
         twoLines(
                 ink,
                 conditions.innerSide() + " side",

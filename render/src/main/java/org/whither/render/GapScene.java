@@ -115,8 +115,8 @@ final class GapScene {
         }
         this.statorHigh = high;
         double face = 1e3 * span;
-        this.bottom = height(shape.rotorLow()) - 0.16 * face;
-        this.notch = 0.13 * face;
+        this.bottom = Math.min(height(shape.rotorLow()) - 0.16 * face, -0.36 * face);
+        this.notch = 0.14 * face;
         this.top = height(high) + 0.22 * face;
         this.sky = new Sky(shape, this);
     }
@@ -238,6 +238,7 @@ final class GapScene {
         add(items, rim(), Scene.Material.plain(STATOR, 1));
         if (above) {
             add(items, feedLines(), Scene.Material.plain(FEED, 1));
+            add(items, feedCuts(low, high), Scene.Material.plain(FEED, 1));
         }
         return items;
     }
@@ -700,6 +701,25 @@ final class GapScene {
                 double turn = n * grid.pitch();
                 segment(mesh, edge.theta0() + turn, edge.r0(), edge.theta1() + turn, edge.r1(), radius, true);
             }
+        }
+        return mesh;
+    }
+
+    /** The feed's channel where the stator is cut, as a filled surface, so that it shows in the cut. */
+    private MeshBuilder feedCuts(double low, double high) {
+        MeshBuilder mesh = new MeshBuilder();
+        FilmShape.Band feed = shape.feed();
+        if (feed == null || !shape.feedEdges().isEmpty()) {
+            return mesh;
+        }
+        for (double theta : new double[] {low, high}) {
+            int[] corners = new int[4];
+            for (int n = 0; n < 4; n++) {
+                double r = n == 1 || n == 2 ? feed.to() : feed.from();
+                double[] p = at(theta, r, height(statorAt(theta, r)) + (n >= 2 ? notch : 0));
+                corners[n] = mesh.vertex(p[0], p[1], p[2], 0, 0, 1, 1);
+            }
+            mesh.quad(corners[0], corners[1], corners[2], corners[3]);
         }
         return mesh;
     }

@@ -30,6 +30,9 @@ public final class Plan {
     /** Most isobars in the enlarged view. */
     private static final int ISOBARS = 12;
 
+    /** How far round a footprint is drawn at most: a longer one would run over its own beginning (rad). */
+    private static final double FULL = Math.toRadians(330);
+
     /** Of lines over the pressure. */
     private static final int DARK = 0x14181c;
 
@@ -314,30 +317,19 @@ public final class Plan {
 
     private void footprints(Ink ink, Camera camera, double width) {
         for (Path path : paths) {
-            Path2D.Double foot = new Path2D.Double();
-            PathPoint before = null;
-            for (PathPoint point : path.points()) {
-                if (before == null) {
-                    Point2D p = at(camera, point.steadyTheta(), point.radius());
-                    foot.moveTo(p.getX(), p.getY());
-                } else {
-                    double turn = point.steadyTheta() - before.steadyTheta();
-                    int parts = Math.max(1, (int) Math.ceil(Math.abs(turn) / Math.toRadians(1)));
-                    for (int n = 1; n <= parts; n++) {
-                        double f = (double) n / parts;
-                        Point2D p = at(
-                                camera,
-                                before.steadyTheta() + f * turn,
-                                before.radius() + f * (point.radius() - before.radius()));
-                        foot.lineTo(p.getX(), p.getY());
-                    }
-                }
-                before = point;
-            }
-            if (before == null) {
+            Point2D[] points = footprint(path, camera);
+            if (points.length < 2) {
                 continue;
             }
-            ink.colour(0x14181c, 0.85);
+            Path2D.Double foot = new Path2D.Double();
+            foot.moveTo(points[0].getX(), points[0].getY());
+            for (int n = 1; n < points.length; n++) {
+                foot.lineTo(points[n].getX(), points[n].getY());
+            }
+            if (goesOn(path)) {
+                openHead(foot, points, 3.2 * width);
+            }
+            ink.colour(DARK, 0.85);
             ink.stroke(width + 1.4 * ink.unit);
             ink.pen.draw(foot);
             ink.colour(Destination.of(path.end()).colour());
@@ -345,13 +337,60 @@ public final class Plan {
             ink.pen.draw(foot);
         }
         for (Path path : paths) {
-            if (!path.points().isEmpty()) {
+            if (!path.points().isEmpty() && !goesOn(path)) {
                 PathPoint end = path.points().get(path.points().size() - 1);
                 Point2D p = at(camera, end.steadyTheta(), end.radius());
                 Destination destination = Destination.of(path.end());
                 ink.mark(destination.marker(p.getX(), p.getY(), 6.5 * width), destination.colour(), 1.2 * ink.unit);
             }
         }
+    }
+
+    /** Whether a path runs further round than its footprint is drawn. */
+    private static boolean goesOn(Path path) {
+        List<PathPoint> points = path.points();
+        return !points.isEmpty()
+                && points.stream()
+                        .anyMatch(p -> Math.abs(p.steadyTheta() - points.get(0).steadyTheta()) > FULL);
+    }
+
+    /** The drawn points of a path; of one that runs round and round, those of its first time round. */
+    static Point2D[] footprint(Path path, Camera camera) {
+        List<Point2D> result = new ArrayList<>();
+        List<PathPoint> points = path.points();
+        for (int n = 0; n < points.size(); n++) {
+            PathPoint b = points.get(n);
+            PathPoint a = n == 0 ? b : points.get(n - 1);
+            double turn = b.steadyTheta() - a.steadyTheta();
+            int parts = Math.max(1, (int) Math.ceil(Math.abs(turn) / Math.toRadians(1)));
+            for (int m = 1; m <= parts; m++) {
+                double f = (double) m / parts;
+                double theta = a.steadyTheta() + f * turn;
+                if (Math.abs(theta - points.get(0).steadyTheta()) > FULL) {
+                    return result.toArray(new Point2D[0]);
+                }
+                result.add(at(camera, theta, a.radius() + f * (b.radius() - a.radius())));
+            }
+        }
+        return result.toArray(new Point2D[0]);
+    }
+
+    /** Adds an open arrowhead at the last of some points. */
+    private static void openHead(Path2D.Double path, Point2D[] points, double size) {
+        Point2D tip = points[points.length - 1];
+        int back = points.length - 2;
+        while (back > 0 && tip.distance(points[back]) < size) {
+            back--;
+        }
+        double length = tip.distance(points[back]);
+        if (length == 0) {
+            return;
+        }
+        double dx = size * (tip.getX() - points[back].getX()) / length;
+        double dy = size * (tip.getY() - points[back].getY()) / length;
+        path.moveTo(tip.getX() - dx - 0.7 * dy, tip.getY() - dy + 0.7 * dx);
+        path.lineTo(tip.getX(), tip.getY());
+        path.lineTo(tip.getX() - dx + 0.7 * dy, tip.getY() - dy - 0.7 * dx);
     }
 
     private void sector(Ink ink, PlanLayout layout) {
@@ -544,7 +583,6 @@ public final class Plan {
             add(names, layout, 0.5 * (band.from() + band.to()), "grooves", between(band), Sample.GROOVE);
         }
         FilmShape.Band feed = shape.feed();
-        FilmShape.Band dam = shape.dam();
         if (feed != null) {
             String face = shape.flow().film().supply().orElseThrow().face() == org.whither.film.Face.STATOR
                     ? "feed, in the stator"
@@ -552,8 +590,7 @@ public final class Plan {
             add(names, layout, 0.5 * (feed.from() + feed.to()), face, between(feed), Sample.FEED);
         }
         for (FilmShape.Band band : shape.ungrooved()) {
-            String words = band.equals(dam) ? "dam, without grooves" : "land, without grooves";
-            add(names, layout, besideFeed(band, feed), words, between(band), Sample.NONE);
+            add(names, layout, besideFeed(band, feed), name(shape, band), between(band), Sample.NONE);
         }
         add(
                 names,
@@ -617,6 +654,11 @@ public final class Plan {
             ink.dashes(1.25 * ink.unit, 4 * ink.unit, 2.4 * ink.unit);
             ink.pen.draw(line);
         }
+    }
+
+    /** What a ring without grooves is called. */
+    static String name(FilmShape shape, FilmShape.Band band) {
+        return band.equals(shape.dam()) ? "dam, without grooves" : "land, without grooves";
     }
 
     private static double besideFeed(FilmShape.Band band, FilmShape.Band feed) {
@@ -743,19 +785,19 @@ public final class Plan {
         String stretched = stretch >= 1
                 ? "drawn " + Ticks.number(stretch, stretch < 10 ? 1 : 0) + " × too wide across the feed"
                 : "drawn " + Ticks.number(1 / stretch, 1 / stretch < 10 ? 1 : 0) + " × too long along the feed";
+        double length = Ticks.step(1e3 * along * 0.2, 1);
+        String alongWords = Ticks.plain(length) + " mm along";
+        double bar = length * window.width / (1e3 * along);
+        double taken = 20 * ink.unit + Math.max(bar, 0.5 * (bar + ink.width(ink.small, alongWords)));
         ink.write(
                 ink.small,
                 ink.faint,
-                stretched,
+                ink.fitted(ink.small, stretched, window.width - taken),
                 window.getMaxX(),
                 window.getMaxY() + ink.height(ink.small),
                 Ink.Side.RIGHT);
-        double length = Ticks.step(1e3 * along * 0.2, 1);
         ink.scaleBar(
-                window.x + 10 * ink.unit,
-                window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit,
-                length * window.width / (1e3 * along),
-                Ticks.plain(length) + " mm along");
+                window.x + 10 * ink.unit, window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit, bar, alongWords);
     }
 
     private void legend(Ink ink, PlanLayout layout) {
@@ -771,12 +813,16 @@ public final class Plan {
                 words.add(destination.words(conditions));
             }
         }
+        boolean goesOn = paths.stream().anyMatch(Plan::goesOn);
+        if (goesOn) {
+            words.add("open arrow: goes on round");
+        }
         double size = 11 * ink.unit;
         double before = size + 6 * ink.unit;
-        int perRow = (entries.size() + 1) / 2;
+        int perRow = (words.size() + 1) / 2;
         double x = layout.sectorWindow.x;
         double widest = 0;
-        for (int n = 0; n < entries.size(); n++) {
+        for (int n = 0; n < words.size(); n++) {
             // Column by column, two rows.
             if (n % 2 == 0 && n > 0) {
                 x += before + widest + 22 * ink.unit;
@@ -785,6 +831,19 @@ public final class Plan {
             double y = layout.legendBase + (n % 2) * 1.25 * ink.height(ink.small);
             double room = (layout.rightEdge - layout.sectorWindow.x) / perRow * 1.4;
             String text = ink.fitted(ink.small, words.get(n), room);
+            if (n == entries.size()) {
+                Path2D.Double arrow = new Path2D.Double();
+                double middle = y - 0.36 * ink.small.getSize2D();
+                Point2D[] shaft = {new Point2D.Double(x, middle), new Point2D.Double(x + size, middle)};
+                arrow.moveTo(x, middle);
+                arrow.lineTo(x + size, middle);
+                openHead(arrow, shaft, 5 * ink.unit);
+                ink.colour(ink.text);
+                ink.stroke(1.5 * ink.unit);
+                ink.pen.draw(arrow);
+                ink.write(ink.small, ink.text, text, x + before, y, Ink.Side.LEFT);
+                continue;
+            }
             Destination destination = entries.get(n);
             ink.mark(
                     destination.marker(x + size / 2, y - 0.36 * ink.small.getSize2D(), size),
