@@ -35,6 +35,12 @@ public final class Gap {
     /** From beyond the outer diameter and from the left, so that walls and shadows fall towards the eye. */
     private static final Scene.Light LIGHT = Scene.Light.from(0.28, 0.26, 1.4);
 
+    /** Share of the picture's width that a name may take. */
+    private static final double NAME_SHARE = 0.3;
+
+    /** A speed scale whose low end would lie below this share of its high end starts at 0. */
+    private static final double FROM_ZERO = 0.3;
+
     /** Most markers on a path. */
     private static final int MARKERS = 12;
 
@@ -63,8 +69,9 @@ public final class Gap {
         this.every = interval(this.paths);
     }
 
-    /** The narrowest range between round numbers that holds both speeds. */
-    static PictureSettings.Range range(double low, double high) {
+    /** The narrowest range between round numbers that holds both speeds; from 0 where the lower one is not far from it. */
+    static PictureSettings.Range range(double slowest, double high) {
+        double low = slowest < FROM_ZERO * high ? 0 : slowest;
         double step = Ticks.step(Math.max(high - low, 0.05 * high), 8);
         if (!(step > 0)) {
             return new PictureSettings.Range(0, 1);
@@ -420,7 +427,7 @@ public final class Gap {
 
     /** Writes two lines about a picture column and returns the second's baseline. */
     private double twoLines(Ink ink, String heading, String detail, double x, double y) {
-        double room = 0.46 * settings.width();
+        double room = NAME_SHARE * settings.width();
         ink.write(ink.heading, ink.text, ink.fitted(ink.heading, heading, room), x, y, Ink.Side.MIDDLE);
         double second = y + ink.height(ink.small);
         ink.write(ink.small, ink.faint, ink.fitted(ink.small, detail, room), x, second, Ink.Side.MIDDLE);
@@ -431,7 +438,7 @@ public final class Gap {
     private double overBack(Ink ink, Camera camera, double x, String heading, String detail) {
         double half = 0.5
                 * Math.max(
-                        ink.width(ink.heading, ink.fitted(ink.heading, heading, 0.46 * settings.width())),
+                        ink.width(ink.heading, ink.fitted(ink.heading, heading, NAME_SHARE * settings.width())),
                         ink.width(ink.small, detail));
         double highest = settings.height();
         for (int n = 0; n <= 200; n++) {
