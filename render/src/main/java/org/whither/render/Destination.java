@@ -4,6 +4,7 @@ import java.awt.Shape;
 import java.awt.geom.Ellipse2D;
 import java.awt.geom.Path2D;
 import java.awt.geom.Rectangle2D;
+import org.whither.film.Conditions;
 import org.whither.trace.PathEnd;
 
 /**
@@ -38,6 +39,17 @@ enum Destination {
             };
         }
         return end instanceof PathEnd.StillInside ? HELD : UNKNOWN;
+    }
+
+    /** What a legend says of it. */
+    String words(Conditions conditions) {
+        return switch (this) {
+            case INNER -> "to the inner diameter (" + conditions.innerSide() + ")";
+            case OUTER -> "to the outer diameter (" + conditions.outerSide() + ")";
+            case BACK -> "back into the feed";
+            case HELD -> "held in the film";
+            case UNKNOWN -> "not followed to an end";
+        };
     }
 
     /** sRGB 0xRRGGBB. */

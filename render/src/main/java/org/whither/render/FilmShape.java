@@ -45,6 +45,8 @@ final class FilmShape {
     private final double rotorHigh;
     private final double leastThickness;
     private final List<Edge> grooveEdges;
+    private final List<Band> grooveBands;
+    private final Band dam;
 
     FilmShape(FilmFlow flow) {
         this.flow = flow;
@@ -71,6 +73,8 @@ final class FilmShape {
         this.rotorHigh = high;
         this.leastThickness = thin;
         this.grooveEdges = List.copyOf(findGrooveEdges());
+        this.grooveBands = grooved() ? List.copyOf(bands(true)) : List.of();
+        this.dam = findDam();
     }
 
     FilmFlow flow() {
@@ -265,21 +269,52 @@ final class FilmShape {
 
     /** The bands in which grooves lie; empty for a face without grooves. */
     List<Band> grooveBands() {
-        return grooved() ? bands(true) : List.of();
+        return grooveBands;
     }
 
-    /** The dam: the widest ring without grooves, where the face has grooves; else null. */
+    /** The rings of a grooved face that no groove crosses, from the inner to the outer diameter; else empty. */
+    List<Band> ungrooved() {
+        return grooved() ? bands(false) : List.of();
+    }
+
+    /**
+     * The dam: of the rings without grooves the one at which the grooves end and towards which they raise the pressure,
+     * that is, the one nearest to the highest pressure; null where the face has no grooves or they cross all of it.
+     */
     Band dam() {
-        if (!grooved()) {
-            return null;
-        }
-        Band widest = null;
-        for (Band band : bands(false)) {
-            if (widest == null || band.width() > widest.width()) {
-                widest = band;
+        return dam;
+    }
+
+    private Band findDam() {
+        double peak = pressurePeak();
+        Band nearest = null;
+        double least = Double.POSITIVE_INFINITY;
+        for (Band band : ungrooved()) {
+            double away = Math.max(0, Math.max(band.from() - peak, peak - band.to()));
+            if (away < least) {
+                least = away;
+                nearest = band;
             }
         }
-        return widest;
+        return nearest;
+    }
+
+    /** Radius of the highest pressure at mid film, of the corners of the cells (m). */
+    private double pressurePeak() {
+        double most = Double.NEGATIVE_INFINITY;
+        double peak = grid.innerRadius();
+        for (int i = 0; i < grid.cellsTheta(); i++) {
+            for (int j = 0; j < grid.cellsRadial(); j++) {
+                for (int c = 0; c < 4; c++) {
+                    double p = pressure(i, j, cornerTheta(i, j, c), cornerRadius(j, c));
+                    if (p > most) {
+                        most = p;
+                        peak = cornerRadius(j, c);
+                    }
+                }
+            }
+        }
+        return peak;
     }
 
     /** The radii between which the feed lies, or null where there is no feed. */

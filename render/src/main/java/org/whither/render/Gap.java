@@ -6,32 +6,49 @@ import java.awt.geom.Point2D;
 import java.awt.geom.Rectangle2D;
 import java.awt.image.BufferedImage;
 import java.util.ArrayList;
+import java.util.EnumSet;
 import java.util.List;
+import java.util.Set;
+import java.util.function.BiConsumer;
 import org.whither.film.Face;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
 import org.whither.trace.Path;
-import org.whither.trace.PathPoint;
 
 /**
  * A look into the film, its thickness drawn too large by a factor that the picture states: the rotor with its grooves
- * below, the stator above, cut away in front, and paths as tubes coloured by speed. The eye is outside the outer diameter
- * and above, so +θ runs to the right.
+ * below, a block of the stator above, the rest of it cut away, and paths as tubes coloured by speed. The eye is over the
+ * bore and above, so that, as in a plan seen from the stator, the outer diameter is up and +θ runs to the left.
  */
 public final class Gap {
-    /** Height of the eye above the plane of the faces (rad). */
-    private static final double ELEVATION = Math.toRadians(33);
+    /**
+     * Height of the eye above the plane of the faces (rad): a groove is drawn about as deep as it is wide, and from lower
+     * down its floor is hidden by the land in front.
+     */
+    private static final double ELEVATION = Math.toRadians(54);
 
-    /** How far the eye is turned from the middle of the part shown, towards −θ (rad). */
-    private static final double ASIDE = Math.toRadians(20);
+    /** How far the eye is turned from the middle of the part shown towards the open end, to look into the grooves (rad). */
+    private static final double ASIDE = Math.toRadians(6);
 
     private static final double FIELD_OF_VIEW = Math.toRadians(22);
+
+    /** From beyond the outer diameter and from the left, so that walls and shadows fall towards the eye. */
+    private static final Scene.Light LIGHT = Scene.Light.from(0.28, 0.26, 1.4);
+
+    /** Share of the picture's width that a name may take. */
+    private static final double NAME_SHARE = 0.3;
+
+    /** A speed scale whose low end would lie below this share of its high end starts at 0. */
+    private static final double FROM_ZERO = 0.3;
+
+    /** Most markers on a path. */
+    private static final int MARKERS = 12;
 
     private final GapScene gap;
     private final FilmShape shape;
     private final FilmGrid grid;
     private final PictureSettings settings;
-    private final List<Path> paths;
+    private final List<ShownPath> paths;
     private final PictureSettings.Range range;
     private final double fastest;
     private final double slowest;
@@ -40,38 +57,34 @@ public final class Gap {
     private Gap(FilmFlow flow, List<Path> paths, GapSettings settings) {
         this.shape = new FilmShape(flow);
         this.grid = shape.grid();
-        this.gap = new GapScene(shape, settings.exaggeration());
+        this.gap = new GapScene(shape, settings.exaggeration(), paths);
         this.settings = settings.picture();
-        this.paths = paths;
-        double most = 0;
-        double least = Double.POSITIVE_INFINITY;
-        for (Path path : paths) {
-            for (PathPoint point : path.points()) {
-                most = Math.max(most, point.speed());
-                least = Math.min(least, point.speed());
-            }
+        this.paths = ShownPath.of(paths, gap);
+        double[] speeds = ShownPath.speeds(this.paths, 0.005);
+        this.slowest = speeds == null ? 0 : speeds[0];
+        this.fastest = speeds == null ? 0 : speeds[2];
+        this.range = this.settings
+                .speedRange()
+                .orElse(speeds == null ? new PictureSettings.Range(0, 1) : range(speeds[0], speeds[1]));
+        this.every = interval(this.paths);
+    }
+
+    /** The narrowest range between round numbers that holds both speeds; from 0 where the lower one is not far from it. */
+    static PictureSettings.Range range(double slowest, double high) {
+        double low = slowest < FROM_ZERO * high ? 0 : slowest;
+        double step = Ticks.step(Math.max(high - low, 0.05 * high), 8);
+        if (!(step > 0)) {
+            return new PictureSettings.Range(0, 1);
         }
-        this.fastest = most;
-        this.slowest = least;
-        this.range = this.settings.speedRange().orElse(new PictureSettings.Range(0, most > 0 ? upper(most) : 1));
-        this.every = interval(paths);
+        double first = step * Math.floor(low / step + 1e-9);
+        double last = step * Math.ceil(high / step - 1e-9);
+        return new PictureSettings.Range(first, last > first ? last : first + step);
     }
 
-    /** The scale ends at a round number not far above the highest speed. */
-    private static double upper(double most) {
-        double step = Ticks.step(most, 12);
-        return step * Math.ceil(most / step - 1e-9);
-    }
-
-    /** A round time that puts about eight markers on a path of middling duration (s). */
-    private static double interval(List<Path> paths) {
-        double[] times = paths.stream()
-                .filter(path -> !path.points().isEmpty())
-                .mapToDouble(path -> path.points().get(path.points().size() - 1).time())
-                .filter(time -> time > 0)
-                .sorted()
-                .toArray();
-        return times.length == 0 ? 1 : Ticks.step(times[times.length / 2], 9);
+    /** A round time of which the longest shown path has as many as there may be markers (s). */
+    private static double interval(List<ShownPath> paths) {
+        double longest = paths.stream().mapToDouble(ShownPath::duration).max().orElse(0);
+        return longest > 0 ? Ticks.step(longest, MARKERS - 1) : 1;
     }
 
     /**
@@ -94,16 +107,18 @@ public final class Gap {
         double unit = Ink.unit(settings);
         Rectangle window = new Rectangle(0, 0, settings.width(), settings.height());
         // The legend below is three lines of small letters, which do not shrink as far as the picture does.
-        double below = 74 * unit + 6.9 * Math.max(Ink.LEAST_SMALL, Ink.SMALL * unit);
+        double below = 62 * unit + 6.9 * Math.max(Ink.LEAST_SMALL, Ink.SMALL * unit);
+        // So are the lines above it, and the names over the far rim.
+        double above = Math.max(128 * unit, 64 * unit + 4.6 * Math.max(9.6, 13 * unit));
         Rectangle2D room = new Rectangle2D.Double(
-                125 * unit, 116 * unit, settings.width() - 175 * unit, settings.height() - 116 * unit - below);
+                74 * unit, above, settings.width() - 128 * unit, settings.height() - above - below);
         List<double[]> extent = gap.extent();
+        double aside = gap.upstreamIsTo ? ASIDE : -ASIDE;
         double[] away = {
-            Math.cos(ELEVATION) * Math.cos(ASIDE), -Math.cos(ELEVATION) * Math.sin(ASIDE), Math.sin(ELEVATION)
+            -Math.cos(ELEVATION) * Math.cos(aside), -Math.cos(ELEVATION) * Math.sin(aside), Math.sin(ELEVATION)
         };
-        double[] right = {Math.sin(ASIDE), Math.cos(ASIDE), 0};
-        double[] up = {
-            -Math.sin(ELEVATION) * Math.cos(ASIDE), Math.sin(ELEVATION) * Math.sin(ASIDE), Math.cos(ELEVATION)
+        double[] right = {Math.sin(aside), -Math.cos(aside), 0};
+        double[] up = {Math.sin(ELEVATION) * Math.cos(aside), Math.sin(ELEVATION) * Math.sin(aside), Math.cos(ELEVATION)
         };
         double[] target = new double[3];
         double size = 0;
@@ -154,7 +169,7 @@ public final class Gap {
         Camera camera = camera(gap, settings);
         List<Scene.Item> items = new ArrayList<>(gap.rings());
         items.addAll(gap.paths(paths, range, every));
-        Scene scene = new Scene(items, Scene.Light.from(0.35, -0.75, 1.15));
+        Scene scene = new Scene(items, LIGHT);
         BufferedImage image;
         try (Canvas canvas = new Canvas(settings.width(), settings.height())) {
             image = canvas.draw(Ink.paper(settings), List.of(new Canvas.View(scene, camera)));
@@ -183,47 +198,107 @@ public final class Gap {
         ink.caution(room, margin, cautionBase);
         double barBase = cautionBase - ink.ascent(ink.small) - 12 * u - 2.1 * ink.ascent(ink.small) - 16 * u;
         if (!paths.isEmpty()) {
-            double length = 0.36 * settings.width();
+            double length = 0.33 * settings.width();
             Rectangle2D bar = new Rectangle2D.Double(settings.width() - margin - length, barBase, length, 12 * u);
             ink.colourBar(
                     bar,
                     ColourScale.SPEED,
                     range.low(),
                     range.high(),
-                    slowest < range.low(),
-                    fastest > range.high(),
+                    slowest < range.low() - 1e-9,
+                    fastest > range.high() + 1e-9,
                     "speed of the gas " + Words.frame(settings.speedFrame()) + ", m/s");
-            double x = margin + 9 * u;
-            double y = barBase + 12 * u - 2.15 * ink.height(ink.small);
-            ink.write(ink.small, ink.text, gap.part(), margin, y, Ink.Side.LEFT);
-            y += 1.15 * ink.height(ink.small);
-            ink.colour(GapScene.STATOR);
-            ink.stroke(2.2 * u);
-            ink.line(x - 8 * u, y - 0.35 * ink.small.getSize2D(), x + 8 * u, y - 0.35 * ink.small.getSize2D());
-            ink.write(
-                    ink.small, ink.text, "edge of the stator face where it is cut away", x + 15 * u, y, Ink.Side.LEFT);
-            y += 1.15 * ink.height(ink.small);
-            ink.mark(Destination.HELD.marker(x, y - 0.35 * ink.small.getSize2D(), 10 * u), 0xf4f4f2, u);
-            ink.write(ink.small, ink.text, "one marker each " + time(every), x + 15 * u, y, Ink.Side.LEFT);
-            String each = "one marker each " + time(every);
-            ink.write(
-                    ink.small,
-                    ink.faint,
-                    ";  tubes and markers are not drawn to size",
-                    x + 15 * u + ink.width(ink.small, each),
-                    y,
-                    Ink.Side.LEFT);
         }
+        legend(ink, margin, barBase + 12 * u - 2.15 * ink.height(ink.small), 0.62 * settings.width() - margin);
+    }
+
+    /** An entry of the legend: its sign, drawn about a point, and its words. */
+    private record Entry(BiConsumer<Double, Double> sign, String words) {}
+
+    /** Three rows at the foot, column by column. */
+    private void legend(Ink ink, double left, double firstBase, double room) {
+        double u = ink.unit;
+        var conditions = shape.flow().film().conditions();
+        List<Entry> entries = new ArrayList<>();
+        Set<Destination> seen = EnumSet.noneOf(Destination.class);
+        paths.forEach(path -> seen.add(path.destination()));
+        for (Destination destination : seen) {
+            entries.add(new Entry(
+                    (x, y) -> ink.mark(destination.marker(x, y, 10 * u), destination.colour(), u),
+                    destination.words(conditions)));
+        }
+        boolean ends = paths.stream().anyMatch(ShownPath::whole);
+        boolean goesOn = paths.stream().anyMatch(path -> !path.whole());
+        if (ends) {
+            entries.add(new Entry((x, y) -> filledHead(ink, x, y), "the path leaves the film"));
+        }
+        if (goesOn) {
+            entries.add(new Entry((x, y) -> openHead(ink, x, y), "it goes on outside the part shown"));
+        }
+        if (!paths.isEmpty()) {
+            entries.add(new Entry(
+                    (x, y) -> ink.mark(Destination.HELD.marker(x, y, 7 * u), 0xf4f4f2, u),
+                    "one marker each " + time(every) + "; tubes not to size"));
+        }
+        entries.add(new Entry(
+                (x, y) -> {
+                    ink.colour(GapScene.STATOR);
+                    ink.stroke(2.2 * u);
+                    ink.line(x - 7 * u, y, x + 7 * u, y);
+                },
+                "edge of the cut-away stator"));
+        double pitch = 1.18 * ink.height(ink.small);
+        double sign = 18 * u;
+        int rows = 3;
+        double x = left;
+        for (int first = 0; first < entries.size(); first += rows) {
+            double wide = 0;
+            for (int n = first; n < Math.min(entries.size(), first + rows); n++) {
+                double y = firstBase + (n - first) * pitch;
+                Entry entry = entries.get(n);
+                double most = left + room - x - sign;
+                if (most < 3 * ink.small.getSize2D()) {
+                    continue;
+                }
+                entry.sign().accept(x + 7 * u, y - 0.35 * ink.small.getSize2D());
+                String words = ink.fitted(ink.small, entry.words(), most);
+                ink.write(ink.small, ink.text, words, x + sign, y, Ink.Side.LEFT);
+                wide = Math.max(wide, ink.width(ink.small, words));
+            }
+            x += sign + wide + 18 * u;
+        }
+    }
+
+    private static void filledHead(Ink ink, double x, double y) {
+        double u = ink.unit;
+        ink.arrow(
+                new Point2D[] {
+                    new Point2D.Double(x - 8 * u, y), new Point2D.Double(x, y), new Point2D.Double(x + 7 * u, y)
+                },
+                1.8 * u,
+                ColourScale.SPEED.colour(0.35));
+    }
+
+    private static void openHead(Ink ink, double x, double y) {
+        double u = ink.unit;
+        ink.colour(ColourScale.SPEED.colour(0.35));
+        ink.stroke(1.8 * u);
+        ink.line(x - 8 * u, y, x - 1 * u, y);
+        Path2D.Double head = new Path2D.Double();
+        head.moveTo(x, y - 4.5 * u);
+        head.lineTo(x + 7 * u, y);
+        head.lineTo(x, y + 4.5 * u);
+        ink.pen.draw(head);
     }
 
     private String exaggerationWords() {
         double factor = gap.exaggeration;
         if (factor == 1) {
-            return "Drawn true to scale";
+            return "Drawn true to scale  ·  " + gap.part();
         }
         String number = Ticks.plain(factor);
         return "Lengths across the film are drawn " + number + " times " + (factor > 1 ? "too large" : "their size")
-                + "; light falls on the drawn shape";
+                + "  ·  " + gap.part();
     }
 
     static String time(double seconds) {
@@ -240,20 +315,29 @@ public final class Gap {
         var conditions = shape.flow().film().conditions();
         double outer = grid.outerRadius();
         double inner = grid.innerRadius();
+        faceWords(ink, camera);
+        ends(ink, camera);
 
         // The rotation arrow lies on the rotor's side, in front.
         double rate = conditions.rotationRate();
-        double mid = 0.5 * (gap.bottom + gap.height(shape.rotorLow()));
+        double mid = 0.5 * (gap.bottom + gap.height(shape.rotorHigh()));
         if (rate != 0) {
-            ink.arrow(rotationArrow(gap, camera, rate, 1e3 * outer, mid), 3 * u, 0xf6f3ee);
+            ink.arrow(rotationArrow(gap, camera, rate, 1e3 * inner, mid), 3 * u, 0xf6f3ee);
         }
         String rotor = rate == 0 ? "rotor stands still" : "rotor turns, " + Words.speed(rate);
-        under(ink, camera, 0.36, rotor, "seen from outside, stator above");
-        under(ink, camera, 0.7, conditions.outerSide() + " side", "outside, " + Words.bar(conditions.pressureOuter()));
+        double x = at(camera, gap.middle, inner, gap.bottom).getX();
+        String seen = "seen over the bore, stator above";
+        double wide = 0.5 * Math.max(ink.width(ink.heading, rotor), ink.width(ink.small, seen)) + 8 * u;
+        double y = below(camera, x - wide, x + wide) + 10 * u + ink.ascent(ink.heading);
+        y = twoLines(ink, rotor, seen, x, y);
+        twoLines(
+                ink,
+                conditions.innerSide() + " side",
+                "inside, " + Words.bar(conditions.pressureInner()),
+                x,
+                y + 12 * u + ink.ascent(ink.heading));
 
-        double backTheta = gap.from + 0.1 * (gap.to - gap.from);
-        Point2D back = at(camera, backTheta, inner, gap.height(gap.statorAt(backTheta, inner)));
-        double statorTheta = gap.cut + 0.5 * (gap.to - gap.cut);
+        double statorTheta = gap.upstreamIsTo ? 0.5 * (gap.openTo + gap.to) : 0.5 * (gap.from + gap.openFrom);
         Point2D stator = at(camera, statorTheta, 0.5 * (inner + outer), gap.top);
         ink.write(
                 ink.heading,
@@ -263,70 +347,117 @@ public final class Gap {
                 stator.getY() + 0.3 * ink.heading.getSize2D(),
                 Ink.Side.MIDDLE);
 
-        double most = Double.POSITIVE_INFINITY;
+        double downstream = gap.upstreamIsTo ? 1 : -1;
+        String outside = "outside, " + Words.bar(conditions.pressureOuter());
+        Point2D edge = at(camera, gap.middle, outer, gap.height(shape.rotorHigh()));
+        double backX = edge.getX() + downstream * 0.2 * settings.width();
+        overBack(ink, camera, backX, conditions.outerSide() + " side", outside);
+
         FilmShape.Band feed = shape.feed();
         if (feed != null) {
             boolean above = shape.flow().film().supply().orElseThrow().face() == Face.STATOR;
-            double theta = gap.from + 0.4 * (gap.to - gap.from);
-            double r = 0.5 * (feed.from() + feed.to());
+            double theta = gap.middle;
+            double r = feed.to();
             Point2D p = at(camera, theta, r, gap.height(above ? gap.statorAt(theta, r) : gap.rotorAt(theta, r)));
-            Point2D rim = at(camera, theta, inner, gap.height(gap.statorAt(theta, inner)));
-            String enters = "supply gas enters here";
-            most = p.getX() - 24 * u - ink.width(ink.small, enters) - 16 * u;
-            callOut(
-                    ink,
-                    p,
-                    new Point2D.Double(p.getX() - 24 * u, rim.getY() - 40 * u),
-                    "feed in the " + (above ? "stator" : "rotor"),
-                    enters,
-                    Ink.Side.RIGHT);
+            double wordsX = edge.getX() - downstream * 0.03 * settings.width();
+            double base = overBack(
+                    ink, camera, wordsX, "feed in the " + (above ? "stator" : "rotor"), "supply gas enters here");
+            ink.colour(ink.faint);
+            ink.stroke(Math.max(1, ink.unit));
+            ink.line(wordsX, base + 4 * u, p.getX(), p.getY());
+            ink.mark(Destination.HELD.marker(p.getX(), p.getY(), 5 * u), GapScene.FEED, u);
         }
-        String inside = "inside, " + Words.bar(conditions.pressureInner());
-        double x = Math.min(back.getX() - 30 * u, most);
-        callOut(
-                ink,
-                back,
-                new Point2D.Double(x, back.getY() - 40 * u),
-                conditions.innerSide() + " side",
-                inside,
-                Ink.Side.RIGHT);
         scales(ink, camera);
     }
 
-    /** Writes two lines under the front edge of the drawn block, clear of it, from a share of its length on. */
-    private void under(Ink ink, Camera camera, double share, String heading, String detail) {
-        double x = at(camera, gap.from + share * (gap.to - gap.from), grid.outerRadius(), gap.bottom)
-                .getX();
-        double room = settings.width() - 20 * ink.unit - x;
-        heading = ink.fitted(ink.heading, heading, room);
-        detail = ink.fitted(ink.small, detail, room);
-        double wide = Math.max(ink.width(ink.heading, heading), ink.width(ink.small, detail));
-        double y = below(camera, x, x + wide) + 10 * ink.unit + ink.ascent(ink.heading);
-        ink.write(ink.heading, ink.text, heading, x, y, Ink.Side.LEFT);
-        ink.write(ink.small, ink.faint, detail, x, y + ink.height(ink.small), Ink.Side.LEFT);
+    /** Names what the open rotor face shows. */
+    private void faceWords(Ink ink, Camera camera) {
+        List<Point2D> avoid = new ArrayList<>();
+        for (ShownPath path : paths) {
+            for (int n = 0; n < path.size(); n++) {
+                double[] p = gap.place(path.theta(n), path.radius(n), path.z(n));
+                avoid.add(camera.project(p[0], p[1], p[2]));
+            }
+        }
+        FilmShape.Band feed = shape.feed();
+        for (int n = 0; n <= 80; n++) {
+            double theta = gap.openFrom + (gap.openTo - gap.openFrom) * n / 80;
+            avoid.add(at(camera, theta, grid.innerRadius(), gap.height(gap.statorAt(theta, grid.innerRadius()))));
+            avoid.add(at(camera, theta, grid.outerRadius(), gap.height(gap.statorAt(theta, grid.outerRadius()))));
+            if (feed != null) {
+                avoid.add(at(camera, theta, feed.from(), gap.height(gap.statorAt(theta, feed.from()))));
+                avoid.add(at(camera, theta, feed.to(), gap.height(gap.statorAt(theta, feed.to()))));
+            }
+        }
+        FaceWords places = new FaceWords(shape, gap, camera, avoid);
+        for (FaceWords.Kind kind : FaceWords.Kind.values()) {
+            double wide = ink.width(ink.body, kind.words());
+            FaceWords.Place place = places.find(kind, wide, 0.9 * ink.body.getSize2D());
+            if (place != null) {
+                boolean groove = kind == FaceWords.Kind.GROOVE;
+                double drop = 0.36 * ink.body.getSize2D();
+                ink.writeOver(
+                        ink.body,
+                        groove ? 0xfff6e6 : 0x2a1d10,
+                        groove ? 0x5c4630 : 0xdcb183,
+                        kind.words(),
+                        place.x() - drop * Math.sin(place.angle()),
+                        place.y() + drop * Math.cos(place.angle()),
+                        place.angle(),
+                        Ink.Side.MIDDLE);
+            }
+        }
     }
 
-    private static void callOut(Ink ink, Point2D place, Point2D words, String heading, String detail, Ink.Side side) {
-        ink.colour(ink.faint);
-        ink.stroke(Math.max(1, ink.unit));
-        double gapBelow = ink.height(ink.small) + 4 * ink.unit;
-        Path2D.Double leader = new Path2D.Double();
-        leader.moveTo(place.getX(), place.getY());
-        leader.lineTo(words.getX(), words.getY() + gapBelow);
-        ink.pen.draw(leader);
-        ink.mark(Destination.HELD.marker(place.getX(), place.getY(), 5 * ink.unit), ink.text, ink.unit);
-        double room = words.getX() - 20 * ink.unit;
-        heading = ink.fitted(ink.heading, heading, room);
-        double x = words.getX() + (side == Ink.Side.LEFT ? -4 : side == Ink.Side.RIGHT ? 4 : 0) * ink.unit;
-        ink.write(ink.heading, ink.text, heading, x, words.getY(), side);
-        ink.write(ink.small, ink.faint, detail, x, words.getY() + ink.height(ink.small), side);
+    /** Marks at the paths' ends, as in the plan: where their gas goes. */
+    private void ends(Ink ink, Camera camera) {
+        double further = 9 * gap.tubeRadius();
+        for (ShownPath path : paths) {
+            double[][] end = gap.endOf(path, further);
+            if (gap.hidden(end[0], camera.eye())) {
+                continue;
+            }
+            Point2D p = camera.project(end[1][0], end[1][1], end[1][2]);
+            ink.mark(
+                    path.destination().marker(p.getX(), p.getY(), 11 * ink.unit),
+                    path.destination().colour(),
+                    1.2 * ink.unit);
+        }
+    }
+
+    /** Writes two lines about a picture column and returns the second's baseline. */
+    private double twoLines(Ink ink, String heading, String detail, double x, double y) {
+        double room = NAME_SHARE * settings.width();
+        ink.write(ink.heading, ink.text, ink.fitted(ink.heading, heading, room), x, y, Ink.Side.MIDDLE);
+        double second = y + ink.height(ink.small);
+        ink.write(ink.small, ink.faint, ink.fitted(ink.small, detail, room), x, second, Ink.Side.MIDDLE);
+        return second;
+    }
+
+    /** Writes two lines over the far rim, clear of it, and returns the second's baseline. */
+    private double overBack(Ink ink, Camera camera, double x, String heading, String detail) {
+        double half = 0.5
+                * Math.max(
+                        ink.width(ink.heading, ink.fitted(ink.heading, heading, NAME_SHARE * settings.width())),
+                        ink.width(ink.small, detail));
+        double highest = settings.height();
+        for (int n = 0; n <= 200; n++) {
+            double theta = gap.from + (gap.to - gap.from) * n / 200;
+            boolean open = theta >= gap.openFrom && theta <= gap.openTo;
+            double r = grid.outerRadius();
+            Point2D p = at(camera, theta, r, open ? gap.height(gap.statorAt(theta, r)) : gap.top);
+            if (Math.abs(p.getX() - x) <= half + 6 * ink.unit) {
+                highest = Math.min(highest, p.getY());
+            }
+        }
+        return twoLines(ink, heading, detail, x, highest - 12 * ink.unit - ink.height(ink.small));
     }
 
     /** The lowest place of the drawn block between two picture columns (pixels from the top). */
     private double below(Camera camera, double left, double right) {
         double lowest = 0;
         for (int n = 0; n <= 200; n++) {
-            Point2D p = at(camera, gap.from + (gap.to - gap.from) * n / 200, grid.outerRadius(), gap.bottom);
+            Point2D p = at(camera, gap.from + (gap.to - gap.from) * n / 200, grid.innerRadius(), gap.bottom);
             if (p.getX() >= left && p.getX() <= right) {
                 lowest = Math.max(lowest, p.getY());
             }
@@ -339,9 +470,9 @@ public final class Gap {
         return camera.project(p[0], p[1], drawnZ);
     }
 
-    /** Points along the rotation arrow, tail to tip, in the picture: on the rotor's outer side, in its sense of turning. */
+    /** Points along the rotation arrow, tail to tip, in the picture: on the rotor's inner side, in its sense of turning. */
     static Point2D[] rotationArrow(GapScene gap, Camera camera, double rate, double radius, double z) {
-        double half = 0.16 * (gap.to - gap.from) * Math.signum(rate);
+        double half = 0.12 * (gap.to - gap.from) * Math.signum(rate);
         Point2D[] points = new Point2D[41];
         for (int n = 0; n < points.length; n++) {
             double theta = gap.middle - half + 2 * half * n / (points.length - 1);
@@ -350,66 +481,76 @@ public final class Gap {
         return points;
     }
 
-    /** A scale along the face at the lower front edge, and one across the film at the front corner. */
+    /** A scale along the lower front edge, and one across the film at the open end. */
     private void scales(Ink ink, Camera camera) {
         double u = ink.unit;
+        double inner = grid.innerRadius();
         double outer = grid.outerRadius();
-        // Along the front edge of the underside, from the left corner.
-        double arc = 1e3 * outer * (gap.to - gap.from);
-        double length = Ticks.step(0.22 * arc, 1);
-        Path2D.Double bar = new Path2D.Double();
-        double first = gap.from;
-        double last = gap.from + length / (1e3 * outer);
+        // Along the front edge of the underside, from the open end inwards.
+        double arc = 1e3 * inner * (gap.to - gap.from);
+        double length = Ticks.step(0.16 * arc, 1);
+        double way = gap.upstreamIsTo ? 1 : -1;
+        double end = gap.upstreamIsTo ? gap.from : gap.to;
+        double first = end + way * 0.02 * (gap.to - gap.from);
+        double last = first + way * length / (1e3 * inner);
         double drop = 9 * u;
+        Path2D.Double bar = new Path2D.Double();
+        Point2D middle = null;
+        double lowest = 0;
         for (int n = 0; n <= 24; n++) {
-            Point2D p = at(camera, first + (last - first) * n / 24, outer, gap.bottom);
-            if (n == 0) {
-                bar.moveTo(p.getX(), p.getY() + drop - 4 * u);
-                bar.lineTo(p.getX(), p.getY() + drop + 4 * u);
-                bar.moveTo(p.getX(), p.getY() + drop);
-            } else {
-                bar.lineTo(p.getX(), p.getY() + drop);
+            Point2D p = at(camera, first + (last - first) * n / 24, inner, gap.bottom);
+            double y = p.getY() + drop;
+            lowest = Math.max(lowest, y);
+            middle = n == 12 ? p : middle;
+            if (n == 0 || n == 24) {
+                bar.moveTo(p.getX(), y - 4 * u);
+                bar.lineTo(p.getX(), y + 4 * u);
             }
-            if (n == 24) {
-                bar.moveTo(p.getX(), p.getY() + drop - 4 * u);
-                bar.lineTo(p.getX(), p.getY() + drop + 4 * u);
+            if (n == 0) {
+                bar.moveTo(p.getX(), y);
+            } else if (n == 24) {
+                Point2D before = at(camera, first + (last - first) * 23 / 24, inner, gap.bottom);
+                bar.moveTo(before.getX(), before.getY() + drop);
+                bar.lineTo(p.getX(), y);
+            } else {
+                bar.lineTo(p.getX(), y);
             }
         }
         ink.colour(ink.text);
         ink.stroke(Math.max(1.2, 1.6 * u));
         ink.pen.draw(bar);
-        String along = Ticks.plain(length) + " mm along the outer diameter";
-        Point2D start = at(camera, first, outer, gap.bottom);
-        double base0 = below(camera, start.getX(), start.getX() + ink.width(ink.small, along));
-        ink.write(
-                ink.small, ink.text, along, start.getX(), base0 + drop + 8 * u + ink.ascent(ink.small), Ink.Side.LEFT);
-
-        // Across the film, beside the front left corner.
-        double thick = gap.statorAt(gap.from, outer) - gap.rotorAt(gap.from, outer);
-        double micrometres = Ticks.step(1e6 * thick, 1);
-        micrometres = micrometres > 1e6 * thick * 1.05 ? Ticks.step(0.5e6 * thick, 1) : micrometres;
-        double base = gap.rotorAt(gap.from, outer);
-        Point2D a = at(camera, gap.from, outer, gap.height(base));
-        Point2D b = at(camera, gap.from, outer, gap.height(base + 1e-6 * micrometres));
-        double x = a.getX() - 12 * u;
-        double shift = -12 * u;
-        ink.colour(ink.text);
-        ink.line(a.getX() + shift, a.getY(), b.getX() + shift, b.getY());
-        ink.line(x - 4 * u, a.getY(), x + 4 * u, a.getY());
-        ink.line(b.getX() + shift - 4 * u, b.getY(), b.getX() + shift + 4 * u, b.getY());
         ink.write(
                 ink.small,
                 ink.text,
-                Ticks.plain(micrometres) + " µm",
-                x - 8 * u,
-                0.5 * (a.getY() + b.getY()),
-                Ink.Side.RIGHT);
+                Ticks.plain(length) + " mm along the bore",
+                middle.getX(),
+                lowest + 6 * u + ink.ascent(ink.small),
+                Ink.Side.MIDDLE);
+
+        // Across the film, at the stator's end, where both faces are seen.
+        end = gap.upstreamIsTo ? gap.to : gap.from;
+        double base = gap.rotorAt(end, outer);
+        double thick = gap.statorAt(end, outer) - base;
+        double micrometres = Ticks.step(1e6 * thick, 1);
+        micrometres = micrometres > 1e6 * thick * 1.05 ? Ticks.step(0.5e6 * thick, 1) : micrometres;
+        Point2D a = at(camera, end, outer, gap.height(base));
+        Point2D b = at(camera, end, outer, gap.height(base + 1e-6 * micrometres));
+        Ink.Side side = gap.upstreamIsTo ? Ink.Side.RIGHT : Ink.Side.LEFT;
+        double x = a.getX() - way * 10 * u;
+        ink.colour(ink.text);
+        ink.line(x, a.getY(), x, b.getY());
+        ink.line(x - 4 * u, a.getY(), x + 4 * u, a.getY());
+        ink.line(x - 4 * u, b.getY(), x + 4 * u, b.getY());
+        String micro = Ticks.plain(micrometres) + " µm";
+        double room = (gap.upstreamIsTo ? x : settings.width() - x) - 18 * u;
+        double y = 0.5 * (a.getY() + b.getY());
+        ink.write(ink.small, ink.text, ink.fitted(ink.small, micro, room), x - way * 7 * u, y, side);
         ink.write(
                 ink.small,
                 ink.faint,
-                "across the film",
-                x - 8 * u,
-                0.5 * (a.getY() + b.getY()) + ink.height(ink.small),
-                Ink.Side.RIGHT);
+                ink.fitted(ink.small, "across", room),
+                x - way * 7 * u,
+                y + ink.height(ink.small),
+                side);
     }
 }

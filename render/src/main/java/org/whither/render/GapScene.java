@@ -1,10 +1,12 @@
 package org.whither.render;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import org.whither.film.Face;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
+import org.whither.film.Frame;
 import org.whither.trace.Path;
 import org.whither.trace.PathPoint;
 
@@ -18,23 +20,39 @@ import org.whither.trace.PathPoint;
  * light are those of the drawn shape: light tells of the drawing, not of true slopes.
  */
 final class GapScene {
-    private static final int ROTOR = 0xb3a594;
-    private static final int ROTOR_CUT = 0x877b6e;
+    static final int ROTOR = 0xb9946c;
+    private static final int ROTOR_CUT = 0x836a50;
+    private static final int GROOVE_EDGE = 0x3d2c1c;
     static final int STATOR = 0x7f8b98;
-    private static final int STATOR_CUT = 0x929eab;
+    private static final int STATOR_CUT = 0x97a2ae;
     /** The feed: the reddish purple of Okabe and Ito, which no scale and no destination has. */
     static final int FEED = 0xcc79a7;
 
+    /** How much of the ring is shown (rad): enough to follow a path along several grooves. */
+    private static final double WISH = Math.toRadians(90);
+
+    /** Share of the part shown over which the stator is left standing. */
+    private static final double STANDING = 0.17;
+
+    /** How open the stator face is to the sky, from 0 to 1. */
+    private static final double UNDER = 0.7;
+
     private final FilmShape shape;
+
     private final FilmFlow flow;
     private final FilmGrid grid;
+    private final Sky sky;
     final double exaggeration;
     /** First and last angle of the part shown (rad). */
     final double from;
 
     final double to;
-    /** Angle up to which the stator is cut away (rad). */
-    final double cut;
+    /** First and last angle of the open part, over which the stator is cut away (rad). */
+    final double openFrom;
+
+    final double openTo;
+    /** Whether the gas comes from the end at {@link #to}, where the stator is left standing. */
+    final boolean upstreamIsTo;
     /** Angle that points along x (rad). */
     final double middle;
     /** Height of the origin of z (m). */
@@ -49,6 +67,18 @@ final class GapScene {
     private final double notch;
 
     GapScene(FilmShape shape, double exaggeration) {
+        this(shape, exaggeration, List.of());
+    }
+
+    /**
+     * A part of the ring.
+     *
+     * @param shape the film's shape
+     * @param exaggeration factor on lengths across the film
+     * @param paths the paths to be shown: they tell which end is upstream and, where a sector is longer than the part
+     *     shown, which part is worth showing
+     */
+    GapScene(FilmShape shape, double exaggeration, List<Path> paths) {
         this.shape = shape;
         this.flow = shape.flow();
         this.grid = shape.grid();
@@ -56,15 +86,24 @@ final class GapScene {
         double span = grid.outerRadius() - grid.innerRadius();
         double mean = 0.5 * (grid.outerRadius() + grid.innerRadius());
         double pitch = grid.pitch();
-        // Whole sectors, about three times as long as the face is wide; of a longer sector, as much.
-        double wish = 2.9 * span / mean;
+        // Of a narrow face more of the ring, so that the picture does not grow flat and paths have room.
+        double wish = Math.min(Math.toRadians(120), WISH * Math.max(1, 0.26 / (span / mean)));
         double whole = Math.max(1, Math.rint(wish / pitch)) * pitch;
-        double width = Math.min(whole > 1.5 * wish ? wish : whole, Math.toRadians(100));
-        double centre = landMiddle() + 0.5 * width;
-        this.middle = centre;
-        this.from = centre - 0.5 * width;
-        this.to = centre + 0.5 * width;
-        this.cut = from + 0.68 * width;
+        boolean part = whole > 1.4 * wish;
+        double width = part ? wish : whole;
+        this.upstreamIsTo = upstreamIsTo(paths);
+        double start;
+        if (part && !paths.isEmpty() && !paths.get(0).points().isEmpty()) {
+            double first = paths.get(0).points().get(0).steadyTheta();
+            start = upstreamIsTo ? first - (1 - STANDING) * width + 0.01 : first - STANDING * width - 0.01;
+        } else {
+            start = landMiddle();
+        }
+        this.middle = start + 0.5 * width;
+        this.from = start;
+        this.to = start + width;
+        this.openFrom = upstreamIsTo ? from : from + STANDING * width;
+        this.openTo = upstreamIsTo ? to - STANDING * width : to;
         this.datum = shape.rotorHigh();
         double high = Double.NEGATIVE_INFINITY;
         for (int i = 0; i < grid.cellsTheta(); i++) {
@@ -76,9 +115,36 @@ final class GapScene {
         }
         this.statorHigh = high;
         double face = 1e3 * span;
-        this.bottom = height(shape.rotorLow()) - 0.12 * face;
+        this.bottom = Math.min(height(shape.rotorLow()) - 0.16 * face, -0.36 * face);
         this.notch = 0.14 * face;
-        this.top = height(high) + 0.24 * face;
+        this.top = height(high) + 0.22 * face;
+        this.sky = new Sky(shape, this);
+    }
+
+    /** Whether most paths run towards falling angles; where there are none, whether the gas lags behind a rotor that turns so. */
+    private boolean upstreamIsTo(List<Path> paths) {
+        double sum = 0;
+        for (Path path : paths) {
+            List<PathPoint> points = path.points();
+            if (points.size() > 1) {
+                sum += Math.signum(points.get(points.size() - 1).steadyTheta()
+                        - points.get(0).steadyTheta());
+            }
+        }
+        if (sum != 0) {
+            return sum < 0;
+        }
+        double rate = flow.film().conditions().rotationRate();
+        return flow.film().steadyIn() == Frame.ROTATING ? rate >= 0 : rate < 0;
+    }
+
+    /** The angle, a whole number of sectors, by which a path is moved so that it starts just downstream of the stator (rad). */
+    double shift(double theta) {
+        double pitch = grid.pitch();
+        double hair = 1e-3 * pitch;
+        return upstreamIsTo
+                ? Math.floor((openTo + hair - theta) / pitch) * pitch
+                : Math.ceil((openFrom - hair - theta) / pitch) * pitch;
     }
 
     /** The middle of the longest land between grooves, where a cut shows lands at both ends (rad). */
@@ -121,11 +187,10 @@ final class GapScene {
     /** Which part of the ring is shown, in words. */
     String part() {
         double sectors = (to - from) / grid.pitch();
-        String back = "; a path that leaves at one end comes back at the other";
         if (Math.abs(sectors - Math.rint(sectors)) < 1e-6) {
-            return Ticks.number(sectors, 0) + " of " + grid.sectors() + " equal sectors" + back;
+            return Ticks.number(sectors, 0) + " of " + grid.sectors() + " equal sectors shown";
         }
-        return Ticks.number(Math.toDegrees(to - from), 0) + "° of the ring; paths are shown only there";
+        return Ticks.number(Math.toDegrees(to - from), 0) + "° of the ring shown";
     }
 
     /** The drawn z of a height (mm). */
@@ -147,7 +212,7 @@ final class GapScene {
         List<double[]> points = new ArrayList<>();
         for (int n = 0; n <= 12; n++) {
             double theta = from + (to - from) * n / 12;
-            double above = theta >= cut ? top : height(statorHigh);
+            double above = theta >= openFrom && theta <= openTo ? height(statorHigh) : top;
             for (double r : new double[] {grid.innerRadius(), grid.outerRadius()}) {
                 points.add(at(theta, r, bottom));
                 points.add(at(theta, r, above));
@@ -161,15 +226,19 @@ final class GapScene {
         List<Scene.Item> items = new ArrayList<>();
         boolean above =
                 flow.film().supply().isEmpty() || flow.film().supply().get().face() == Face.STATOR;
-        add(items, ring(false, from, to, !above, false), Scene.Material.solid(ROTOR, 0.22));
+        double low = upstreamIsTo ? openTo : from;
+        double high = upstreamIsTo ? to : openFrom;
+        add(items, ring(false, from, to, !above, false), Scene.Material.solid(ROTOR, 0.12));
         add(items, cuts(false, from, to, !above), Scene.Material.solid(ROTOR_CUT, 0.05));
-        add(items, ring(true, cut, to, above, false), Scene.Material.solid(STATOR, 0.15));
-        add(items, cuts(true, cut, to, above), Scene.Material.solid(STATOR_CUT, 0.05));
-        add(items, ring(true, cut, to, above, true), Scene.Material.solid(FEED, 0.1));
+        add(items, ring(true, low, high, above, false), Scene.Material.solid(STATOR, 0.15));
+        add(items, cuts(true, low, high, above), Scene.Material.solid(STATOR_CUT, 0.05));
+        add(items, ring(true, low, high, above, true), Scene.Material.solid(FEED, 0.1));
         add(items, ring(false, from, to, !above, true), Scene.Material.solid(FEED, 0.1));
+        add(items, grooveEdges(), Scene.Material.plain(GROOVE_EDGE, 1));
         add(items, rim(), Scene.Material.plain(STATOR, 1));
         if (above) {
-            add(items, feedBand(), Scene.Material.plain(FEED, 0.6));
+            add(items, feedLines(), Scene.Material.plain(FEED, 1));
+            add(items, feedCuts(low, high), Scene.Material.plain(FEED, 1));
         }
         return items;
     }
@@ -242,8 +311,11 @@ final class GapScene {
         double r1 = grid.radius(j + 1);
         double span =
                 Math.max(grid.theta(i + 1, j) - grid.theta(i, j), grid.theta(i + 1, j + 1) - grid.theta(i, j + 1));
-        int across = (int) Math.ceil(span / Math.toRadians(1));
-        int along = (int) Math.ceil((r1 - r0) / ((grid.outerRadius() - grid.innerRadius()) / 24));
+        double fine = (grid.outerRadius() - grid.innerRadius()) / (shape.grooved() ? 44 : 24);
+        int across = (int) Math.ceil(span * r1 / fine);
+        int along = (int) Math.ceil((r1 - r0) / fine);
+        double midTheta = between(i, j, 0.5 * (r0 + r1), 0.5);
+        double midR = 0.5 * (r0 + r1);
         for (int b = 0; b < along; b++) {
             double ra = r0 + (r1 - r0) * b / along;
             double rb = r0 + (r1 - r0) * (b + 1) / along;
@@ -264,7 +336,8 @@ final class GapScene {
                 int points = inside.length / 2;
                 int first = -1;
                 for (int n = 0; n < points; n++) {
-                    int at = faceVertex(mesh, stator, i, j, inside[2 * n], inside[2 * n + 1], turn, recess);
+                    int at = faceVertex(
+                            mesh, stator, i, j, inside[2 * n], inside[2 * n + 1], turn, recess, midTheta, midR);
                     first = first < 0 ? at : first;
                     if (n >= 2) {
                         mesh.triangle(first, at - 1, at);
@@ -280,7 +353,16 @@ final class GapScene {
     }
 
     private int faceVertex(
-            MeshBuilder mesh, boolean stator, int i, int j, double theta, double r, double turn, boolean recess) {
+            MeshBuilder mesh,
+            boolean stator,
+            int i,
+            int j,
+            double theta,
+            double r,
+            double turn,
+            boolean recess,
+            double midTheta,
+            double midR) {
         double z = faceZ(stator, i, j, theta, r, recess);
         double dr = 0.2 * (grid.radius(j + 1) - grid.radius(j));
         double dt = 0.2 * (grid.theta(i + 1, j) - grid.theta(i, j));
@@ -299,16 +381,17 @@ final class GapScene {
                 -sign * (zr * cos - zt * sin) / length,
                 -sign * (zr * sin + zt * cos) / length,
                 sign / length,
-                openness(stator, z));
+                // Looked for a little inside the cell, so that a wall at its border is on the right side.
+                stator ? UNDER : sky.open(theta + 0.3 * (midTheta - theta), r + 0.3 * (midR - r), z));
     }
 
-    /** How open a place of a face is to the sky: groove floors get less of it. */
+    /** How open a point of a wall is to the sky: less at its foot. */
     private double openness(boolean stator, double z) {
         if (stator) {
-            return 0.8;
+            return UNDER;
         }
         double depth = height(shape.rotorHigh()) - height(shape.rotorLow());
-        return depth <= 0 ? 1 : 1 - 0.75 * Math.min(1, Math.max(0, -z / depth));
+        return depth <= 0 ? 1 : 0.4 - 0.35 * Math.min(1, Math.max(0, -z / depth));
     }
 
     /** The part of a polygon (θ, r in turn) on one side of an angle; Sutherland and Hodgman, 1974. */
@@ -330,7 +413,7 @@ final class GapScene {
                 result[count++] = polygon[2 * n + 1] + f * (polygon[2 * m + 1] - polygon[2 * n + 1]);
             }
         }
-        return java.util.Arrays.copyOf(result, count);
+        return Arrays.copyOf(result, count);
     }
 
     /** The wall along grid line i between cells (i − 1, j) and (i, j), where the face jumps there. */
@@ -568,31 +651,143 @@ final class GapScene {
     /** Thin rods along the edges of the stator face where the stator is cut away. */
     private MeshBuilder rim() {
         MeshBuilder mesh = new MeshBuilder();
-        double radius = 0.0035 * 1e3 * (grid.outerRadius() - grid.innerRadius());
-        rod(mesh, grid.innerRadius(), radius);
-        rod(mesh, grid.outerRadius(), radius);
-        for (double theta : new double[] {from}) {
-            int parts = 40;
-            double[] line = new double[3 * (parts + 1)];
-            for (int n = 0; n <= parts; n++) {
-                double r = grid.innerRadius() + (grid.outerRadius() - grid.innerRadius()) * n / parts;
-                put(line, n, at(theta, r, height(statorAt(theta, r))));
+        double radius = 0.003 * 1e3 * (grid.outerRadius() - grid.innerRadius());
+        Tubes.tube(mesh, arc(grid.innerRadius(), openFrom, openTo), new double[ARC + 1], radius);
+        Tubes.tube(mesh, arc(grid.outerRadius(), openFrom, openTo), new double[ARC + 1], radius);
+        double theta = upstreamIsTo ? from : to;
+        double[] line = new double[3 * (ARC + 1)];
+        for (int n = 0; n <= ARC; n++) {
+            double r = grid.innerRadius() + (grid.outerRadius() - grid.innerRadius()) * n / ARC;
+            put(line, n, at(theta, r, height(statorAt(theta, r))));
+        }
+        Tubes.tube(mesh, line, new double[ARC + 1], radius);
+        return mesh;
+    }
+
+    private static final int ARC = 48;
+
+    /** Points of an arc on the stator face. */
+    private double[] arc(double r, double low, double high) {
+        double[] line = new double[3 * (ARC + 1)];
+        for (int n = 0; n <= ARC; n++) {
+            double theta = low + (high - low) * n / ARC;
+            put(line, n, at(theta, r, height(statorAt(theta, r))));
+        }
+        return line;
+    }
+
+    /** Dashed lines along the borders of the feed at the stator face, where the stator is cut away. */
+    private MeshBuilder feedLines() {
+        MeshBuilder mesh = new MeshBuilder();
+        double radius = 0.0055 * 1e3 * (grid.outerRadius() - grid.innerRadius());
+        double dash = 0.055 * (grid.outerRadius() - grid.innerRadius());
+        FilmShape.Band feed = shape.feed();
+        List<FilmShape.Edge> ports = shape.feedEdges();
+        if (feed == null) {
+            return mesh;
+        }
+        if (ports.isEmpty()) {
+            for (double r : new double[] {feed.from(), feed.to()}) {
+                int dashes = (int) Math.max(1, Math.rint((openTo - openFrom) * r / (2 * dash)));
+                double step = (openTo - openFrom) / dashes;
+                for (int n = 0; n < dashes; n++) {
+                    double a = openFrom + (n + 0.25) * step;
+                    segment(mesh, a, r, a + 0.5 * step, r, radius, true);
+                }
             }
-            Tubes.tube(mesh, line, new double[parts + 1], radius);
+        }
+        for (int n = sector(openFrom) - 2; n <= sector(openTo) + 2; n++) {
+            for (FilmShape.Edge edge : ports) {
+                double turn = n * grid.pitch();
+                segment(mesh, edge.theta0() + turn, edge.r0(), edge.theta1() + turn, edge.r1(), radius, true);
+            }
         }
         return mesh;
     }
 
-    private void rod(MeshBuilder mesh, double r, double radius) {
-        int parts = 60;
-        double[] line = new double[3 * (parts + 1)];
-        for (int n = 0; n <= parts; n++) {
-            double theta = from + (cut - from) * n / parts;
-            put(line, n, at(theta, r, height(statorAt(theta, r))));
+    /** The feed's channel where the stator is cut, as a filled surface, so that it shows in the cut. */
+    private MeshBuilder feedCuts(double low, double high) {
+        MeshBuilder mesh = new MeshBuilder();
+        FilmShape.Band feed = shape.feed();
+        if (feed == null || !shape.feedEdges().isEmpty()) {
+            return mesh;
         }
-        double[] open = new double[parts + 1];
-        java.util.Arrays.fill(open, 1);
-        Tubes.tube(mesh, line, open, radius);
+        for (double theta : new double[] {low, high}) {
+            int[] corners = new int[4];
+            for (int n = 0; n < 4; n++) {
+                double r = n == 1 || n == 2 ? feed.to() : feed.from();
+                double[] p = at(theta, r, height(statorAt(theta, r)) + (n >= 2 ? notch : 0));
+                corners[n] = mesh.vertex(p[0], p[1], p[2], 0, 0, 1, 1);
+            }
+            mesh.quad(corners[0], corners[1], corners[2], corners[3]);
+        }
+        return mesh;
+    }
+
+    private int sector(double theta) {
+        return (int) Math.floor(theta / grid.pitch());
+    }
+
+    /** Crisp lines along the upper edges of the grooves, and finer ones along the feet of their walls. */
+    private MeshBuilder grooveEdges() {
+        MeshBuilder mesh = new MeshBuilder();
+        double radius = 0.0032 * 1e3 * (grid.outerRadius() - grid.innerRadius());
+        int reach = 1 + (int) Math.ceil(Math.abs(grid.theta(0, grid.nj() - 1) - grid.theta(0, 0)) / grid.pitch());
+        for (int n = sector(from) - reach; n <= sector(to) + reach; n++) {
+            double turn = n * grid.pitch();
+            for (FilmShape.Edge edge : shape.grooveEdges()) {
+                segment(mesh, edge.theta0() + turn, edge.r0(), edge.theta1() + turn, edge.r1(), radius, false);
+            }
+        }
+        return mesh;
+    }
+
+    /** A thin straight line on a face, in the middle of the open part or on the rotor anywhere in the part shown. */
+    private void segment(MeshBuilder mesh, double t0, double r0, double t1, double r1, double radius, boolean stator) {
+        double low = stator ? openFrom : from;
+        double high = stator ? openTo : to;
+        if (Math.max(t0, t1) < low || Math.min(t0, t1) > high) {
+            return;
+        }
+        // A piece that runs over the border of the part shown is cut there.
+        double f = t1 == t0 ? 0 : Math.max(0, Math.min((low - t0) / (t1 - t0), (high - t0) / (t1 - t0)));
+        double g = t1 == t0 ? 1 : Math.min(1, Math.max((low - t0) / (t1 - t0), (high - t0) / (t1 - t0)));
+        int parts = 1 + (int) (Math.abs(t1 - t0) / Math.toRadians(1));
+        for (int n = 0; n < parts; n++) {
+            double a = f + (g - f) * n / parts;
+            double b = f + (g - f) * (n + 1) / parts;
+            double ta = t0 + a * (t1 - t0);
+            double tb = t0 + b * (t1 - t0);
+            double ra = r0 + a * (r1 - r0);
+            double rb = r0 + b * (r1 - r0);
+            if (stator) {
+                double z = height(statorAt(ta, ra));
+                Tubes.bar(mesh, at(ta, ra, z), at(tb, rb, z), radius);
+                continue;
+            }
+            double[] z = lowestAndHighest(0.5 * (ta + tb), 0.5 * (ra + rb));
+            Tubes.bar(mesh, at(ta, ra, z[1]), at(tb, rb, z[1]), radius);
+            Tubes.bar(mesh, at(ta, ra, z[0]), at(tb, rb, z[0]), 0.6 * radius);
+        }
+    }
+
+    /** The lowest and the highest of the rotor face round a point: foot and upper edge of a wall there (mm). */
+    private double[] lowestAndHighest(double theta, double r) {
+        double near = 2e-4 * (grid.outerRadius() - grid.innerRadius());
+        double low = Double.POSITIVE_INFINITY;
+        double high = Double.NEGATIVE_INFINITY;
+        for (int n = 0; n < 4; n++) {
+            double dr = n == 0 ? near : n == 1 ? -near : 0;
+            double dt = n == 2 ? near / r : n == 3 ? -near / r : 0;
+            double z = rotorAt(theta + dt, inside(r + dr));
+            low = Math.min(low, z);
+            high = Math.max(high, z);
+        }
+        return new double[] {height(low), height(high)};
+    }
+
+    private double inside(double r) {
+        return Math.max(grid.innerRadius(), Math.min(grid.outerRadius(), r));
     }
 
     private static void put(double[] line, int n, double[] point) {
@@ -614,143 +809,121 @@ final class GapScene {
         return flow.rotorZ(grid.column(within, j, r), j, within, r);
     }
 
-    /** The feed as a translucent band at the stator face, where the stator is cut away. */
-    private MeshBuilder feedBand() {
-        MeshBuilder mesh = new MeshBuilder();
-        cells(from, cut, (i, j, turn) -> {
-            if (flow.film().feeds(grid.cell(i, j))) {
-                patch(mesh, true, i, j, turn, from, cut, false);
-            }
-        });
-        return mesh;
-    }
-
     /** Radius of the tubes of paths (mm): a small share of the film's drawn thickness, but never too thin to see. */
     double tubeRadius() {
         double face = 1e3 * (grid.outerRadius() - grid.innerRadius());
         return Math.max(0.005 * face, Math.min(0.0115 * face, 0.075 * 1e3 * exaggeration * shape.leastThickness()));
     }
 
-    /** A piece of a path inside the part shown. */
-    private static final class Piece {
-        final List<double[]> points = new ArrayList<>();
-        final List<Double> values = new ArrayList<>();
-
-        /** Length of the straight line from its first to its last point (mm). */
-        double length() {
-            return points.isEmpty() ? 0 : distance(points.get(0), points.get(points.size() - 1));
-        }
-
-        private static double distance(double[] a, double[] b) {
-            return Math.hypot(Math.hypot(b[0] - a[0], b[1] - a[1]), b[2] - a[2]);
-        }
-
-        /** Adds a point, unless it is nearer to the one before than a least distance. */
-        void add(double[] point, double value, double least) {
-            if (!points.isEmpty()) {
-                double distance = distance(points.get(points.size() - 1), point);
-                if (distance < least || distance == 0) {
-                    return;
-                }
-            }
-            points.add(point);
-            values.add(value);
-        }
-    }
+    /** Shares of the tube's opacity along the end of a path that goes on outside the part shown. */
+    private static final double[] FADE = {0.85, 0.65, 0.42, 0.2};
 
     /**
-     * Tubes along the paths, round markers on them at equal times, and a cone at each path's end. A path that leaves the
-     * part shown at one angle comes back at the other, in the place that all sectors share.
+     * Tubes along the paths and round markers on them at equal times; a filled cone where a path ends, and an open
+     * arrowhead, behind a tube that fades, where it goes on outside the part shown.
      *
-     * @param paths the paths
+     * @param shown the paths
      * @param range ends of the speed scale (m/s)
      * @param every time between markers (s)
      */
-    List<Scene.Item> paths(List<Path> paths, PictureSettings.Range range, double every) {
+    List<Scene.Item> paths(List<ShownPath> shown, PictureSettings.Range range, double every) {
         MeshBuilder tubes = new MeshBuilder();
         MeshBuilder markers = new MeshBuilder();
+        MeshBuilder[] fades = new MeshBuilder[FADE.length];
+        for (int n = 0; n < fades.length; n++) {
+            fades[n] = new MeshBuilder();
+        }
         double radius = tubeRadius();
-        for (Path path : paths) {
-            List<Piece> pieces = fold(path, range);
-            for (Piece piece : pieces) {
-                double[] line = new double[3 * piece.points.size()];
-                double[] values = new double[piece.points.size()];
-                for (int n = 0; n < values.length; n++) {
-                    put(line, n, piece.points.get(n));
-                    values[n] = piece.values.get(n);
+        for (ShownPath path : shown) {
+            double[][] line = line(path, range, 0.8 * radius);
+            int points = line[1].length;
+            if (points < 2) {
+                continue;
+            }
+            int solid = points - 1;
+            double fade = path.whole() ? 0 : FADE_LENGTH * radius;
+            while (solid > 1 && distance(line[0], solid, points - 1) < fade) {
+                solid--;
+            }
+            solid = path.whole() ? points - 1 : solid;
+            Tubes.tube(tubes, Arrays.copyOf(line[0], 3 * (solid + 1)), Arrays.copyOf(line[1], solid + 1), radius);
+            for (int n = 0; n < fades.length && solid < points - 1; n++) {
+                int a = solid + (points - 1 - solid) * n / fades.length;
+                int b = solid + (points - 1 - solid) * (n + 1) / fades.length;
+                if (b > a) {
+                    Tubes.open(
+                            fades[n],
+                            Arrays.copyOfRange(line[0], 3 * a, 3 * (b + 1)),
+                            Arrays.copyOfRange(line[1], a, b + 1),
+                            radius);
                 }
-                Tubes.tube(tubes, line, values, radius);
             }
-            markers(path, every, markers, 2.3 * radius);
-            // A cone longer than the piece it ends would hang in the air.
-            if (!pieces.isEmpty() && pieces.get(pieces.size() - 1).length() > 4 * radius) {
-                head(path, range, tubes, radius);
-            }
+            markers(path, every, markers, 1.65 * radius, fade);
+            head(path, line, tubes, radius);
         }
         List<Scene.Item> items = new ArrayList<>();
         add(items, tubes, Scene.Material.scaled(ColourScale.SPEED, true));
         add(items, markers, Scene.Material.solid(0xf4f4f2, 0.5));
+        for (int n = 0; n < fades.length; n++) {
+            add(items, fades[n], new Scene.Material(0, ColourScale.SPEED, true, 0.25, FADE[n]));
+        }
         return items;
     }
 
-    /** The angle of the part shown that stands for any angle, or NaN where a long sector is not shown there. */
-    double folded(double theta) {
-        double period = Math.max(to - from, grid.pitch());
-        if (to - from < grid.pitch() * (1 - 1e-9)) {
-            period = grid.pitch();
-        }
-        double turns = Math.floor((theta - from) / period);
-        double result = theta - turns * period;
-        return result <= to + 1e-9 ? result : Double.NaN;
-    }
+    /** Length of the fading end of a tube, in radii of the tube. */
+    private static final double FADE_LENGTH = 22;
 
-    private List<Piece> fold(Path path, PictureSettings.Range range) {
-        List<Piece> pieces = new ArrayList<>();
-        Piece piece = null;
-        double last = Double.NaN;
-        List<PathPoint> points = path.points();
-        for (int n = 0; n < points.size(); n++) {
-            PathPoint b = points.get(n);
-            PathPoint a = n == 0 ? b : points.get(n - 1);
-            double turn = b.steadyTheta() - a.steadyTheta();
-            int parts = Math.max(1, (int) Math.ceil(Math.abs(turn) / Math.toRadians(0.6)));
-            for (int m = n == 0 ? parts : 1; m <= parts; m++) {
-                double f = (double) m / parts;
-                double theta = folded(a.steadyTheta() + f * turn);
-                if (Double.isNaN(theta)) {
-                    piece = null;
-                    last = Double.NaN;
-                    continue;
-                }
-                if (piece == null || Math.abs(theta - last) > 0.5 * (to - from)) {
-                    piece = new Piece();
-                    pieces.add(piece);
-                }
-                double[] point = place(theta, mix(a.radius(), b.radius(), f), mix(a.z(), b.z(), f));
-                double value = (mix(a.speed(), b.speed(), f) - range.low()) / (range.high() - range.low());
-                boolean end = n + 1 == points.size() && m == parts;
-                piece.add(point, value, end ? 0 : 0.8 * tubeRadius());
-                last = theta;
+    /** The drawn points of a path, x, y, z in turn, and the place of each point's speed on the scale. */
+    private double[][] line(ShownPath path, PictureSettings.Range range, double least) {
+        double[] points = new double[3 * path.size()];
+        double[] values = new double[path.size()];
+        int count = 0;
+        for (int n = 0; n < path.size(); n++) {
+            put(points, count, place(path.theta(n), path.radius(n), path.z(n)));
+            values[count] = (path.speed(n) - range.low()) / (range.high() - range.low());
+            boolean last = n + 1 == path.size();
+            if (count == 0 || distance(points, count - 1, count) >= least) {
+                count++;
+            } else if (last) {
+                // The last point replaces one that is too near.
+                put(points, count - 1, place(path.theta(n), path.radius(n), path.z(n)));
             }
         }
-        return pieces;
+        return new double[][] {rounded(Arrays.copyOf(points, 3 * count)), Arrays.copyOf(values, count)};
     }
 
-    private static double mix(double a, double b, double f) {
-        return a + f * (b - a);
+    /** Points with sharp corners, where a path passes over a groove's edge, rounded off a little, for a tube. */
+    private static double[] rounded(double[] points) {
+        double[] line = points;
+        for (int round = 0; round < 3; round++) {
+            double[] next = line.clone();
+            for (int n = 3; n + 3 < line.length; n++) {
+                next[n] = 0.5 * line[n] + 0.25 * (line[n - 3] + line[n + 3]);
+            }
+            line = next;
+        }
+        return line;
     }
 
-    private void markers(Path path, double every, MeshBuilder mesh, double radius) {
-        List<PathPoint> points = path.points();
-        int count = 0;
-        for (int n = 1; n < points.size(); n++) {
-            PathPoint a = points.get(n - 1);
-            PathPoint b = points.get(n);
-            while (count * every <= b.time()) {
-                double f = b.time() > a.time() ? (count * every - a.time()) / (b.time() - a.time()) : 0;
-                double theta = folded(mix(a.steadyTheta(), b.steadyTheta(), f));
-                if (!Double.isNaN(theta)) {
-                    double[] p = place(theta, mix(a.radius(), b.radius(), f), mix(a.z(), b.z(), f));
+    private static double distance(double[] points, int a, int b) {
+        return Math.hypot(
+                Math.hypot(points[3 * b] - points[3 * a], points[3 * b + 1] - points[3 * a + 1]),
+                points[3 * b + 2] - points[3 * a + 2]);
+    }
+
+    private void markers(ShownPath path, double every, MeshBuilder mesh, double radius, double fade) {
+        int count = (int) Math.ceil(path.time(0) / every - 1e-9);
+        int last = path.size() - 1;
+        double[] end = place(path.theta(last), path.radius(last), path.z(last));
+        for (int n = 1; n <= last; n++) {
+            while (count * every <= path.time(n)) {
+                double step = path.time(n) - path.time(n - 1);
+                double f = step > 0 ? (count * every - path.time(n - 1)) / step : 0;
+                double[] p = place(
+                        ShownPath.mix(path.theta(n - 1), path.theta(n), f),
+                        ShownPath.mix(path.radius(n - 1), path.radius(n), f),
+                        ShownPath.mix(path.z(n - 1), path.z(n), f));
+                if (Math.hypot(Math.hypot(p[0] - end[0], p[1] - end[1]), p[2] - end[2]) >= 0.6 * fade) {
                     Tubes.ball(mesh, p[0], p[1], p[2], radius, 1);
                 }
                 count++;
@@ -758,40 +931,100 @@ final class GapScene {
         }
     }
 
-    private void head(Path path, PictureSettings.Range range, MeshBuilder mesh, double radius) {
-        List<PathPoint> points = path.points();
-        if (points.size() < 2) {
+    /** The drawn direction in which a path runs at the end of its line, unit length. */
+    private static double[] heading(double[] points, double back) {
+        int last = points.length / 3 - 1;
+        int before = last - 1;
+        while (before > 0 && distance(points, before, last) < back) {
+            before--;
+        }
+        double length = distance(points, before, last);
+        double[] direction = {1, 0, 0};
+        for (int c = 0; c < 3 && length > 0; c++) {
+            direction[c] = (points[3 * last + c] - points[3 * before + c]) / length;
+        }
+        return direction;
+    }
+
+    private static void head(ShownPath path, double[][] line, MeshBuilder mesh, double radius) {
+        int last = line[1].length - 1;
+        double[] end = Arrays.copyOfRange(line[0], 3 * last, 3 * last + 3);
+        double[] way = heading(line[0], 2 * radius);
+        double value = line[1][last];
+        if (path.whole()) {
+            // A cone longer than the path that it ends would hang in the air.
+            if (distance(line[0], 0, last) > 4 * radius) {
+                Tubes.cone(mesh, end, way, 6.4 * radius, 2.7 * radius, value);
+            }
             return;
         }
-        PathPoint b = points.get(points.size() - 1);
-        int back = points.size() - 2;
-        while (back > 0
-                && 1e3
-                                * Math.hypot(
-                                        b.radius() - points.get(back).radius(),
-                                        b.radius()
-                                                * (b.steadyTheta()
-                                                        - points.get(back).steadyTheta()))
-                        < radius) {
-            back--;
-        }
-        PathPoint a = points.get(back);
-        double theta = folded(b.steadyTheta());
-        if (Double.isNaN(theta)) {
+        double flat = Math.hypot(way[0], way[1]);
+        if (flat < 1e-9) {
             return;
         }
-        double[] direction = drawnDirection(
-                theta,
-                b.radius() - a.radius(),
-                0.5 * (a.radius() + b.radius()) * (b.steadyTheta() - a.steadyTheta()),
-                b.z() - a.z());
-        Tubes.cone(
-                mesh,
-                place(theta, b.radius(), b.z()),
-                direction,
-                5.6 * radius,
-                2.3 * radius,
-                (b.speed() - range.low()) / (range.high() - range.low()));
+        double[] wings = new double[9];
+        for (int n = 0; n < 3; n++) {
+            double back = n == 1 ? 0 : -OPEN_HEAD * radius;
+            double aside = (n - 1) * 0.62 * OPEN_HEAD * radius;
+            wings[3 * n] = end[0] + back * way[0] - aside * way[1] / flat;
+            wings[3 * n + 1] = end[1] + back * way[1] + aside * way[0] / flat;
+            wings[3 * n + 2] = end[2] + back * way[2];
+        }
+        for (int n = 0; n < 2; n++) {
+            double[] wing = Arrays.copyOfRange(wings, 3 * n, 3 * n + 6);
+            Tubes.tube(mesh, wing, new double[] {value, value}, 0.62 * radius);
+        }
+    }
+
+    /** Length of an open arrowhead, in radii of the tube. */
+    static final double OPEN_HEAD = 6.5;
+
+    /** Where a path's end is drawn, and a point a little further on, where the marker of its destination stands (mm). */
+    double[][] endOf(ShownPath path, double further) {
+        double[][] line = line(path, new PictureSettings.Range(0, 1), 0.8 * tubeRadius());
+        int last = line[1].length - 1;
+        double[] end = Arrays.copyOfRange(line[0], 3 * last, 3 * last + 3);
+        double[] way = heading(line[0], 2 * tubeRadius());
+        double[] beyond = end.clone();
+        for (int c = 0; c < 3; c++) {
+            beyond[c] += further * way[c];
+        }
+        return new double[][] {end, beyond};
+    }
+
+    /**
+     * Whether a place is hidden by the rotor or by what is left of the stator.
+     *
+     * @param place drawn place (mm)
+     * @param eye where the eye is (mm)
+     */
+    boolean hidden(double[] place, double[] eye) {
+        double[] way = new double[3];
+        double length = 0;
+        for (int c = 0; c < 3; c++) {
+            way[c] = eye[c] - place[c];
+            length += way[c] * way[c];
+        }
+        length = Math.sqrt(length);
+        double step = 0.006e3 * (grid.outerRadius() - grid.innerRadius());
+        for (double s = 1.5 * step; s < length; s += step) {
+            double x = place[0] + s * way[0] / length;
+            double y = place[1] + s * way[1] / length;
+            double z = place[2] + s * way[2] / length;
+            double r = 1e-3 * Math.hypot(x, y);
+            if (z > top || z < bottom || r < grid.innerRadius() || r > grid.outerRadius()) {
+                return false;
+            }
+            double theta = middle + Math.atan2(y, x);
+            if (theta < from || theta > to) {
+                return false;
+            }
+            boolean open = theta >= openFrom && theta <= openTo;
+            if (z < height(rotorAt(theta, r)) || (!open && z > height(statorAt(theta, r)))) {
+                return true;
+            }
+        }
+        return false;
     }
 
     /**

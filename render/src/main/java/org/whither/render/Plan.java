@@ -4,6 +4,7 @@ import java.awt.BasicStroke;
 import java.awt.Rectangle;
 import java.awt.Shape;
 import java.awt.geom.Area;
+import java.awt.geom.Line2D;
 import java.awt.geom.Path2D;
 import java.awt.geom.Point2D;
 import java.awt.geom.Rectangle2D;
@@ -28,6 +29,12 @@ import org.whither.trace.PathPoint;
 public final class Plan {
     /** Most isobars in the enlarged view. */
     private static final int ISOBARS = 12;
+
+    /** How far round a footprint is drawn at most: a longer one would run over its own beginning (rad). */
+    private static final double FULL = Math.toRadians(330);
+
+    /** Of lines over the pressure. */
+    private static final int DARK = 0x14181c;
 
     private final FilmShape shape;
     private final FilmGrid grid;
@@ -135,7 +142,7 @@ public final class Plan {
         Rectangle window = layout.ringWindow;
         Shape before = ink.pen.getClip();
         ink.pen.clip(window);
-        outlines(ink, layout.ring, Math.max(0.75, 0.95 * ink.unit), 0, grid.sectors() - 1, 0.75);
+        outlines(ink, layout.ring, Math.max(0.75, 0.95 * ink.unit), 0, grid.sectors() - 1, false);
         footprints(ink, layout.ring, 1.5 * ink.unit);
         ink.pen.setClip(before);
 
@@ -232,18 +239,26 @@ public final class Plan {
         return points;
     }
 
-    /** Rims of the face, feed and groove outlines, for a range of sectors. */
-    private void outlines(Ink ink, Camera camera, double width, int first, int last, double opacity) {
-        int dark = 0x14181c;
-        ink.colour(dark, opacity);
-        ink.stroke(width);
+    /**
+     * Rims of the face, feed and groove outlines, for a range of sectors.
+     *
+     * @param cased whether groove edges are strong lines with a light casing, so that isobars are not taken for them
+     */
+    private void outlines(Ink ink, Camera camera, double width, int first, int last, boolean cased) {
         Path2D.Double grooves = new Path2D.Double();
         Path2D.Double ports = new Path2D.Double();
         for (int n = first; n <= last; n++) {
             add(grooves, camera, shape.grooveEdges(), n * grid.pitch());
             add(ports, camera, shape.feedEdges(), n * grid.pitch());
         }
-        ink.pen.draw(grooves);
+        if (cased) {
+            grooveLine(ink, grooves);
+        } else {
+            ink.colour(DARK, 0.75);
+            ink.stroke(width);
+            ink.pen.draw(grooves);
+        }
+        ink.colour(DARK, cased ? 0.85 : 0.75);
         ink.dashes(width, 4 * ink.unit, 2.4 * ink.unit);
         FilmShape.Band feed = shape.feed();
         if (feed != null) {
@@ -257,6 +272,16 @@ public final class Plan {
         ink.stroke(1.4 * width);
         circle(ink, camera, grid.innerRadius());
         circle(ink, camera, grid.outerRadius());
+    }
+
+    /** Draws an edge of a groove in the enlarged view. */
+    private static void grooveLine(Ink ink, Shape line) {
+        ink.colour(0xffffff, 0.95);
+        ink.stroke(4.4 * ink.unit);
+        ink.pen.draw(line);
+        ink.colour(DARK);
+        ink.stroke(1.8 * ink.unit);
+        ink.pen.draw(line);
     }
 
     private static void add(Path2D.Double path, Camera camera, List<FilmShape.Edge> edges, double turn) {
@@ -292,30 +317,19 @@ public final class Plan {
 
     private void footprints(Ink ink, Camera camera, double width) {
         for (Path path : paths) {
-            Path2D.Double foot = new Path2D.Double();
-            PathPoint before = null;
-            for (PathPoint point : path.points()) {
-                if (before == null) {
-                    Point2D p = at(camera, point.steadyTheta(), point.radius());
-                    foot.moveTo(p.getX(), p.getY());
-                } else {
-                    double turn = point.steadyTheta() - before.steadyTheta();
-                    int parts = Math.max(1, (int) Math.ceil(Math.abs(turn) / Math.toRadians(1)));
-                    for (int n = 1; n <= parts; n++) {
-                        double f = (double) n / parts;
-                        Point2D p = at(
-                                camera,
-                                before.steadyTheta() + f * turn,
-                                before.radius() + f * (point.radius() - before.radius()));
-                        foot.lineTo(p.getX(), p.getY());
-                    }
-                }
-                before = point;
-            }
-            if (before == null) {
+            Point2D[] points = footprint(path, camera);
+            if (points.length < 2) {
                 continue;
             }
-            ink.colour(0x14181c, 0.85);
+            Path2D.Double foot = new Path2D.Double();
+            foot.moveTo(points[0].getX(), points[0].getY());
+            for (int n = 1; n < points.length; n++) {
+                foot.lineTo(points[n].getX(), points[n].getY());
+            }
+            if (goesOn(path)) {
+                openHead(foot, points, 3.2 * width);
+            }
+            ink.colour(DARK, 0.85);
             ink.stroke(width + 1.4 * ink.unit);
             ink.pen.draw(foot);
             ink.colour(Destination.of(path.end()).colour());
@@ -323,13 +337,60 @@ public final class Plan {
             ink.pen.draw(foot);
         }
         for (Path path : paths) {
-            if (!path.points().isEmpty()) {
+            if (!path.points().isEmpty() && !goesOn(path)) {
                 PathPoint end = path.points().get(path.points().size() - 1);
                 Point2D p = at(camera, end.steadyTheta(), end.radius());
                 Destination destination = Destination.of(path.end());
                 ink.mark(destination.marker(p.getX(), p.getY(), 6.5 * width), destination.colour(), 1.2 * ink.unit);
             }
         }
+    }
+
+    /** Whether a path runs further round than its footprint is drawn. */
+    private static boolean goesOn(Path path) {
+        List<PathPoint> points = path.points();
+        return !points.isEmpty()
+                && points.stream()
+                        .anyMatch(p -> Math.abs(p.steadyTheta() - points.get(0).steadyTheta()) > FULL);
+    }
+
+    /** The drawn points of a path; of one that runs round and round, those of its first time round. */
+    static Point2D[] footprint(Path path, Camera camera) {
+        List<Point2D> result = new ArrayList<>();
+        List<PathPoint> points = path.points();
+        for (int n = 0; n < points.size(); n++) {
+            PathPoint b = points.get(n);
+            PathPoint a = n == 0 ? b : points.get(n - 1);
+            double turn = b.steadyTheta() - a.steadyTheta();
+            int parts = Math.max(1, (int) Math.ceil(Math.abs(turn) / Math.toRadians(1)));
+            for (int m = 1; m <= parts; m++) {
+                double f = (double) m / parts;
+                double theta = a.steadyTheta() + f * turn;
+                if (Math.abs(theta - points.get(0).steadyTheta()) > FULL) {
+                    return result.toArray(new Point2D[0]);
+                }
+                result.add(at(camera, theta, a.radius() + f * (b.radius() - a.radius())));
+            }
+        }
+        return result.toArray(new Point2D[0]);
+    }
+
+    /** Adds an open arrowhead at the last of some points. */
+    private static void openHead(Path2D.Double path, Point2D[] points, double size) {
+        Point2D tip = points[points.length - 1];
+        int back = points.length - 2;
+        while (back > 0 && tip.distance(points[back]) < size) {
+            back--;
+        }
+        double length = tip.distance(points[back]);
+        if (length == 0) {
+            return;
+        }
+        double dx = size * (tip.getX() - points[back].getX()) / length;
+        double dy = size * (tip.getY() - points[back].getY()) / length;
+        path.moveTo(tip.getX() - dx - 0.7 * dy, tip.getY() - dy + 0.7 * dx);
+        path.lineTo(tip.getX(), tip.getY());
+        path.lineTo(tip.getX() - dx + 0.7 * dy, tip.getY() - dy - 0.7 * dx);
     }
 
     private void sector(Ink ink, PlanLayout layout) {
@@ -349,7 +410,7 @@ public final class Plan {
         double half = Math.asin(Math.min(1, 0.75 * window.width / layout.sectorScale / (1e3 * grid.innerRadius())));
         int reach = Math.min(grid.sectors() / 2 + 1, 1 + spiralReach() + (int) Math.ceil(half / grid.pitch()));
         List<Runnable> labels = isobars(ink, layout, reach);
-        outlines(ink, layout.sector, 1.25 * ink.unit, -reach, reach, 0.85);
+        outlines(ink, layout.sector, 1.25 * ink.unit, -reach, reach, true);
         footprints(ink, layout.sector, 2.2 * ink.unit);
         labels.forEach(Runnable::run);
         ink.pen.setClip(before);
@@ -424,8 +485,8 @@ public final class Plan {
                 for (int n = 2; n < line.length; n += 2) {
                     path.lineTo(line[n], line[n + 1]);
                 }
-                ink.colour(contrast, 0.8);
-                ink.stroke(0.9 * ink.unit);
+                ink.colour(contrast, 0.75);
+                ink.stroke(0.7 * ink.unit);
                 ink.pen.draw(path);
                 String words = Ticks.number(level, Ticks.decimals(step));
                 labels.add(() -> label(ink, layout.sectorWindow, line, words, contrast, colour, taken));
@@ -498,7 +559,14 @@ public final class Plan {
                 Ink.Side.MIDDLE);
     }
 
-    private record Name(double y, double wantedY, String words, String detail) {}
+    /** The line that stands for something named, as a sample beside its name. */
+    private enum Sample {
+        NONE,
+        GROOVE,
+        FEED
+    }
+
+    private record Name(double wantedY, String words, String detail, Sample sample) {}
 
     /** Names of diameters and bands beside the enlarged sector, each with a leader to its place at the window's edge. */
     private void names(Ink ink, PlanLayout layout) {
@@ -509,27 +577,28 @@ public final class Plan {
                 layout,
                 grid.outerRadius(),
                 "outer diameter",
-                Words.diameter(grid.outerRadius()) + ", " + conditions.outerSide());
+                Words.diameter(grid.outerRadius()) + ", " + conditions.outerSide(),
+                Sample.NONE);
         for (FilmShape.Band band : shape.grooveBands()) {
-            add(names, layout, 0.5 * (band.from() + band.to()), "grooves", between(band));
+            add(names, layout, 0.5 * (band.from() + band.to()), "grooves", between(band), Sample.GROOVE);
         }
         FilmShape.Band feed = shape.feed();
-        FilmShape.Band dam = shape.dam();
         if (feed != null) {
             String face = shape.flow().film().supply().orElseThrow().face() == org.whither.film.Face.STATOR
                     ? "feed, in the stator"
                     : "feed, in the rotor";
-            add(names, layout, 0.5 * (feed.from() + feed.to()), face, between(feed));
+            add(names, layout, 0.5 * (feed.from() + feed.to()), face, between(feed), Sample.FEED);
         }
-        if (dam != null) {
-            add(names, layout, damPoint(dam, feed), "dam, without grooves", between(dam));
+        for (FilmShape.Band band : shape.ungrooved()) {
+            add(names, layout, besideFeed(band, feed), name(shape, band), between(band), Sample.NONE);
         }
         add(
                 names,
                 layout,
                 grid.innerRadius(),
                 "inner diameter",
-                Words.diameter(grid.innerRadius()) + ", " + conditions.innerSide());
+                Words.diameter(grid.innerRadius()) + ", " + conditions.innerSide(),
+                Sample.NONE);
         names.sort((a, b) -> Double.compare(a.wantedY(), b.wantedY()));
         double pitch = ink.height(ink.body) + ink.height(ink.small) + 3 * ink.unit;
         double[] y = spread(
@@ -558,6 +627,7 @@ public final class Plan {
                     layout.namesLeft,
                     y[n] + 0.25 * ink.body.getSize2D(),
                     Ink.Side.LEFT);
+            sample(ink, name.sample(), layout.namesLeft + ink.width(ink.body, name.words()) + 9 * ink.unit, y[n]);
             ink.write(
                     ink.small,
                     ink.faint,
@@ -568,14 +638,37 @@ public final class Plan {
         }
     }
 
-    private static double damPoint(FilmShape.Band dam, FilmShape.Band feed) {
-        if (feed == null || feed.to() < dam.from() || feed.from() > dam.to()) {
-            return 0.5 * (dam.from() + dam.to());
+    /** A short piece of the line that stands for something, on the ground that it has in the enlarged view. */
+    private static void sample(Ink ink, Sample sample, double x, double y) {
+        double length = 24 * ink.unit;
+        if (sample == Sample.NONE) {
+            return;
+        }
+        ink.colour(ColourScale.PRESSURE.colour(0.6));
+        ink.pen.fill(new Rectangle2D.Double(x, y - 5 * ink.unit, length, 10 * ink.unit));
+        Line2D.Double line = new Line2D.Double(x + 3 * ink.unit, y, x + length - 3 * ink.unit, y);
+        if (sample == Sample.GROOVE) {
+            grooveLine(ink, line);
+        } else {
+            ink.colour(DARK, 0.85);
+            ink.dashes(1.25 * ink.unit, 4 * ink.unit, 2.4 * ink.unit);
+            ink.pen.draw(line);
+        }
+    }
+
+    /** What a ring without grooves is called. */
+    static String name(FilmShape shape, FilmShape.Band band) {
+        return band.equals(shape.dam()) ? "dam, without grooves" : "land, without grooves";
+    }
+
+    private static double besideFeed(FilmShape.Band band, FilmShape.Band feed) {
+        if (feed == null || feed.to() < band.from() || feed.from() > band.to()) {
+            return 0.5 * (band.from() + band.to());
         }
         // Beside the feed, on the wider part.
-        return feed.from() - dam.from() > dam.to() - feed.to()
-                ? 0.5 * (dam.from() + feed.from())
-                : 0.5 * (feed.to() + dam.to());
+        return feed.from() - band.from() > band.to() - feed.to()
+                ? 0.5 * (band.from() + feed.from())
+                : 0.5 * (feed.to() + band.to());
     }
 
     private static String between(FilmShape.Band band) {
@@ -583,14 +676,15 @@ public final class Plan {
     }
 
     /** Finds where the circle of a radius meets the right edge of the enlarged view. */
-    private static void add(List<Name> names, PlanLayout layout, double radius, String words, String detail) {
+    private static void add(
+            List<Name> names, PlanLayout layout, double radius, String words, String detail, Sample sample) {
         Rectangle window = layout.sectorWindow;
         Point2D shaft = layout.sector.project(0, 0, 0);
         double across = window.getMaxX() - shaft.getX();
         double reach = 1e3 * radius * layout.sectorScale;
         double y = reach > across ? shaft.getY() - Math.sqrt(reach * reach - across * across) : window.getMaxY();
         y = Math.max(window.y + 2, Math.min(window.getMaxY() - 2, y));
-        names.add(new Name(y, y, words, detail));
+        names.add(new Name(y, words, detail, sample));
     }
 
     /** Moves wanted places, in rising order, apart to a least distance, within two ends, as little as need be. */
@@ -643,7 +737,7 @@ public final class Plan {
         double along = grid.pitch() * 0.5 * (feed.from() + feed.to());
         double stretch = (window.height / feed.width()) / (window.width / along);
         String which = grid.sectors() > 1 ? "one sector" : "whole ring";
-        String heading = "The feed, unrolled (" + which + "): where the gas of each point goes";
+        String heading = "Where the gas of the feed goes (" + which + ", unrolled)";
         ink.writeIn(layout.rightEdge - window.x, ink.heading, ink.text, heading, window.x, window.y - 7 * ink.unit);
         ink.colour(ink.dark() ? 0x1d2329 : 0xeff0ee);
         ink.pen.fill(window);
@@ -681,22 +775,29 @@ public final class Plan {
         ink.write(ink.small, ink.text, lower, x, window.getMaxY(), Ink.Side.LEFT);
         ink.write(
                 ink.small, ink.faint, "towards the inner", x, window.getMaxY() - ink.height(ink.small), Ink.Side.LEFT);
+        double line = ink.height(ink.small);
+        if (window.height > 6.4 * line) {
+            double middle = 0.5 * (window.y + ink.ascent(ink.small) + window.getMaxY());
+            double beside = layout.rightEdge - x;
+            ink.writeIn(beside, ink.small, ink.text, "each point: same mass flow,", x, middle - 0.5 * line);
+            ink.writeIn(beside, ink.small, ink.text, "so dense = much gas", x, middle + 0.5 * line);
+        }
         String stretched = stretch >= 1
                 ? "drawn " + Ticks.number(stretch, stretch < 10 ? 1 : 0) + " × too wide across the feed"
                 : "drawn " + Ticks.number(1 / stretch, 1 / stretch < 10 ? 1 : 0) + " × too long along the feed";
+        double length = Ticks.step(1e3 * along * 0.2, 1);
+        String alongWords = Ticks.plain(length) + " mm along";
+        double bar = length * window.width / (1e3 * along);
+        double taken = 20 * ink.unit + Math.max(bar, 0.5 * (bar + ink.width(ink.small, alongWords)));
         ink.write(
                 ink.small,
                 ink.faint,
-                stretched,
+                ink.fitted(ink.small, stretched, window.width - taken),
                 window.getMaxX(),
                 window.getMaxY() + ink.height(ink.small),
                 Ink.Side.RIGHT);
-        double length = Ticks.step(1e3 * along * 0.2, 1);
         ink.scaleBar(
-                window.x + 10 * ink.unit,
-                window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit,
-                length * window.width / (1e3 * along),
-                Ticks.plain(length) + " mm along");
+                window.x + 10 * ink.unit, window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit, bar, alongWords);
     }
 
     private void legend(Ink ink, PlanLayout layout) {
@@ -709,22 +810,19 @@ public final class Plan {
         for (Destination destination : Destination.values()) {
             if (destination != Destination.UNKNOWN || seen.contains(destination)) {
                 entries.add(destination);
-                words.add(
-                        switch (destination) {
-                            case INNER -> "to the inner diameter (" + conditions.innerSide() + ")";
-                            case OUTER -> "to the outer diameter (" + conditions.outerSide() + ")";
-                            case BACK -> "back into the feed";
-                            case HELD -> "held in the film";
-                            case UNKNOWN -> "not followed to an end";
-                        });
+                words.add(destination.words(conditions));
             }
+        }
+        boolean goesOn = paths.stream().anyMatch(Plan::goesOn);
+        if (goesOn) {
+            words.add("open arrow: goes on round");
         }
         double size = 11 * ink.unit;
         double before = size + 6 * ink.unit;
-        int perRow = (entries.size() + 1) / 2;
+        int perRow = (words.size() + 1) / 2;
         double x = layout.sectorWindow.x;
         double widest = 0;
-        for (int n = 0; n < entries.size(); n++) {
+        for (int n = 0; n < words.size(); n++) {
             // Column by column, two rows.
             if (n % 2 == 0 && n > 0) {
                 x += before + widest + 22 * ink.unit;
@@ -733,6 +831,19 @@ public final class Plan {
             double y = layout.legendBase + (n % 2) * 1.25 * ink.height(ink.small);
             double room = (layout.rightEdge - layout.sectorWindow.x) / perRow * 1.4;
             String text = ink.fitted(ink.small, words.get(n), room);
+            if (n == entries.size()) {
+                Path2D.Double arrow = new Path2D.Double();
+                double middle = y - 0.36 * ink.small.getSize2D();
+                Point2D[] shaft = {new Point2D.Double(x, middle), new Point2D.Double(x + size, middle)};
+                arrow.moveTo(x, middle);
+                arrow.lineTo(x + size, middle);
+                openHead(arrow, shaft, 5 * ink.unit);
+                ink.colour(ink.text);
+                ink.stroke(1.5 * ink.unit);
+                ink.pen.draw(arrow);
+                ink.write(ink.small, ink.text, text, x + before, y, Ink.Side.LEFT);
+                continue;
+            }
             Destination destination = entries.get(n);
             ink.mark(
                     destination.marker(x + size / 2, y - 0.36 * ink.small.getSize2D(), size),

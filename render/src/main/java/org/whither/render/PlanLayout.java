@@ -61,7 +61,7 @@ final class PlanLayout {
         double left = margin + side + 30 * unit;
         rightEdge = width - margin;
         Conditions conditions = shape.flow().film().conditions();
-        double names = ink.width(ink.body, "dam, without grooves");
+        double names = ink.width(ink.body, "land, without grooves");
         String diameter = ", " + Words.diameter(0.1);
         for (String detail :
                 new String[] {"Ø 000.0 – 000.0 mm", conditions.innerSide() + diameter, conditions.outerSide() + diameter

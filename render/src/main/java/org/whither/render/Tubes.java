@@ -19,6 +19,15 @@ final class Tubes {
         if (points < 2) {
             return;
         }
+        open(mesh, line, values, radius);
+        ball(mesh, line[0], line[1], line[2], radius, values[0]);
+        int last = 3 * (points - 1);
+        ball(mesh, line[last], line[last + 1], line[last + 2], radius, values[points - 1]);
+    }
+
+    /** Adds a tube as above, but open at both ends. */
+    static void open(MeshBuilder mesh, double[] line, double[] values, double radius) {
+        int points = values.length;
         double[] tangent = new double[3];
         double[] across = new double[3];
         double[] other = new double[3];
@@ -63,9 +72,37 @@ final class Tubes {
             }
             before = first;
         }
-        ball(mesh, line[0], line[1], line[2], radius, values[0]);
-        int last = 3 * (points - 1);
-        ball(mesh, line[last], line[last + 1], line[last + 2], radius, values[points - 1]);
+    }
+
+    /** Adds a thin bar with a square section between two points, open at its ends. */
+    static void bar(MeshBuilder mesh, double[] from, double[] to, double radius) {
+        double[] along = {to[0] - from[0], to[1] - from[1], to[2] - from[2]};
+        if (!unit(along)) {
+            return;
+        }
+        double[] any = new double[3];
+        any[Math.abs(along[2]) < 0.9 ? 2 : 0] = 1;
+        double[] across = new double[3];
+        double[] other = new double[3];
+        cross(along, any, across);
+        unit(across);
+        cross(along, across, other);
+        int before = -1;
+        for (int k = 0; k <= 4; k++) {
+            double cos = Math.cos(0.5 * Math.PI * k);
+            double sin = Math.sin(0.5 * Math.PI * k);
+            double[] n = new double[3];
+            for (int c = 0; c < 3; c++) {
+                n[c] = cos * across[c] + sin * other[c];
+            }
+            int at = mesh.vertex(
+                    from[0] + radius * n[0], from[1] + radius * n[1], from[2] + radius * n[2], n[0], n[1], n[2], 1);
+            mesh.vertex(to[0] + radius * n[0], to[1] + radius * n[1], to[2] + radius * n[2], n[0], n[1], n[2], 1);
+            if (before >= 0) {
+                mesh.quad(before, before + 1, at + 1, at);
+            }
+            before = at;
+        }
     }
 
     /** Adds a ball. */

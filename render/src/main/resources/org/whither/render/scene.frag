@@ -50,11 +50,11 @@ void main() {
     }
     float slant = dot(n, lamp);
     float sun = slant > 0.0 ? slant * sunlit(slant) : 0.0;
-    float sky = mix(0.34, 0.62, 0.5 + 0.5 * n.z) * mix(0.5, 1.0, open);
+    float sky = mix(0.34, 0.62, 0.5 + 0.5 * n.z) * mix(0.3, 1.0, open);
     float fill = 0.16 * max(0.0, dot(n, v));
     vec3 h = normalize(lamp + v);
     float shine = sun > 0.0 ? gloss * pow(max(0.0, dot(n, h)), 48.0) : 0.0;
     vec3 light = sky * vec3(0.94, 0.98, 1.06) + fill + 0.74 * sun * vec3(1.04, 1.0, 0.93);
-    light *= mix(0.86, 1.0, open);
+    light *= mix(0.6, 1.0, open);
     pixel = vec4(toScreen(toLinear(base) * light + 0.5 * shine), opacity);
 }

@@ -11,6 +11,7 @@ import java.util.ArrayList;
 import java.util.List;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.EnumSource;
 import org.junit.jupiter.params.provider.ValueSource;
 import org.whither.film.Frame;
 import org.whither.trace.Path;
@@ -27,21 +28,23 @@ class GapTest {
         GapScene gap = new GapScene(new FilmShape(FILM), exaggeration);
         Camera camera = Gap.camera(gap, SETTINGS);
         BufferedImage image = Gap.draw(FILM, List.of(), new GapSettings(SETTINGS, exaggeration));
-        // Two places on the front rim: the part shown begins in the middle of a land, whose groove lies half a pitch
-        // on.
-        double pitch = FILM.film().grid().pitch();
-        double land = gap.from + 0.1 * pitch;
-        double groove = gap.from + 0.42 * pitch;
-        double r = SpiralFilm.OUTER;
-        double landTop = edge(image, place(camera, gap, land, r, SpiralFilm.DATUM));
+        // Two places on the upper rim of the cut at the open end, one on a land and one on the floor of the groove that
+        // the cut crosses outside its inner end.
+        double land = gap.from;
+        double groove = gap.from;
+        double landTop = edge(image, place(camera, gap, land, 0.066, SpiralFilm.DATUM));
+        double r = 0.0632;
+        assertEquals(SpiralFilm.DATUM - SpiralFilm.DEPTH, gap.rotorAt(groove, r), 1e-12);
         double floor = edge(image, place(camera, gap, groove, r, SpiralFilm.DATUM - SpiralFilm.DEPTH));
         Point2D landThere = place(camera, gap, groove, r, SpiralFilm.DATUM);
         double drawn = floor - landThere.getY();
-        Point2D up = place(camera, gap, groove, r, SpiralFilm.DATUM - SpiralFilm.DEPTH + 1e-6);
-        Point2D foot = place(camera, gap, groove, r, SpiralFilm.DATUM - SpiralFilm.DEPTH);
+        // At half depth, since the view is in perspective.
+        double half = SpiralFilm.DATUM - 0.5 * SpiralFilm.DEPTH;
+        Point2D up = place(camera, gap, groove, r, half + 0.5e-6);
+        Point2D foot = place(camera, gap, groove, r, half - 0.5e-6);
         double perMicrometre = foot.getY() - up.getY();
         assertEquals(5, drawn / perMicrometre, 5 * 0.06, "groove of 5 µm, measured in the picture");
-        assertEquals(place(camera, gap, land, r, SpiralFilm.DATUM).getY(), landTop, 1.6);
+        assertEquals(place(camera, gap, land, 0.066, SpiralFilm.DATUM).getY(), landTop, 1.6);
         // And the scale itself: 1 µm is drawn as exaggeration times 1 µm.
         assertEquals(1e-3 * exaggeration, gap.height(SpiralFilm.DATUM + 1e-6), 1e-9);
     }
@@ -129,11 +132,12 @@ class GapTest {
     void speed_isReadBackFromTheTube(double speed) {
         GapScene gap = new GapScene(new FilmShape(FILM), 1000);
         Camera camera = Gap.camera(gap, SETTINGS);
-        Path path = arc(gap.from + 0.1, gap.from + 0.5, 0.055, 0.5, speed);
+        double start = gap.openTo - 0.1;
+        Path path = arc(start, start - 0.4, 0.055, 0.5, speed);
         BufferedImage image = Gap.draw(FILM, List.of(path), new GapSettings(SETTINGS.speeds(0, 60), 1000));
         // Between two markers, which stand at every twentieth of a millisecond; light changes brightness, not hue.
-        Point2D p = place(
-                camera, gap, gap.from + 0.1 + 0.4 * 0.45 + 0.4 * 0.02, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
+        Point2D p =
+                place(camera, gap, start - 0.4 * 0.45 - 0.4 * 0.02, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
         int seen = PlanTest.rgb(image, p.getX(), p.getY());
         double best = 0;
         double least = Double.POSITIVE_INFINITY;
@@ -169,15 +173,15 @@ class GapTest {
     void markers_standAtEqualTimes() {
         GapScene gap = new GapScene(new FilmShape(FILM), 1000);
         Camera camera = Gap.camera(gap, SETTINGS);
-        Path path = arc(gap.from + 0.1, gap.from + 0.5, 0.055, 0.5, 10);
+        double start = gap.openTo - 0.1;
+        Path path = arc(start, start - 0.4, 0.055, 0.5, 10);
         BufferedImage image = Gap.draw(FILM, List.of(path), new GapSettings(SETTINGS, 1000));
         // The path lasts 400 µs: a marker each 50 µs.
         for (int n = 0; n < 8; n++) {
-            Point2D on =
-                    place(camera, gap, gap.from + 0.1 + 0.4 * n / 8, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
+            Point2D on = place(camera, gap, start - 0.4 * n / 8, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
             assertTrue(whiteness(PlanTest.rgb(image, on.getX(), on.getY())) > 0.9, "marker " + n);
-            Point2D between = place(
-                    camera, gap, gap.from + 0.1 + 0.4 * (n + 0.5) / 8, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
+            Point2D between =
+                    place(camera, gap, start - 0.4 * (n + 0.5) / 8, 0.055, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
             assertTrue(whiteness(PlanTest.rgb(image, between.getX(), between.getY())) < 0.8, "after marker " + n);
         }
     }
@@ -191,26 +195,156 @@ class GapTest {
     }
 
     @Test
-    void rotationArrow_pointsToTheRightForPositiveRotation() {
-        // The eye is outside and the stator above: right = up × towards the eye = z × r = θ.
+    void rotationArrow_pointsToTheLeftForPositiveRotation() {
+        // The eye is over the bore and the stator above: right = towards the eye × up = −r × z = θ turned round.
         GapScene gap = new GapScene(new FilmShape(FILM), 1000);
         Camera camera = Gap.camera(gap, SETTINGS);
-        Point2D[] forward = Gap.rotationArrow(gap, camera, 100, 68, -5);
-        Point2D[] backward = Gap.rotationArrow(gap, camera, -100, 68, -5);
-        assertTrue(forward[40].getX() > forward[0].getX() + 50);
-        assertTrue(backward[40].getX() < backward[0].getX() - 50);
+        Point2D[] forward = Gap.rotationArrow(gap, camera, 100, 50, -5);
+        Point2D[] backward = Gap.rotationArrow(gap, camera, -100, 50, -5);
+        assertTrue(forward[40].getX() < forward[0].getX() - 50);
+        assertTrue(backward[40].getX() > backward[0].getX() + 50);
         double[] a = gap.place(gap.middle, 0.068, SpiralFilm.DATUM);
         double[] b = gap.place(gap.middle + 0.01, 0.068, SpiralFilm.DATUM);
-        assertTrue(camera.project(b[0], b[1], b[2]).x > camera.project(a[0], a[1], a[2]).x);
+        assertTrue(camera.project(b[0], b[1], b[2]).x < camera.project(a[0], a[1], a[2]).x);
+        // Inwards is down, as in a plan.
+        double[] c = gap.place(gap.middle, 0.060, SpiralFilm.DATUM);
+        assertTrue(camera.project(c[0], c[1], c[2]).y > camera.project(a[0], a[1], a[2]).y);
+    }
+
+    @ParameterizedTest
+    @ValueSource(ints = {0, 1, 5, -7})
+    void path_isShownOnceFromTheUpstreamEnd(int sectors) {
+        double pitch = FILM.film().grid().pitch();
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        assertEquals(0, Math.IEEEremainder(gap.to - gap.from, pitch), 1e-12);
+        // Two and a half times round the shaft.
+        double start = gap.openTo - 0.2 + sectors * pitch;
+        Path path = arc(start, start - 5 * Math.PI, 0.055, 0.5, 10);
+        ShownPath shown = ShownPath.of(path, gap);
+        assertEquals(gap.openTo - 0.2, shown.theta(0), 1e-9);
+        for (int n = 1; n < shown.size(); n++) {
+            assertTrue(shown.theta(n) < shown.theta(n - 1) || n == 1, "the path goes on and never comes back");
+            assertTrue(shown.theta(n - 1) - shown.theta(n) < 0.02, "without a gap");
+            assertTrue(shown.theta(n) >= gap.from, "inside the part shown");
+        }
+        assertEquals(gap.from, shown.theta(shown.size() - 1), 1e-12);
+        assertEquals(false, shown.whole());
+        double share = (shown.theta(0) - gap.from) / (5 * Math.PI);
+        assertEquals(4e-4 * share, shown.duration(), 1e-9);
     }
 
     @Test
-    void longPaths_comeBackAtTheOtherEnd() {
+    void path_afterItHasLeftThePart_isNotDrawn() {
         GapScene gap = new GapScene(new FilmShape(FILM), 1000);
-        double width = gap.to - gap.from;
-        assertEquals(gap.from + 0.2, gap.folded(gap.from + 0.2 + 3 * width), 1e-12);
-        assertEquals(gap.to - 0.1, gap.folded(gap.from - 0.1), 1e-12);
-        assertEquals(0, Math.IEEEremainder(width, FILM.film().grid().pitch()), 1e-12);
+        double start = gap.openTo - 0.2;
+        double reach = start - gap.from;
+        // Of two paths that are one inside the part, one ends soon after it and the other goes on round the ring.
+        Path longer = arc(start, start - 20 * reach, 0.055, 0.5, 10);
+        List<PathPoint> few = new ArrayList<>(longer.points().subList(0, 4));
+        Path shorter = new Path(longer.release(), few, longer.end());
+        BufferedImage a = Gap.draw(FILM, List.of(longer), new GapSettings(SETTINGS, 1000));
+        BufferedImage b = Gap.draw(FILM, List.of(shorter), new GapSettings(SETTINGS, 1000));
+        for (int y = 0; y < a.getHeight(); y++) {
+            for (int x = 0; x < a.getWidth(); x++) {
+                assertEquals(b.getRGB(x, y), a.getRGB(x, y), "pixel " + x + ", " + y);
+            }
+        }
+    }
+
+    @Test
+    void arrowhead_isOpenWhereThePathGoesOn() {
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        double r = 0.055;
+        // One path ends a hair inside the part shown, the other goes on.
+        Path ends = arc(gap.openTo - 0.3, gap.from + 1e-4, r, 0.5, 10);
+        Path goesOn = arc(gap.openTo - 0.3, gap.from - 1, r, 0.5, 10);
+        double back = 0.85 * GapScene.OPEN_HEAD * gap.tubeRadius();
+        double aside = 0.62 * back;
+        double theta = gap.from + 1e-3 * back / r;
+        int wings = 0;
+        for (Path path : List.of(ends, goesOn)) {
+            BufferedImage image = Gap.draw(FILM, List.of(path), new GapSettings(SETTINGS.speeds(0, 60), 1000));
+            for (int side = -1; side <= 1; side += 2) {
+                Point2D p =
+                        place(camera, gap, theta, r + 1e-3 * side * aside, SpiralFilm.DATUM + 0.5 * SpiralFilm.LAND);
+                int seen = PlanTest.rgb(image, p.getX(), p.getY());
+                boolean blue = (seen & 0xff) > (seen >> 16 & 0xff) + 30;
+                assertEquals(
+                        path.equals(goesOn), blue, "wing " + side + " has the colour " + Integer.toHexString(seen));
+                wings++;
+            }
+        }
+        assertEquals(4, wings);
+    }
+
+    @Test
+    void end_isMarkedWithTheColourOfItsDestination() {
+        GapScene gap = new GapScene(new FilmShape(FILM), 1000);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        double start = gap.openTo - 0.1;
+        Path held = arc(start, start - 0.4, 0.055, 0.5, 10);
+        Path inner = new Path(
+                held.release(),
+                held.points(),
+                new org.whither.trace.PathEnd.Left(
+                        org.whither.trace.PathEnd.Border.INNER, 4e-4, held.end().position()));
+        for (Path path : List.of(held, inner)) {
+            BufferedImage image = Gap.draw(FILM, List.of(path), new GapSettings(SETTINGS, 1000));
+            double[] p = gap.endOf(ShownPath.of(path, gap), 9 * gap.tubeRadius())[1];
+            Point2D at = camera.project(p[0], p[1], p[2]);
+            assertEquals(Destination.of(path.end()).colour(), PlanTest.rgb(image, at.getX(), at.getY()));
+        }
+    }
+
+    @ParameterizedTest
+    @EnumSource(FaceWords.Kind.class)
+    void wordsOnTheFace_standOnWhatTheyName(FaceWords.Kind kind) {
+        FilmShape shape = new FilmShape(FILM);
+        GapScene gap = new GapScene(shape, 1000);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        FaceWords.Place place = new FaceWords(shape, gap, camera, List.of()).find(kind, 40, 11);
+        boolean floor = kind == FaceWords.Kind.GROOVE;
+        // By eye of the depth test: only the floors of the grooves are red, all else is not.
+        Mesh rotor = gap.rings().get(0).mesh();
+        List<Integer> floors = new ArrayList<>();
+        int[] t = rotor.triangles();
+        for (int k = 0; k < t.length; k += 3) {
+            boolean low = true;
+            for (int c = 0; c < 3; c++) {
+                low &= Math.abs(rotor.positions()[3 * t[k + c] + 2] + 5) < 1e-3;
+            }
+            if (low) {
+                floors.addAll(List.of(t[k], t[k + 1], t[k + 2]));
+            }
+        }
+        Mesh red = new Mesh(
+                rotor.positions(),
+                rotor.normals(),
+                rotor.values(),
+                floors.stream().mapToInt(Integer::intValue).toArray());
+        List<Scene.Item> items = new ArrayList<>();
+        gap.rings().forEach(item -> items.add(new Scene.Item(item.mesh(), Scene.Material.plain(0x0000ff, 1), 0)));
+        items.add(new Scene.Item(red, Scene.Material.plain(0xff0000, 1), 0));
+        try (Canvas canvas = new Canvas(SETTINGS.width(), SETTINGS.height())) {
+            BufferedImage image =
+                    canvas.draw(0, List.of(new Canvas.View(new Scene(items, Scene.Light.from(0, 0, 1)), camera)));
+            assertEquals(floor ? 0xff0000 : 0x0000ff, PlanTest.rgb(image, place.x(), place.y()), kind.words());
+        }
+        double radius = place.radius();
+        assertEquals(kind == FaceWords.Kind.DAM, radius < SpiralFilm.TIP, "only the dam is inside the grooves' ends");
+    }
+
+    @Test
+    void speedScale_endsAtRoundNumbersAndIsNotMostlyEmpty() {
+        assertEquals(new PictureSettings.Range(0, 80), Gap.range(1.3, 78.2));
+        assertEquals(new PictureSettings.Range(40, 46), Gap.range(40.4, 45.1));
+        PictureSettings.Range one = Gap.range(10, 10);
+        assertTrue(one.low() <= 10 && one.high() >= 10 && one.high() - one.low() <= 2, one.toString());
+        for (double high = 1; high < 200; high *= 1.07) {
+            PictureSettings.Range range = Gap.range(0, high);
+            assertTrue(range.high() >= high * (1 - 1e-9) && high > 0.75 * range.high(), range + " for " + high);
+        }
     }
 
     @Test

@@ -63,6 +63,75 @@ class PlanTest {
     }
 
     @Test
+    void dam_isTheRingWhereThePressurePeaks() {
+        // Inside the grooves, as wide as it is; and outside them, although the ring on the other side is wider.
+        FilmShape.Band usual = new FilmShape(FILM).dam();
+        assertEquals(new FilmShape.Band(SpiralFilm.INNER, SpiralFilm.TIP), usual);
+        FilmShape other = new FilmShape(SpiralFilm.groovedInside());
+        assertEquals(2, other.ungrooved().size());
+        assertEquals(new FilmShape.Band(SpiralFilm.TIP, SpiralFilm.OUTER), other.dam());
+        assertTrue(other.ungrooved().get(0).width() > other.dam().width());
+        assertEquals("dam, without grooves", Plan.name(other, other.dam()));
+        assertEquals("land, without grooves", Plan.name(other, other.ungrooved().get(0)));
+    }
+
+    @Test
+    void footprint_isDrawnForItsFirstTimeRoundOnly() {
+        List<PathPoint> points = new java.util.ArrayList<>();
+        for (int n = 0; n <= 100; n++) {
+            double theta = 1 - 0.3 * n;
+            points.add(new PathPoint(n, theta, theta, 0.055, 0, 0.5, 1, 1e5));
+        }
+        org.whither.trace.PathEnd.Position end = new org.whither.trace.PathEnd.Position(-29, -29, 0.055, 0.5);
+        Path path = new Path(
+                new org.whither.trace.Release(1, 0.055, 0.5, 1),
+                points,
+                new org.whither.trace.PathEnd.StillInside(100, end));
+        PlanLayout layout = layout(SETTINGS, false);
+        Point2D[] shown = Plan.footprint(path, layout.ring);
+        double length = 0;
+        for (int n = 1; n < shown.length; n++) {
+            length += shown[n].distance(shown[n - 1]);
+        }
+        double round = 2 * Math.PI * 55 * layout.ringScale;
+        assertTrue(length < round && length > 0.85 * round, length + " of " + round + " pixels");
+    }
+
+    @Test
+    void grooveEdges_areDarkWithALightCasing() {
+        BufferedImage image = Plan.draw(FILM, List.of(), List.of(), SETTINGS);
+        PlanLayout layout = layout(SETTINGS, false);
+        java.awt.Rectangle inside = new java.awt.Rectangle(layout.sectorWindow);
+        inside.grow(-12, -12);
+        int cased = 0;
+        int all = 0;
+        for (FilmShape.Edge edge : new FilmShape(FILM).grooveEdges()) {
+            for (int turn = -1; turn <= 1; turn++) {
+                double pitch = turn * FILM.film().grid().pitch();
+                double x0 = 1e3 * edge.r0() * Math.cos(edge.theta0() + pitch);
+                double y0 = 1e3 * edge.r0() * Math.sin(edge.theta0() + pitch);
+                double x1 = 1e3 * edge.r1() * Math.cos(edge.theta1() + pitch);
+                double y1 = 1e3 * edge.r1() * Math.sin(edge.theta1() + pitch);
+                Point2D a = layout.sector.project(x0, y0, 0);
+                Point2D b = layout.sector.project(x1, y1, 0);
+                Point2D m = layout.sector.project(0.5 * (x0 + x1), 0.5 * (y0 + y1), 0);
+                double length = a.distance(b);
+                if (!inside.contains(m) || length < 3) {
+                    continue;
+                }
+                double nx = (b.getY() - a.getY()) / length;
+                double ny = (a.getX() - b.getX()) / length;
+                all++;
+                double dark = Colours.lightness(rgb(image, m.getX(), m.getY()));
+                double one = Colours.lightness(rgb(image, m.getX() + 1.6 * nx, m.getY() + 1.6 * ny));
+                double two = Colours.lightness(rgb(image, m.getX() - 1.6 * nx, m.getY() - 1.6 * ny));
+                cased += dark < 45 && Math.max(one, two) > 80 && Math.min(one, two) > dark + 15 ? 1 : 0;
+            }
+        }
+        assertTrue(all > 20 && cased > 0.85 * all, cased + " of " + all + " edges");
+    }
+
+    @Test
     void fixedRange_setsTheBar() {
         BufferedImage image = Plan.draw(FILM, List.of(), List.of(), SETTINGS.pressures(0, 20e5));
         PlanLayout layout = layout(SETTINGS, false);

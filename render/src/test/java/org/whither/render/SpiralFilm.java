@@ -43,6 +43,11 @@ final class SpiralFilm implements FilmFlow {
     private final boolean stepped;
     private final double groovedShare = 0.5;
 
+    /** With grooves inside a dam, and a wider ring without grooves inside of them. */
+    static SpiralFilm groovedInside() {
+        return new SpiralFilm(12, 12000 * Math.PI / 30, true, Face.STATOR, 1, 0.0580, TIP);
+    }
+
     SpiralFilm() {
         this(12, 12000 * Math.PI / 30, true, Face.STATOR);
     }
@@ -78,6 +83,17 @@ final class SpiralFilm implements FilmFlow {
 
     /** As above, on a grid that is so many times finer both ways. */
     SpiralFilm(int sectors, double rotationRate, boolean stepped, Face feedFace, int finer) {
+        this(sectors, rotationRate, stepped, feedFace, finer, TIP, OUTER);
+    }
+
+    private SpiralFilm(
+            int sectors,
+            double rotationRate,
+            boolean stepped,
+            Face feedFace,
+            int finer,
+            double grooveFrom,
+            double grooveTo) {
         this.stepped = stepped;
         double[] radius = radii(finer);
         int ni = 24 * finer + 1;
@@ -99,7 +115,7 @@ final class SpiralFilm implements FilmFlow {
             int j = n % rows;
             double r = stepped ? 0.5 * (radius[j] + radius[j + 1]) : radius[j];
             double at = (stepped ? i + 0.5 : i % (ni - 1)) / (ni - 1);
-            rotor[n] = DATUM - (r > TIP && at < groovedShare ? DEPTH : 0);
+            rotor[n] = DATUM - (r > grooveFrom && r <= grooveTo && at < groovedShare ? DEPTH : 0);
             stator[n] = DATUM + LAND;
         }
         RingFaces faces = new RingFaces(stepped ? Location.CELL : Location.NODE, rotor, stator);

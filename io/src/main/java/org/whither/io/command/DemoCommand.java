@@ -33,7 +33,7 @@ import picocli.CommandLine.Spec;
         sortOptions = false)
 final class DemoCommand implements Callable<Integer> {
     private static final Path DEFAULT_FOLDER = Path.of("demo-whither");
-    private static final int PATHS = 12;
+    private static final int PATHS = 7;
 
     @Spec
     private CommandSpec spec;

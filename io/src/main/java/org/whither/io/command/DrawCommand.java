@@ -90,8 +90,8 @@ final class DrawCommand implements Callable<Integer> {
     @Option(
             names = "--paths",
             paramLabel = "N",
-            defaultValue = "12",
-            description = "How many paths from the feed to draw, 0 … 500 (default: ${DEFAULT-VALUE}).")
+            defaultValue = "7",
+            description = "How many paths to draw from where gas enters, 0 … 500 (default: ${DEFAULT-VALUE}).")
     private int pathCount;
 
     @Mixin

@@ -52,19 +52,40 @@ final class Pictures {
     }
 
     /**
-     * Paths from where gas enters: over the feed, and one for every four of them from each diameter that lets gas in.
+     * Paths from where gas enters, chosen to differ: from many tracers few that show every way that a good part of the
+     * gas goes, at different heights, from different places of the feed. Where gas enters at a diameter too, a quarter
+     * of them starts there.
+     *
+     * @param count how many paths in all
      */
     static List<org.whither.trace.Path> paths(FilmFlow flow, TraceSettings settings, long seed, int count) {
+        List<PathEnd.Border> entries = new ArrayList<>();
+        double inflow = BorderBalance.of(flow).inflow();
+        for (PathEnd.Border border : PathEnd.Border.values()) {
+            if (ReleasePlan.entering(flow, border).massFlow() > 1e-9 * inflow) {
+                entries.add(border);
+            }
+        }
+        List<org.whither.trace.Path> paths = new ArrayList<>();
+        int atDiameters = entries.contains(PathEnd.Border.SUPPLY) ? (count + 2) / 4 : count;
+        int diameters =
+                (int) entries.stream().filter(b -> b != PathEnd.Border.SUPPLY).count();
+        for (PathEnd.Border border : entries) {
+            int number = border != PathEnd.Border.SUPPLY
+                    ? atDiameters / diameters
+                    : diameters > 0 ? count - atDiameters / diameters * diameters : count;
+            paths.addAll(PathChoice.choose(recorded(flow, settings, border, seed, 8 * number), number));
+        }
+        return paths;
+    }
+
+    private static List<org.whither.trace.Path> recorded(
+            FilmFlow flow, TraceSettings settings, PathEnd.Border border, long seed, int number) {
         Tracer tracer = new Tracer(flow, settings);
         List<org.whither.trace.Path> paths = new ArrayList<>();
-        for (PathEnd.Border border : PathEnd.Border.values()) {
-            ReleasePlan plan = ReleasePlan.entering(flow, border);
-            int number = border == PathEnd.Border.SUPPLY ? count : Math.max(1, count / 4);
-            if (plan.massFlow() > 1e-9 * BorderBalance.of(flow).inflow()) {
-                for (Release release : plan.releases(seed, 0, number)) {
-                    paths.add(tracer.record(release));
-                }
-            }
+        for (Release release :
+                ReleasePlan.entering(flow, border).releases(seed, 0, Math.min(number, MOST_FED_POINTS))) {
+            paths.add(tracer.record(release));
         }
         return paths;
     }
