@@ -37,13 +37,11 @@ final class BorderTracing {
     private static final double MOST_PART = 0.65;
     private static final double LAST_PART = 0.02;
     private static final int FEWEST_CHECKS = 1024;
-    private static final int CHECKS_AT_ONCE = 1024;
-    /** Steps a border may use: where much gas is held, tracers go round until the time limit. */
-    private static final long MOST_STEPS = 60_000_000;
-    /** The same for a border from which gas is followed back, which only confirms the others. */
-    private static final long MOST_STEPS_BACK = 30_000_000;
-
+    private static final int CHECKS_AT_ONCE = 256;
     private static final double MAP_PART = 0.6;
+    private static final double MESH_PART = 0.2;
+    private static final int SCOUTS = 32;
+    private static final int COARSEST = 4;
     private static final int FATES = Destination.values().length;
 
     private final FilmFlow flow;
@@ -99,7 +97,7 @@ final class BorderTracing {
     }
 
     private void run() {
-        map = new PatchMap(this::fates, FATES, random.split());
+        map = new PatchMap(this::fates, FATES, mesh(), random.split());
         double width = settings.width();
         refine(MOST_PART * width);
         double target = cheapestPart() * width;
@@ -123,13 +121,29 @@ final class BorderTracing {
         progress.accept(1);
     }
 
+    /** Patches along a side of the first mesh: fewer where a few scouts tell that it would cost too much. */
+    private int mesh() {
+        double[][] points = stratified(SCOUTS, random);
+        fates(points[0], points[1]);
+        int mesh = PatchMap.MESH;
+        while (mesh > COARSEST && 3.0 * mesh * mesh * steps / SCOUTS > MESH_PART * mostSteps()) {
+            mesh /= 2;
+        }
+        return mesh;
+    }
+
+    /** Gas followed back only confirms what the gas followed forward told: it may cost half as much. */
+    private long mostSteps() {
+        return settings.mostSteps() / (direction == Direction.FORWARD ? 1 : 2);
+    }
+
     /**
      * The part of the wanted width to leave to what is unsettled so that map and checks together cost least. The map
      * costs c/U tracers for an unsettled part U, c being known from the tracers it took so far; the checks cost z²/B for a
      * bound B of what was missed, which counts below and above the share: U + 2B is the width.
      */
     private double cheapestPart() {
-        double ofMap = Math.sqrt(Math.max(0, map.points() - PatchMap.FIRST_POINTS) * map.mixed());
+        double ofMap = Math.sqrt(Math.max(0, map.points() - map.firstPoints()) * map.mixed());
         double ofChecks = Math.sqrt(2) * DEVIATE[0];
         return Math.max(LEAST_PART, Math.min(MOST_PART, ofMap / (ofMap + ofChecks)));
     }
@@ -142,8 +156,7 @@ final class BorderTracing {
     }
 
     private boolean mayGoOn(double part) {
-        return tracers < part * settings.mostTracers()
-                && steps < part * (direction == Direction.FORWARD ? MOST_STEPS : MOST_STEPS_BACK);
+        return tracers < part * settings.mostTracers() && steps < part * mostSteps();
     }
 
     private void refine(double target) {

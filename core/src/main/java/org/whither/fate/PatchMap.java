@@ -41,7 +41,6 @@ final class PatchMap {
 
     private static final int BITS = 26;
     private static final int SIDE = 1 << BITS;
-    private static final int FIRST = SIDE / MESH;
     private static final int MOST_AT_ONCE = 256;
     /** Smaller patches make do with their corners: all together hold little area, and the checks cover them too. */
     private static final long LEAST_WITH_INSIDE = 1L << (2 * BITS - 13);
@@ -50,7 +49,9 @@ final class PatchMap {
 
     private final FateFinder finder;
     private final SplittableRandom random;
-    private final Patch[] roots = new Patch[MESH * MESH];
+    private final int mesh;
+    private final int first;
+    private final Patch[] roots;
     private final Map<Long, Integer> corners = new HashMap<>();
     private final PriorityQueue<Patch> mixed = new PriorityQueue<>();
     private final long[] settledArea;
@@ -69,15 +70,19 @@ final class PatchMap {
      *
      * @param finder finds fates
      * @param fates how many fates there are
+     * @param mesh patches along each side of the first mesh, a power of two
      * @param random source of the points inside patches
      */
-    PatchMap(FateFinder finder, int fates, SplittableRandom random) {
+    PatchMap(FateFinder finder, int fates, int mesh, SplittableRandom random) {
+        this.mesh = mesh;
+        this.first = SIDE / mesh;
+        this.roots = new Patch[mesh * mesh];
         this.finder = finder;
         this.random = random;
         this.settledArea = new long[fates];
         for (int n = 0; n < roots.length; n++) {
-            roots[n] = new Patch(n / MESH * FIRST, n % MESH * FIRST, FIRST, FIRST, patches++);
-            add(roots[n].u + FIRST / 2.0, roots[n].v + FIRST / 2.0);
+            roots[n] = new Patch(n / mesh * first, n % mesh * first, first, first, patches++);
+            add(roots[n].u + first / 2.0, roots[n].v + first / 2.0);
             fresh.add(roots[n]);
         }
         completeFresh();
@@ -145,6 +150,11 @@ final class PatchMap {
     /** Points whose fates were found for the map. */
     int points() {
         return points;
+    }
+
+    /** Points of the first mesh: corners, and two in each patch. */
+    int firstPoints() {
+        return mesh * (mesh + 1) + 2 * mesh * mesh;
     }
 
     /** Number of patches. */
@@ -249,7 +259,7 @@ final class PatchMap {
     }
 
     private Patch leafAt(double u, double v) {
-        Patch patch = roots[Math.min(MESH - 1, (int) (u / FIRST)) * MESH + Math.min(MESH - 1, (int) (v / FIRST))];
+        Patch patch = roots[Math.min(mesh - 1, (int) (u / first)) * mesh + Math.min(mesh - 1, (int) (v / first))];
         while (patch.low != null) {
             boolean below = patch.cutAcrossU() ? u < patch.high.u : v < patch.high.v;
             patch = below ? patch.low : patch.high;
@@ -360,20 +370,20 @@ final class PatchMap {
     private void place(int point) {
         double u = pointU[point];
         double v = pointV[point];
-        int column = Math.min(MESH - 1, (int) (u / FIRST));
-        int row = Math.min(MESH - 1, (int) (v / FIRST));
-        boolean onLineU = u == (double) column * FIRST;
-        boolean onLineV = v == (double) row * FIRST && row > 0;
-        place(roots[column * MESH + row], u, v, point);
+        int column = Math.min(mesh - 1, (int) (u / first));
+        int row = Math.min(mesh - 1, (int) (v / first));
+        boolean onLineU = u == (double) column * first;
+        boolean onLineV = v == (double) row * first && row > 0;
+        place(roots[column * mesh + row], u, v, point);
         if (onLineV) {
-            place(roots[column * MESH + row - 1], u, v, point);
+            place(roots[column * mesh + row - 1], u, v, point);
         }
         if (onLineU) {
-            int left = (column + MESH - 1) % MESH;
+            int left = (column + mesh - 1) % mesh;
             double seen = column == 0 ? u + SIDE : u;
-            place(roots[left * MESH + row], seen, v, point);
+            place(roots[left * mesh + row], seen, v, point);
             if (onLineV) {
-                place(roots[left * MESH + row - 1], seen, v, point);
+                place(roots[left * mesh + row - 1], seen, v, point);
             }
         }
     }

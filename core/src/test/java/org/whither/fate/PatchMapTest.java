@@ -17,7 +17,7 @@ class PatchMapTest {
             }
             return found;
         };
-        return new PatchMap(finder, 3, new SplittableRandom(5));
+        return new PatchMap(finder, 3, PatchMap.MESH, new SplittableRandom(5));
     }
 
     /** A disc over the line where u = 0 and u = 1 meet; area π r². */

@@ -152,13 +152,17 @@ class SplitTest {
         }
     }
 
-    /** Plain nodal interpolation is not exact: the split within 1 %, and the closure says how far it is off. */
+    /**
+     * Plain nodal interpolation is not exact: the split within 1 %, and the closure says how far it is off. Followed back,
+     * much of its gas stays in the feed row: the budget ends that, and the interval says so.
+     */
     @Test
     void split_fullField_nearExactShares() {
-        FilmFlow flow = new NodalFlow(RadialCase.fullFilm(GRID, 17, Frame.STATIONARY, Frame.ROTATING));
-        SplitSettings few = new SplitSettings(Frame.ROTATING, 1e-6, 0.05, 7, 2, 1024);
+        FilmGrid grid = RadialCase.grid(3, RadialCase.radii(60, 48, 2e-4), 12, 0.3);
+        FilmFlow flow = new NodalFlow(RadialCase.fullFilm(grid, 17, Frame.STATIONARY, Frame.ROTATING));
+        SplitSettings few = new SplitSettings(Frame.ROTATING, 1e-6, 0.05, 7, 2, 2000);
         Split split = Split.of(flow, few, x -> {});
-        assertEquals(0.05, split.uncertainty().sampling(), 0.05);
+        assertTrue(split.maps().stream().allMatch(map -> map.steps() < 4_000_000));
         double inner = split.row(Border.SUPPLY, Destination.INNER)
                 .orElseThrow()
                 .share()
