@@ -42,6 +42,8 @@ final class BorderTracing {
     private static final double MESH_PART = 0.2;
     private static final int SCOUTS = 32;
     private static final int COARSEST = 4;
+    private static final int EDGE_SCOUTS = 64;
+    private static final double EDGE_REACH = 0.01;
     private static final int FATES = Destination.values().length;
 
     private final FilmFlow flow;
@@ -98,6 +100,7 @@ final class BorderTracing {
 
     private void run() {
         map = new PatchMap(this::fates, FATES, mesh(), random.split());
+        scoutEdges();
         double width = settings.width();
         refine(MOST_PART * width);
         double target = cheapestPart() * width;
@@ -130,6 +133,23 @@ final class BorderTracing {
             mesh /= 2;
         }
         return mesh;
+    }
+
+    /**
+     * Puts more points near both ends of v into the first mesh: beside the edge of a feed, or a face, there are narrow
+     * pockets of gas that is held or goes another way.
+     */
+    private void scoutEdges() {
+        double[] u = new double[2 * EDGE_SCOUTS];
+        double[] v = new double[u.length];
+        for (int n = 0; n < u.length; n++) {
+            u[n] = (n / 2 + random.nextDouble()) / EDGE_SCOUTS;
+            double near = edge * Math.pow(EDGE_REACH / edge, random.nextDouble());
+            v[n] = n % 2 == 0 ? near : 1 - near;
+        }
+        if (edge < EDGE_REACH && mayGoOn(MAP_PART)) {
+            map.place(u, v, fates(u, v));
+        }
     }
 
     /** Gas followed back only confirms what the gas followed forward told: it may cost half as much. */

@@ -46,9 +46,9 @@ public record Interval(double share, double low, double high) {
                         .getUpperBound());
     }
 
-    /** The interval, each bound and the share times a factor, but no bound above 1. */
+    /** The interval, its share and both bounds times a factor, but none above 1. */
     Interval times(double factor) {
-        return new Interval(share * factor, Math.min(1, low * factor), Math.min(1, high * factor));
+        return new Interval(Math.min(1, share * factor), Math.min(1, low * factor), Math.min(1, high * factor));
     }
 
     /** Its width. */

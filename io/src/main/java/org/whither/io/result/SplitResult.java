@@ -377,12 +377,12 @@ public record SplitResult(
         line(s, "  sampling     widest interval %.5f; wanted %s", uncertainty.sampling(), settings.width());
         line(
                 s,
-                "  field        closure %.1e of the inflow%s; %s interpolation",
+                "  field        closure %.1e of the inflow%s; interpolation %s",
                 split.balance().closure(),
                 uncertainty.flowCorrection().isPresent()
                         ? String.format(
                                 Locale.ROOT,
-                                "; flows of the cells balanced by %.1e of themselves",
+                                "; flows of the cells balanced by %.1e",
                                 uncertainty.flowCorrection().getAsDouble())
                         : "",
                 flow.interpolation());
@@ -397,9 +397,9 @@ public record SplitResult(
         for (BorderMap map : split.maps()) {
             line(
                     s,
-                    "  %-8s %-22s %6d tracers, %6d patches, %8s not settled; %6d checks, %d wrong: missed < %s",
+                    "  %-8s from %-18s %6d tracers, %6d patches, %s not settled; %d checks, %d wrong: missed < %s",
                     name(map.direction()),
-                    "from " + place(map.border()),
+                    place(map.border()),
                     map.mapTracers(),
                     map.patches(),
                     String.format(Locale.ROOT, "%.3f %%", 100 * map.unsettled()),
