@@ -394,18 +394,27 @@ public record SplitResult(
                 split.tracers(),
                 split.steps(),
                 seconds);
+        line(
+                s,
+                "%-34s %8s %8s %13s %8s %7s %14s",
+                "maps",
+                "tracers",
+                "patches",
+                "not settled",
+                "checks",
+                "wrong",
+                "missed below");
         for (BorderMap map : split.maps()) {
             line(
                     s,
-                    "  %-8s from %-18s %6d tracers, %6d patches, %s not settled; %d checks, %d wrong: missed < %s",
-                    name(map.direction()),
-                    place(map.border()),
+                    "%-34s %8d %8d %11.3f %% %8d %7d %12.3f %%",
+                    "  " + name(map.direction()) + " from " + place(map.border()),
                     map.mapTracers(),
                     map.patches(),
-                    String.format(Locale.ROOT, "%.3f %%", 100 * map.unsettled()),
+                    100 * map.unsettled(),
                     map.checks(),
                     map.wrongChecks(),
-                    String.format(Locale.ROOT, "%.3f %%", 100 * map.missedBound()));
+                    100 * map.missedBound());
         }
     }
 
