@@ -1,6 +1,5 @@
 package org.whither.fate;
 
-import org.apache.commons.math3.distribution.TDistribution;
 import org.apache.commons.math3.stat.interval.WilsonScoreInterval;
 
 /**
@@ -11,37 +10,45 @@ import org.apache.commons.math3.stat.interval.WilsonScoreInterval;
  * @param high its upper bound
  */
 public record Interval(double share, double low, double high) {
-    private static final double CONFIDENCE = 0.95;
+    /**
+     * The interval of a share from a map: from its settled part, less what may have been missed there, to its settled
+     * part with all that is unsettled, and what may have been missed elsewhere.
+     *
+     * @param share estimate
+     * @param settled settled part of this fate
+     * @param unsettled part whose fate is not settled
+     * @param missed upper bound of the settled part that has another fate than its patch
+     */
+    static Interval ofMap(double share, double settled, double unsettled, double missed) {
+        double low = Math.max(0, settled - missed);
+        double high = Math.min(1, settled + unsettled + missed);
+        return new Interval(Math.max(low, Math.min(high, share)), low, high);
+    }
 
     /**
-     * The interval of a share from independent replicates: Student's t over their shares. It is never narrower than what
-     * one replicate can resolve, and where no tracer or every tracer counts it is E. B. Wilson's (J. Am. Stat. Assoc. 22,
-     * 1927) for all tracers together.
+     * The one-sided upper bound of a share from independent trials, after E. B. Wilson, J. Am. Stat. Assoc. 22 (1927)
+     * 209–212. Trials of unequal chances, one in each of as many equal parts of an area, only make it safer (W. Hoeffding,
+     * Ann. Math. Stat. 27 (1956) 713–721).
      *
-     * @param hits tracers that count, in each replicate
-     * @param size tracers of each replicate
-     * @return the interval
+     * @param hits trials that count
+     * @param trials all trials; none gives 1
+     * @param confidence chance that the bound holds
      */
-    static Interval ofReplicates(int[] hits, int size) {
-        int replicates = hits.length;
-        double mean = 0;
-        int all = 0;
-        for (int hit : hits) {
-            mean += (double) hit / size / replicates;
-            all += hit;
+    static double upperBound(int hits, int trials, double confidence) {
+        if (trials == 0) {
+            return 1;
         }
-        if (all == 0 || all == size * replicates) {
-            var wilson = new WilsonScoreInterval().createInterval(size * replicates, all, CONFIDENCE);
-            return new Interval(mean, Math.max(0, wilson.getLowerBound()), Math.min(1, wilson.getUpperBound()));
-        }
-        double variance = 0;
-        for (int hit : hits) {
-            double off = (double) hit / size - mean;
-            variance += off * off / (replicates - 1);
-        }
-        double t = new TDistribution(replicates - 1).inverseCumulativeProbability(0.5 + CONFIDENCE / 2);
-        double half = Math.max(t * Math.sqrt(variance / replicates), 0.25 / size);
-        return new Interval(mean, Math.max(0, mean - half), Math.min(1, mean + half));
+        double bothSides = 2 * confidence - 1;
+        return Math.min(
+                1,
+                new WilsonScoreInterval()
+                        .createInterval(trials, hits, bothSides)
+                        .getUpperBound());
+    }
+
+    /** The interval, its share and both bounds times a factor, but none above 1. */
+    Interval times(double factor) {
+        return new Interval(Math.min(1, share * factor), Math.min(1, low * factor), Math.min(1, high * factor));
     }
 
     /** Its width. */

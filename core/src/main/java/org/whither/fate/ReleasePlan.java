@@ -107,7 +107,7 @@ public final class ReleasePlan {
             double[] point = n == first ? sobol.skipTo(n) : sobol.nextVector();
             double u = shifted(point[0], shiftU);
             double v = shifted(point[1], shiftV);
-            releases.add(release(u, v, each));
+            releases.add(at(u, v, each));
         }
         return releases;
     }
@@ -116,7 +116,20 @@ public final class ReleasePlan {
         return ((((long) (coordinate * TWO_TO_52)) ^ shift) + 0.5) / TWO_TO_52;
     }
 
-    private Release release(double u, double v, double massFlow) {
+    /**
+     * The release at a point of the unit square.
+     *
+     * @param u share of the mass flow that enters at smaller angles of the sector, 0 … 1
+     * @param v share of the flow of that column of cells that enters at a smaller radius (feed) or height (diameters),
+     *     0 … 1
+     * @param massFlow mass flow that the tracer is to stand for (kg/s)
+     * @return the release
+     * @throws IllegalStateException where nothing enters
+     */
+    public Release at(double u, double v, double massFlow) {
+        if (massFlow() <= 0) {
+            throw new IllegalStateException("no gas crosses the " + border + " border this way; expected some");
+        }
         FilmGrid grid = flow.film().grid();
         double column = u * columnTotal[columnTotal.length - 1];
         int i = find(columnTotal, column);

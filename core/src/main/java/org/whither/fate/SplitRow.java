@@ -1,6 +1,7 @@
 package org.whither.fate;
 
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.whither.trace.PathEnd;
 
 /**
@@ -12,6 +13,8 @@ import org.whither.trace.PathEnd;
  * @param share share of the gas of that origin, with its interval
  * @param residenceTime time between entering and leaving (s); none where nothing left
  * @param revolutions turns about the shaft in the stationary frame, positive towards +θ; none where nothing left
+ * @param shortestTime the shortest time between entering and leaving that was found (s); none where nothing left
+ * @param travel what it meets on its way and where it leaves; none where nothing left
  */
 public record SplitRow(
         Optional<PathEnd.Border> from,
@@ -19,4 +22,6 @@ public record SplitRow(
         double massFlow,
         Interval share,
         Optional<Quantiles> residenceTime,
-        Optional<Quantiles> revolutions) {}
+        Optional<Quantiles> revolutions,
+        OptionalDouble shortestTime,
+        Optional<Travel> travel) {}

@@ -25,6 +25,14 @@ public final class ParallelTracing {
      */
     public record Outcome(List<PathEnd> ends, long steps, long rejectedSteps) {}
 
+    /**
+     * What became of the tracers, and what they met.
+     *
+     * @param outcome their ends
+     * @param measures one for each release, in order
+     */
+    public record Measured(Outcome outcome, List<PathMeasure> measures) {}
+
     private ParallelTracing() {}
 
     /**
@@ -40,6 +48,29 @@ public final class ParallelTracing {
      */
     public static Outcome follow(
             FilmFlow flow, TraceSettings settings, List<Release> releases, int threads, IntConsumer progress) {
+        return run(flow, settings, releases, threads, progress, null);
+    }
+
+    /**
+     * Follows tracers to their ends, and measures their paths on the way; arguments as in {@link #follow}.
+     *
+     * @return what became of them, and what they met
+     * @throws CancellationException where the calling thread is interrupted
+     */
+    public static Measured measure(
+            FilmFlow flow, TraceSettings settings, List<Release> releases, int threads, IntConsumer progress) {
+        PathMeasure[] measures = new PathMeasure[releases.size()];
+        Outcome outcome = run(flow, settings, releases, threads, progress, measures);
+        return new Measured(outcome, List.of(measures));
+    }
+
+    private static Outcome run(
+            FilmFlow flow,
+            TraceSettings settings,
+            List<Release> releases,
+            int threads,
+            IntConsumer progress,
+            PathMeasure[] measures) {
         PathEnd[] ends = new PathEnd[releases.size()];
         AtomicInteger next = new AtomicInteger();
         AtomicInteger done = new AtomicInteger();
@@ -47,12 +78,19 @@ public final class ParallelTracing {
         AtomicLong rejected = new AtomicLong();
         Runnable work = () -> {
             Tracer tracer = new Tracer(flow, settings);
+            PathMeter meter = new PathMeter(flow.film(), settings.direction());
             int from;
             while ((from = next.getAndAdd(CHUNK)) < ends.length
                     && !Thread.currentThread().isInterrupted()) {
                 int to = Math.min(ends.length, from + CHUNK);
                 for (int n = from; n < to; n++) {
-                    ends[n] = tracer.follow(releases.get(n));
+                    if (measures == null) {
+                        ends[n] = tracer.follow(releases.get(n));
+                    } else {
+                        meter.begin();
+                        ends[n] = tracer.follow(releases.get(n), meter);
+                        measures[n] = meter.measure();
+                    }
                 }
                 progress.accept(done.addAndGet(to - from));
             }

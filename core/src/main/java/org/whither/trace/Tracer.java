@@ -308,8 +308,40 @@ public final class Tracer {
         return NO_WAY;
     }
 
-    /** The fraction of the tried step at which the path first leaves its piece; sets lastWay. */
+    /**
+     * The fraction of the tried step at which the path first leaves its piece; sets lastWay. By the end of the step it may
+     * be back within a border that it passed before another, so the exit found is searched for earlier ones.
+     */
     private double earliestExit(double until) {
+        double earliest = exitBeyond(until);
+        for (int again = BACK_AROUND; again <= UP; again++) {
+            if (!beyondAnother(earliest)) {
+                break;
+            }
+            int way = lastWay;
+            double earlier = exitBeyond(earliest);
+            if (lastWay == NO_WAY || earlier >= earliest) {
+                lastWay = way;
+                break;
+            }
+            earliest = earlier;
+        }
+        return earliest;
+    }
+
+    /** Whether a point of the tried step also lies beyond another border than the one it is to leave by. */
+    private boolean beyondAnother(double fraction) {
+        stepper.interpolate(fraction, probe);
+        for (int way = BACK_AROUND; way <= UP; way++) {
+            if (way != lastWay && inside(way, fraction, probe) < -EDGE && !sealed(way)) {
+                return true;
+            }
+        }
+        return false;
+    }
+
+    /** The earliest exit by those ways by which a point of the tried step is outside; sets lastWay. */
+    private double exitBeyond(double until) {
         double earliest = until;
         stepTimeAt = stepper.step();
         lastWay = NO_WAY;

@@ -7,42 +7,48 @@ import java.util.SplittableRandom;
 import org.junit.jupiter.api.Test;
 
 class IntervalTest {
-    /** E. B. Wilson, J. Am. Stat. Assoc. 22 (1927); values 0/20 and 0/4096 as R. G. Newcombe, Stat. Med. 17 (1998), has it. */
+    /**
+     * E. B. Wilson, J. Am. Stat. Assoc. 22 (1927). R. G. Newcombe, Stat. Med. 17 (1998) 857–872, table I, method 3, has the
+     * two-sided 95 % bounds, one-sided 97.5 %: 81/263 … 0.3662, 15/148 … 0.1605, 0/20 … 0.1611, 1/29 … 0.1718.
+     */
     @Test
-    void interval_noHits_isWilsons() {
-        assertEquals(0.1611, Interval.ofReplicates(new int[4], 5).high(), 5e-5);
-        assertEquals(0.000937, Interval.ofReplicates(new int[16], 256).high(), 5e-7);
-        assertEquals(0, Interval.ofReplicates(new int[16], 256).low(), 0);
-        int[] all = {5, 5, 5, 5};
-        assertEquals(1 - 0.1611, Interval.ofReplicates(all, 5).low(), 5e-5);
+    void upperBound_publishedCases_isWilsons() {
+        assertEquals(0.3662, Interval.upperBound(81, 263, 0.975), 5e-5);
+        assertEquals(0.1605, Interval.upperBound(15, 148, 0.975), 5e-5);
+        assertEquals(0.1611, Interval.upperBound(0, 20, 0.975), 5e-5);
+        assertEquals(0.1718, Interval.upperBound(1, 29, 0.975), 5e-5);
+        assertEquals(1, Interval.upperBound(0, 0, 0.95), 0);
     }
 
-    /** Student's t, 95 %, 4 replicates: 3.182446 (any table of the t distribution). */
+    /** One random point in each of as many parts of very unequal chances: the bound holds at least as often as it says. */
     @Test
-    void interval_replicates_isStudents() {
-        Interval interval = Interval.ofReplicates(new int[] {40, 44, 36, 40}, 100);
-        double deviation = Math.sqrt((0.04 * 0.04 + 0.04 * 0.04) / 3);
-        assertEquals(0.40, interval.share(), 1e-15);
-        assertEquals(2 * 3.182446 * deviation / 2, interval.width(), 1e-6);
-    }
-
-    /** An interval of 95 % holds the true share in about 95 of 100 cases (binomial: 2000 cases, 4 standard deviations). */
-    @Test
-    void interval_randomReplicates_coversTheShare() {
+    void upperBound_unequalChances_holds() {
         SplittableRandom random = new SplittableRandom(11);
-        int covered = 0;
-        int cases = 2000;
-        for (int n = 0; n < cases; n++) {
-            int[] hits = new int[16];
-            for (int m = 0; m < 16; m++) {
-                for (int k = 0; k < 64; k++) {
-                    hits[m] += random.nextDouble() < 0.3 ? 1 : 0;
+        int cases = 4000;
+        int trials = 400;
+        for (double[] chances : new double[][] {{0.01, 1}, {0.05, 0.2}, {0.5, 0.02}}) {
+            int held = 0;
+            for (int n = 0; n < cases; n++) {
+                int hits = 0;
+                for (int m = 0; m < trials * chances[1]; m++) {
+                    hits += random.nextDouble() < chances[0] ? 1 : 0;
                 }
+                held += Interval.upperBound(hits, trials, 0.96) >= chances[0] * chances[1] ? 1 : 0;
             }
-            Interval interval = Interval.ofReplicates(hits, 64);
-            covered += interval.low() <= 0.3 && 0.3 <= interval.high() ? 1 : 0;
+            // Wilson's bound is close, not exact: four standard deviations and 1 %.
+            double least = 0.96 - 4 * Math.sqrt(0.96 * 0.04 / cases) - 0.01;
+            assertTrue(held >= least * cases, held + " of " + cases);
         }
-        double sd = Math.sqrt(0.95 * 0.05 / cases);
-        assertTrue(Math.abs((double) covered / cases - 0.95) < 4 * sd, covered + " of " + cases);
+    }
+
+    @Test
+    void ofMap_bounds_holdWhatIsUnsettledAndMissed() {
+        Interval interval = Interval.ofMap(0.41, 0.40, 0.02, 0.005);
+        assertEquals(0.395, interval.low(), 1e-15);
+        assertEquals(0.425, interval.high(), 1e-15);
+        assertEquals(0.41, interval.share(), 0);
+        Interval none = Interval.ofMap(0, 0, 0.02, 0.005);
+        assertEquals(0, none.low(), 0);
+        assertEquals(0.025, none.high(), 1e-15);
     }
 }

@@ -27,10 +27,11 @@ class SplitTest {
             Split split = Split.of(flow, settings(0.002, 2), x -> {});
             SplitRow inner = split.row(Border.SUPPLY, Destination.INNER).orElseThrow();
             SplitRow outer = split.row(Border.SUPPLY, Destination.OUTER).orElseThrow();
-            assertEquals(0.571230, inner.share().share(), 0.001);
-            assertEquals(0.428770, outer.share().share(), 0.001);
-            assertTrue(inner.share().low() <= 0.57123 + 2e-4
-                    && 0.57123 - 2e-4 <= inner.share().high());
+            // Formed flows are within 0.02 % of the exact ones; given flows are exact, to the six digits known.
+            double field = given ? 1e-6 : 2e-4;
+            assertTrue(holds(inner.share(), 0.571230, field), inner.toString());
+            assertTrue(holds(outer.share(), 0.428770, field), outer.toString());
+            assertEquals(0.571230, inner.share().share(), 3e-4 + field);
             assertTrue(inner.share().width() <= 0.002);
             assertEquals(0, split.balance().closure(), 1e-9);
             assertEquals(0, split.balance().outerIn(), 0);
@@ -38,18 +39,82 @@ class SplitTest {
             assertTrue(split.widthReached());
             assertEquals(2, split.table().size());
             // Danckwerts, Chem. Eng. Sci. 2 (1953): mean residence over all gas = film mass / mass flow. The tail of
-            // slow
-            // gas is heavy, and the feed row adds its own content.
+            // slow gas is heavy: its variance grows with the logarithm of the time, so that some 4000 tracers tell the
+            // mean with a standard deviation of 1.3 %.
             double mean =
                     inner.share().share() * inner.residenceTime().orElseThrow().mean()
                             + outer.share().share()
                                     * outer.residenceTime().orElseThrow().mean();
-            assertEquals(split.filmMass() / split.balance().supplyIn(), mean, 0.03 * mean);
+            assertEquals(split.filmMass() / split.balance().supplyIn(), mean, 0.05 * mean);
             assertEquals(
                     0.758105 * RadialCase.OUTER_TIME,
                     outer.residenceTime().get().p50(),
                     0.05 * RadialCase.OUTER_TIME);
         }
+    }
+
+    private static boolean holds(Interval interval, double value, double slack) {
+        return interval.low() <= value + slack && value - slack <= interval.high();
+    }
+
+    /** At every width the intervals hold the truth and are as narrow as wanted, at a cost that a curve explains. */
+    @Test
+    void split_everyWidth_holdsExactSharesAndBorderIntegrals() {
+        FilmFlow flow = new ConservingFlow(RadialCase.film(GRID, true));
+        long before = 0;
+        for (double width : new double[] {0.05, 0.02, 0.01, 0.005, 0.0025}) {
+            Split split = Split.of(flow, settings(width, 2), x -> {});
+            SplitRow inner = split.row(Border.SUPPLY, Destination.INNER).orElseThrow();
+            SplitRow outer = split.row(Border.SUPPLY, Destination.OUTER).orElseThrow();
+            assertTrue(split.widthReached());
+            assertTrue(inner.share().width() <= width && outer.share().width() <= width);
+            assertTrue(holds(inner.share(), 0.571230, 1e-6), width + ": " + inner);
+            assertTrue(holds(outer.share(), 0.428770, 1e-6), width + ": " + outer);
+            double supply = split.balance().supplyIn();
+            assertTrue(holds(inner.share(), split.balance().innerOut() / supply, 1e-12));
+            assertTrue(holds(outer.share(), split.balance().outerOut() / supply, 1e-12));
+            assertTrue(before == 0 || split.tracers() < 2.5 * before, split.tracers() + " after " + before);
+            assertEquals(
+                    split.tracers(),
+                    split.maps().stream()
+                                    .mapToLong(map -> map.mapTracers() + map.checks())
+                                    .sum()
+                            + split.uncertainty().integration().tracers());
+            assertEquals(0, split.uncertainty().integration().changedEnds(), 0.01);
+            assertTrue(split.uncertainty().integration().residenceChange() < 1e-4);
+            before = split.tracers();
+        }
+    }
+
+    /** What the gas of the radial film meets, of which all is known: it falls from the supply pressure to its side's. */
+    @Test
+    void split_radialFilm_travelsAsKnown() {
+        FilmFlow flow = new ConservingFlow(RadialCase.film(GRID, true));
+        Split split = Split.of(flow, settings(0.01, 2), x -> {});
+        Travel outer = split.row(Border.SUPPLY, Destination.OUTER)
+                .orElseThrow()
+                .travel()
+                .orElseThrow();
+        assertEquals(0.7e6, outer.pressureFrom(), 10);
+        assertEquals(1.0e6, outer.pressureTo(), 0.005e6);
+        assertEquals(0.7e6, outer.lowestPressure().p50(), 10);
+        assertEquals(1, outer.exitPhase().stream().mapToDouble(x -> x).sum(), 1e-12);
+        // The flow through the lower tenth of a parabolic profile is 3 (0.1)² − 2 (0.1)³ = 0.028, at the middle 0.148.
+        double[] known = new double[Travel.HEIGHT_BINS];
+        for (int n = 0; n < known.length; n++) {
+            double low = n / 10.0;
+            double high = (n + 1) / 10.0;
+            known[n] = high * high * (3 - 2 * high) - low * low * (3 - 2 * low);
+            assertEquals(known[n], outer.exitHeight().get(n), 4 * Math.sqrt(known[n] / outer.tracers()));
+        }
+        for (double share : outer.exitPhase()) {
+            assertEquals(1.0 / 24, share, 4 * Math.sqrt(1.0 / 24 / outer.tracers()));
+        }
+        // The fastest gas runs at the middle of the film, at 3/2 of the mean speed.
+        SplitRow row = split.row(Border.SUPPLY, Destination.OUTER).orElseThrow();
+        assertEquals(RadialCase.OUTER_TIME / 1.5, row.shortestTime().orElseThrow(), 0.01 * RadialCase.OUTER_TIME);
+        assertTrue(row.shortestTime().orElseThrow()
+                <= row.residenceTime().orElseThrow().p10());
     }
 
     @Test
@@ -80,7 +145,7 @@ class SplitTest {
                 flow, new SplitSettings(Frame.STATIONARY, 1e-6, 0.01, 7, 2, SplitSettings.MOST_TRACERS), x -> {});
         for (SplitRow row : one.table()) {
             SplitRow other = stationary.row(row.from().orElseThrow(), row.to()).orElseThrow();
-            assertEquals(row.share().share(), other.share().share(), 1e-3);
+            assertEquals(row.share().share(), other.share().share(), 1e-4);
             assertEquals(
                     row.revolutions().orElseThrow().p50(),
                     other.revolutions().orElseThrow().p50(),
@@ -88,12 +153,17 @@ class SplitTest {
         }
     }
 
-    /** Plain nodal interpolation is not exact: the split within 1 %, and the closure says how far it is off. */
+    /**
+     * Plain nodal interpolation is not exact: the split within 1 %, and the closure says how far it is off. Followed back,
+     * much of its gas stays in the feed row: the budget ends that, and the interval says so.
+     */
     @Test
     void split_fullField_nearExactShares() {
-        FilmFlow flow = new NodalFlow(RadialCase.fullFilm(GRID, 17, Frame.STATIONARY, Frame.ROTATING));
-        SplitSettings few = new SplitSettings(Frame.ROTATING, 1e-6, 0.05, 7, 2, 1024);
+        FilmGrid grid = RadialCase.grid(3, RadialCase.radii(60, 48, 2e-4), 12, 0.3);
+        FilmFlow flow = new NodalFlow(RadialCase.fullFilm(grid, 17, Frame.STATIONARY, Frame.ROTATING));
+        SplitSettings few = new SplitSettings(Frame.ROTATING, 1e-6, 0.05, 7, 2, 2000);
         Split split = Split.of(flow, few, x -> {});
+        assertTrue(split.maps().stream().allMatch(map -> map.steps() < 4_000_000));
         double inner = split.row(Border.SUPPLY, Destination.INNER)
                 .orElseThrow()
                 .share()

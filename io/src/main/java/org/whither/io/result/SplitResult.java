@@ -8,14 +8,19 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import org.whither.fate.BorderBalance;
+import org.whither.fate.BorderMap;
 import org.whither.fate.Destination;
+import org.whither.fate.Interval;
 import org.whither.fate.Quantiles;
 import org.whither.fate.Split;
 import org.whither.fate.SplitRow;
 import org.whither.fate.SplitSettings;
+import org.whither.fate.Travel;
+import org.whither.fate.Uncertainty;
 import org.whither.film.Film;
 import org.whither.film.FilmFlow;
 import org.whither.film.Validity;
+import org.whither.trace.Direction;
 import org.whither.trace.PathEnd;
 
 /**
@@ -31,59 +36,155 @@ import org.whither.trace.PathEnd;
 public record SplitResult(
         FilmFlow flow, SplitSettings settings, Split split, String file, String sha256, double seconds) {
 
+    /** Closure beyond which a result is no result. */
+    static final double NO_RESULT = 0.02;
+
+    private static final int COLUMNS = 120;
+
     /** Whether the border flows close within the wanted width. */
     public boolean closes() {
-        return Math.abs(split.balance().closure()) <= settings.width();
+        return Math.abs(split.balance().closure()) <= Math.min(settings.width(), NO_RESULT);
+    }
+
+    /** Whether the border flows close well enough for this to be called a result at all. */
+    public boolean isResult() {
+        return Math.abs(split.balance().closure()) <= NO_RESULT;
     }
 
     /** What a user must know, a sentence each, the gravest first. */
     public List<String> warnings() {
         List<String> said = new ArrayList<>();
-        if (!closes()) {
+        double closure = split.balance().closure();
+        if (!isResult()) {
             said.add(String.format(
                     Locale.ROOT,
-                    "The border flows of the field do not close within the wanted width: %.3f %% of the inflow is missing"
-                            + " or too much, and no share below is surer than that.",
-                    100 * split.balance().closure()));
+                    "NO RESULT: %.2f %% of the inflow is missing or too much in the border flows of the field, above"
+                            + " %.0f %%. The field is not converged, or a part of its border is not in the file; the numbers"
+                            + " below only help to find out which.",
+                    100 * closure,
+                    100 * NO_RESULT));
+        } else if (Math.abs(closure) > Math.min(settings.width(), FieldSummary.DOUBTFUL_CLOSURE)) {
+            said.add(String.format(
+                    Locale.ROOT,
+                    "The border flows of the field do not close: %.3f %% of the inflow is missing or too much, above %s, and"
+                            + " no share below is surer than that.",
+                    100 * closure,
+                    settings.width() < FieldSummary.DOUBTFUL_CLOSURE
+                            ? "the wanted width of " + settings.width()
+                            : String.format(Locale.ROOT, "%.1f %%", 100 * FieldSummary.DOUBTFUL_CLOSURE)));
         }
         if (!split.widthReached()) {
             said.add(String.format(
                     Locale.ROOT,
-                    "The wanted width of %s was not reached; the intervals below are what was.",
-                    settings.width()));
+                    "The wanted width of %s was not reached within %d tracers and %d million steps an origin; the widest"
+                            + " interval is %.4f. A greater --width ends sooner.",
+                    settings.width(),
+                    settings.mostTracers(),
+                    settings.mostSteps() / 1_000_000,
+                    split.uncertainty().sampling()));
         }
-        disagreement().ifPresent(said::add);
+        said.addAll(disagreements());
+        for (BorderMap map : split.maps()) {
+            if (map.direction() == Direction.BACKWARD && !map.reached()) {
+                said.add(String.format(
+                        Locale.ROOT,
+                        "Followed back from %s, the gas is mapped to %.2f %% only; that confirms the table less sharply.",
+                        place(map.border()),
+                        100 * Math.min(1, map.unsettled() + map.missedBound())));
+            }
+        }
+        double changed = split.uncertainty().integration().changedEnds();
+        if (changed > settings.width()) {
+            said.add(String.format(
+                    Locale.ROOT,
+                    "With a tolerance of %.0e instead of %.0e, %.2f %% of the gas ends elsewhere, more than the wanted"
+                            + " width: give a smaller --tolerance.",
+                    split.uncertainty().integration().tolerance(),
+                    settings.tolerance(),
+                    100 * changed));
+        }
         said.addAll(split.notes());
         said.addAll(Validity.of(flow).warnings());
         return said;
     }
 
-    /** Where a share by tracers and by boundary integrals differ by more than the wanted width. */
-    private Optional<String> disagreement() {
-        BorderBalance balance = split.balance();
-        for (Destination side : List.of(Destination.INNER, Destination.OUTER)) {
-            double leaving = side == Destination.INNER ? balance.innerOut() : balance.outerOut();
-            double traced = split.table().stream()
-                    .filter(row -> row.to() == side)
-                    .mapToDouble(SplitRow::massFlow)
-                    .sum();
-            double off = Math.abs(traced - leaving) / balance.inflow();
-            if (off > Math.max(settings.width(), 2 * split.heldShare())) {
-                return Optional.of(String.format(
-                        Locale.ROOT,
-                        "By tracers %.4g g/h leave at the %s diameter, by the boundary integral %.4g g/h; they differ by"
-                                + " %.2f %% of the inflow, more than the wanted width.",
-                        EngineerUnits.gramsPerHour(traced),
-                        name(side),
-                        EngineerUnits.gramsPerHour(leaving),
-                        100 * off));
-            }
-        }
-        return Optional.empty();
+    private String place(PathEnd.Border border) {
+        return switch (border) {
+            case SUPPLY -> "the feed";
+            case INNER -> "the inner diameter";
+            case OUTER -> "the outer diameter";
+        };
     }
 
-    // ---- JSON
-    // --------------------------------------------------------------------------------------------------------
+    /** Where forward and backward tracers and boundary integrals differ by more than their intervals and the width. */
+    private List<String> disagreements() {
+        List<String> said = new ArrayList<>();
+        BorderBalance balance = split.balance();
+        double slack = settings.width() * balance.inflow();
+        for (SplitRow back : split.backwardTable()) {
+            if (back.from().isEmpty()) {
+                continue;
+            }
+            double origin = inflow(back.from().get());
+            Interval forward = split.row(back.from().get(), back.to())
+                    .map(SplitRow::share)
+                    .orElse(new Interval(0, 0, split.uncertainty().sampling()));
+            double apart = origin
+                    * Math.max(forward.low() - back.share().high(), back.share().low() - forward.high());
+            if (apart > slack) {
+                said.add(String.format(
+                        Locale.ROOT,
+                        "Of the gas from %s, a share of %.4f … %.4f goes to %s followed forward, but %.4f … %.4f followed"
+                                + " back: they are further apart than the wanted width.",
+                        place(back.from().get()),
+                        forward.low(),
+                        forward.high(),
+                        back.to() == Destination.SUPPLY ? "the feed" : "the " + name(back.to()) + " diameter",
+                        back.share().low(),
+                        back.share().high()));
+            }
+        }
+        for (PathEnd.Border side : PathEnd.Border.values()) {
+            double leaving = leaving(side);
+            double low = 0;
+            double high = 0;
+            for (SplitRow row : split.table()) {
+                if (row.to().name().equals(side.name())) {
+                    low += row.share().low() * inflow(row.from().orElseThrow());
+                    high += row.share().high() * inflow(row.from().orElseThrow());
+                }
+            }
+            if (leaving < low - slack || leaving > high + slack) {
+                said.add(String.format(
+                        Locale.ROOT,
+                        "By tracers %.4g … %.4g g/h leave over %s, by the boundary integral %.4g g/h: they are further apart"
+                                + " than the wanted width.",
+                        EngineerUnits.gramsPerHour(low),
+                        EngineerUnits.gramsPerHour(high),
+                        place(side),
+                        EngineerUnits.gramsPerHour(leaving)));
+            }
+        }
+        return said;
+    }
+
+    private double inflow(PathEnd.Border border) {
+        return switch (border) {
+            case SUPPLY -> split.balance().supplyIn();
+            case INNER -> split.balance().innerIn();
+            case OUTER -> split.balance().outerIn();
+        };
+    }
+
+    private double leaving(PathEnd.Border border) {
+        return switch (border) {
+            case SUPPLY -> split.balance().supplyOut();
+            case INNER -> split.balance().innerOut();
+            case OUTER -> split.balance().outerOut();
+        };
+    }
+
+    // ---- JSON ------------------------------------------------------------------------------------------------------
 
     /** The split as JSON; SI units. */
     public ObjectNode json() {
@@ -98,9 +199,14 @@ public record SplitResult(
         root.put("seed", settings.seed());
         rows(root.putArray("table"), split.table());
         root.put("held_share", split.heldShare());
-        root.put("unsettled_share", split.lostShare());
+        root.put("unsettled_share", split.unsettledShare());
+        root.put("lost_share", split.lostShare());
+        root.put("width_reached", split.widthReached());
+        root.put("is_result", isResult());
         rows(root.putArray("backward_table"), split.backwardTable());
         root.set("balance", ResultJson.balance(split.balance()));
+        uncertainty(root.putObject("uncertainty"));
+        maps(root.putArray("maps"));
         root.put("film_mass", split.filmMass());
         root.put("time_limit", split.timeLimit());
         root.put("tracers", split.tracers());
@@ -123,6 +229,56 @@ public record SplitResult(
             node.put("share_high", row.share().high());
             quantiles(node, "residence_time", row.residenceTime());
             quantiles(node, "revolutions", row.revolutions());
+            if (row.shortestTime().isPresent()) {
+                node.put("shortest_time", row.shortestTime().getAsDouble());
+            }
+            row.travel().ifPresent(travel -> {
+                quantiles(node, "path_length", Optional.of(travel.pathLength()));
+                quantiles(node, "lowest_pressure", Optional.of(travel.lowestPressure()));
+                quantiles(node, "highest_pressure", Optional.of(travel.highestPressure()));
+                node.putArray("pressure_range").add(travel.pressureFrom()).add(travel.pressureTo());
+                travel.exitPhase().forEach(node.putArray("exit_phase")::add);
+                travel.exitHeight().forEach(node.putArray("exit_height")::add);
+                node.put("tracers", travel.tracers());
+            });
+        }
+    }
+
+    private void uncertainty(ObjectNode node) {
+        Uncertainty uncertainty = split.uncertainty();
+        ObjectNode integration = node.putObject("integration");
+        integration.put("tolerance", uncertainty.integration().tolerance());
+        integration.put("tracers", uncertainty.integration().tracers());
+        number(integration, "changed_ends", uncertainty.integration().changedEnds());
+        number(integration, "residence_change", uncertainty.integration().residenceChange());
+        node.put("sampling", uncertainty.sampling());
+        ObjectNode field = node.putObject("field");
+        number(field, "closure", uncertainty.closure());
+        uncertainty.flowCorrection().ifPresent(correction -> field.put("flow_correction", correction));
+    }
+
+    private static void number(ObjectNode node, String name, double value) {
+        if (Double.isNaN(value)) {
+            node.putNull(name);
+        } else {
+            node.put(name, value);
+        }
+    }
+
+    private void maps(ArrayNode array) {
+        for (BorderMap map : split.maps()) {
+            ObjectNode node = array.addObject();
+            node.put("border", name(map.border()));
+            node.put("direction", name(map.direction()));
+            node.put("mass_flow", map.massFlow());
+            node.put("patches", map.patches());
+            node.put("map_tracers", map.mapTracers());
+            node.put("checks", map.checks());
+            node.put("wrong_checks", map.wrongChecks());
+            node.put("unsettled_share", map.unsettled());
+            node.put("missed_bound", map.missedBound());
+            node.put("steps", map.steps());
+            node.put("reached", map.reached());
         }
     }
 
@@ -142,56 +298,143 @@ public record SplitResult(
         return value.name().toLowerCase(Locale.ROOT);
     }
 
-    // ---- words
-    // -------------------------------------------------------------------------------------------------------
+    // ---- words -----------------------------------------------------------------------------------------------------
 
-    /** The split in plain words and the engineer's units. */
+    /** The split in plain words and the engineer's units, in lines of at most 120 columns. */
     public String text() {
         Film film = flow.film();
         StringBuilder s = new StringBuilder();
         for (String warning : warnings()) {
-            s.append("Warning: ").append(warning).append(System.lineSeparator());
+            wrap(s, "Warning: " + warning);
         }
-        s.append(answer()).append(System.lineSeparator()).append(System.lineSeparator());
-        s.append(String.format(
-                Locale.ROOT,
-                "%-28s %11s %11s  %-22s %-30s %s%n",
+        wrap(s, answer());
+        line(s, "");
+        line(
+                s,
+                "%-27s %10s %10s  %-22s %-22s %-22s",
                 "gas",
                 "g/h",
                 "Nl/min",
                 "share (95 % interval)",
-                "time in the film, ms (10/50/90 %)",
-                "turns, stationary frame (10/50/90 %)"));
+                "ms in film, 10/50/90 %",
+                "turns*, 10/50/90 %");
         for (SplitRow row : split.table()) {
-            s.append(rowText(row, false));
+            rowText(s, row, false);
         }
-        s.append("followed back from where it leaves:").append(System.lineSeparator());
+        line(s, "followed back from where it leaves:");
         for (SplitRow row : split.backwardTable()) {
-            s.append(rowText(row, true));
+            rowText(s, row, true);
         }
-        s.append("by the boundary integrals:").append(System.lineSeparator());
+        line(s, "by the boundary integrals:");
         BorderBalance balance = split.balance();
-        integral(s, "into the film by the feed", balance.supplyIn(), balance.supplyIn());
-        integral(s, "to the " + film.conditions().innerSide() + " (inner)", balance.innerOut(), balance.supplyIn());
-        integral(s, "to the " + film.conditions().outerSide() + " (outer)", balance.outerOut(), balance.supplyIn());
+        integral(s, "from the feed", balance.supplyIn());
+        if (balance.supplyOut() > 0) {
+            integral(s, "back into the feed", balance.supplyOut());
+        }
+        integral(s, "to the " + film.conditions().innerSide() + " (inner)", balance.innerOut());
+        integral(s, "to the " + film.conditions().outerSide() + " (outer)", balance.outerOut());
         if (balance.innerIn() > 0) {
-            integral(s, "from the " + film.conditions().innerSide(), balance.innerIn(), balance.supplyIn());
+            integral(s, "from the " + film.conditions().innerSide(), balance.innerIn());
         }
         if (balance.outerIn() > 0) {
-            integral(s, "from the " + film.conditions().outerSide(), balance.outerIn(), balance.supplyIn());
+            integral(s, "from the " + film.conditions().outerSide(), balance.outerIn());
         }
-        s.append(String.format(
-                Locale.ROOT,
-                "closure %.2e of the inflow; held %s; not settled %s; %d tracers, %d steps, %.1f s, %s interpolation%n",
-                balance.closure(),
+        line(s, "");
+        line(
+                s,
+                "%-27s %11s  %-23s %-17s  %-8s %s",
+                "on the way",
+                "shortest ms",
+                "path* mm, 10/50/90 %",
+                "bar(a) met",
+                "exit σ",
+                "most leaves at");
+        for (SplitRow row : split.table()) {
+            travelText(s, row);
+        }
+        line(s, "* seen in the stationary frame; turns positive towards +θ");
+        line(s, "");
+        uncertaintyText(s);
+        line(s, "");
+        wrap(s, "Caution: " + Cautions.TEXT);
+        return s.toString().stripTrailing();
+    }
+
+    private void uncertaintyText(StringBuilder s) {
+        Uncertainty uncertainty = split.uncertainty();
+        Uncertainty.Integration integration = uncertainty.integration();
+        line(s, "Uncertain by");
+        if (integration.tracers() > 0) {
+            line(
+                    s,
+                    "  integration  %d tracers followed again with tolerance %.0e: %s of the gas ends elsewhere; times change"
+                            + " by %.0e",
+                    integration.tracers(),
+                    integration.tolerance(),
+                    EngineerUnits.percent(integration.changedEnds()),
+                    integration.residenceChange());
+        }
+        line(s, "  sampling     widest interval %.5f; wanted %s", uncertainty.sampling(), settings.width());
+        line(
+                s,
+                "  field        closure %.1e of the inflow%s; interpolation %s",
+                split.balance().closure(),
+                uncertainty.flowCorrection().isPresent()
+                        ? String.format(
+                                Locale.ROOT,
+                                "; flows of the cells balanced by %.1e",
+                                uncertainty.flowCorrection().getAsDouble())
+                        : "",
+                flow.interpolation());
+        line(
+                s,
+                "held %s; not settled %s; %d tracers, %d steps, %.1f s",
                 EngineerUnits.percent(split.heldShare()),
-                EngineerUnits.percent(split.lostShare()),
+                EngineerUnits.percent(split.unsettledShare()),
                 split.tracers(),
                 split.steps(),
-                seconds,
-                flow.interpolation()));
-        s.append(System.lineSeparator()).append("Caution: ").append(Cautions.TEXT);
-        return s.toString();
+                seconds);
+        line(
+                s,
+                "%-34s %8s %8s %13s %8s %7s %14s",
+                "maps",
+                "tracers",
+                "patches",
+                "not settled",
+                "checks",
+                "wrong",
+                "missed below");
+        for (BorderMap map : split.maps()) {
+            line(
+                    s,
+                    "%-34s %8d %8d %11.3f %% %8d %7d %12.3f %%",
+                    "  " + name(map.direction()) + " from " + place(map.border()),
+                    map.mapTracers(),
+                    map.patches(),
+                    100 * map.unsettled(),
+                    map.checks(),
+                    map.wrongChecks(),
+                    100 * map.missedBound());
+        }
+    }
+
+    private static void line(StringBuilder s, String format, Object... values) {
+        s.append((values.length == 0 ? format : String.format(Locale.ROOT, format, values)).stripTrailing())
+                .append(System.lineSeparator());
+    }
+
+    /** Appends a sentence, broken at spaces into lines of at most 120 columns. */
+    private static void wrap(StringBuilder s, String sentence) {
+        StringBuilder rest = new StringBuilder();
+        for (String word : sentence.split(" ")) {
+            if (rest.length() > 0 && rest.length() + 1 + word.length() > COLUMNS) {
+                line(s, rest.toString());
+                rest.setLength(0);
+                rest.append("   ");
+            }
+            rest.append(rest.length() == 0 ? "" : " ").append(word);
+        }
+        line(s, rest.toString());
     }
 
     /** The answer in one or two sentences. */
@@ -257,28 +500,14 @@ public record SplitResult(
                         film.conditions().innerSide().toUpperCase(Locale.ROOT));
     }
 
-    private String rowText(SplitRow row, boolean backward) {
-        Film film = flow.film();
-        String from = row.from()
-                .map(border -> switch (border) {
-                    case SUPPLY -> "supply";
-                    case INNER -> film.conditions().innerSide();
-                    case OUTER -> film.conditions().outerSide();
-                })
-                .orElse("not traced back");
-        String to = switch (row.to()) {
-            case INNER -> film.conditions().innerSide();
-            case OUTER -> film.conditions().outerSide();
-            case SUPPLY -> "feed";
-            case HELD -> "held inside";
-            case LOST -> "not known";
-        };
-        return String.format(
-                Locale.ROOT,
-                "%-28s %11s %11s  %-22s %-30s %s%n",
-                (backward ? "  " : "") + from + " → " + to,
+    private void rowText(StringBuilder s, SplitRow row, boolean backward) {
+        line(
+                s,
+                "%-27s %10s %10s  %-22s %-22s %-22s",
+                short27((backward ? "  " : "") + pair(row)),
                 EngineerUnits.digits(EngineerUnits.gramsPerHour(row.massFlow())),
-                EngineerUnits.digits(EngineerUnits.normalLitresPerMinute(row.massFlow(), film.gas())),
+                EngineerUnits.digits(EngineerUnits.normalLitresPerMinute(
+                        row.massFlow(), flow.film().gas())),
                 String.format(
                         Locale.ROOT,
                         "%.4f (%.4f–%.4f)",
@@ -289,18 +518,90 @@ public record SplitResult(
                 row.revolutions().map(q -> three(q, 1)).orElse("—"));
     }
 
-    private static String three(Quantiles q, double scale) {
-        return String.format(Locale.ROOT, "%.3f / %.3f / %.3f", scale * q.p10(), scale * q.p50(), scale * q.p90());
+    private void travelText(StringBuilder s, SplitRow row) {
+        if (row.travel().isEmpty()) {
+            return;
+        }
+        Travel travel = row.travel().get();
+        line(
+                s,
+                "%-27s %11s  %-23s %-17s  %-8s %s",
+                short27(pair(row)),
+                five(1e3 * row.shortestTime().orElse(Double.NaN)),
+                three(travel.pathLength(), 1e3),
+                String.format(Locale.ROOT, "%.3f … %.3f", travel.pressureFrom() / 1e5, travel.pressureTo() / 1e5),
+                middle(travel.exitHeight()),
+                most(travel.exitPhase()));
     }
 
-    private void integral(StringBuilder s, String name, double massFlow, double supply) {
-        s.append(String.format(
+    /** The median of a histogram over 0 … 1. */
+    private static String middle(List<Double> shares) {
+        double below = 0;
+        for (int n = 0; n < shares.size(); n++) {
+            if (below + shares.get(n) >= 0.5) {
+                return String.format(Locale.ROOT, "%.2f", (n + (0.5 - below) / shares.get(n)) / shares.size());
+            }
+            below += shares.get(n);
+        }
+        return "—";
+    }
+
+    /** The highest bar of a histogram round the sector, and how many times an even one it is. */
+    private static String most(List<Double> shares) {
+        int highest = 0;
+        for (int n = 0; n < shares.size(); n++) {
+            highest = shares.get(n) > shares.get(highest) ? n : highest;
+        }
+        return String.format(
                 Locale.ROOT,
-                "  %-26s %11s %11s  %s%n",
-                name,
+                "phase %.2f (%.1f × even)",
+                (highest + 0.5) / shares.size(),
+                shares.get(highest) * shares.size());
+    }
+
+    private String pair(SplitRow row) {
+        Film film = flow.film();
+        String from = row.from()
+                .map(border -> switch (border) {
+                    case SUPPLY -> "supply";
+                    case INNER -> film.conditions().innerSide();
+                    case OUTER -> film.conditions().outerSide();
+                })
+                .orElse("untraced");
+        String to = switch (row.to()) {
+            case INNER -> film.conditions().innerSide();
+            case OUTER -> film.conditions().outerSide();
+            case SUPPLY -> "feed";
+            case HELD -> "held inside";
+            case LOST -> "not known";
+        };
+        return from + " → " + to;
+    }
+
+    private static String short27(String name) {
+        return name.length() <= 27 ? name : name.substring(0, 26) + "…";
+    }
+
+    private static String three(Quantiles q, double scale) {
+        return five(scale * q.p10()) + " / " + five(scale * q.p50()) + " / " + five(scale * q.p90());
+    }
+
+    /** A number in about five characters. */
+    private static String five(double value) {
+        double size = Math.abs(value);
+        return String.format(
+                Locale.ROOT, size >= 1000 ? "%.0f" : size >= 100 ? "%.1f" : size >= 10 ? "%.2f" : "%.3f", value);
+    }
+
+    private void integral(StringBuilder s, String name, double massFlow) {
+        double supply = split.balance().supplyIn();
+        line(
+                s,
+                "%-27s %10s %10s  %s",
+                short27("  " + name),
                 EngineerUnits.digits(EngineerUnits.gramsPerHour(massFlow)),
                 EngineerUnits.digits(EngineerUnits.normalLitresPerMinute(
                         massFlow, flow.film().gas())),
-                supply > 0 ? String.format(Locale.ROOT, "%.4f of the supply", massFlow / supply) : ""));
+                supply > 0 ? String.format(Locale.ROOT, "%.4f of the supply", massFlow / supply) : "");
     }
 }

@@ -1,0 +1,33 @@
+package org.whither.fate;
+
+import org.whither.trace.Direction;
+import org.whither.trace.PathEnd;
+
+/**
+ * How the map of one border came out: where the gas that crosses it goes, or, followed back, comes from.
+ *
+ * @param border the border
+ * @param direction forward for the gas that enters over it, backward for the gas that leaves
+ * @param massFlow mass flow of the whole ring that is mapped (kg/s)
+ * @param patches patches it was divided into
+ * @param mapTracers tracers followed to divide it
+ * @param checks random checks of its settled patches; they also give the times and turns
+ * @param wrongChecks how many of them found another fate than that of their patch, which was then divided
+ * @param unsettled share of the flow in patches of more than one fate, or whose tracers could not be integrated
+ * @param missedBound upper bound of the share of the flow in settled patches that has another fate; with the chance of
+ *     the 95 % interval
+ * @param steps integration steps kept
+ * @param reached whether every interval is as narrow as wanted
+ */
+public record BorderMap(
+        PathEnd.Border border,
+        Direction direction,
+        double massFlow,
+        long patches,
+        long mapTracers,
+        int checks,
+        int wrongChecks,
+        double unsettled,
+        double missedBound,
+        long steps,
+        boolean reached) {}
