@@ -106,7 +106,7 @@ final class BorderTracing {
         double target = cheapestPart() * width;
         refine(target);
         for (int round = 0; round < CONFIDENCE.length; round++) {
-            check(checksFor(width, DEVIATE[round]), CONFIDENCE[round]);
+            check(checksFor(width, round), CONFIDENCE[round]);
             // What the checks found wrong is mended; the bound stays that of the map as it was. A finer map makes up
             // for
             // a somewhat larger bound, but a second round for a much larger one.
@@ -168,11 +168,20 @@ final class BorderTracing {
         return Math.max(LEAST_PART, Math.min(MOST_PART, ofMap / (ofMap + ofChecks)));
     }
 
-    /** Checks of which none may be wrong if Wilson's bound, z²/(N + z²), is to leave the wanted width: N. */
-    private int checksFor(double width, double deviate) {
+    /**
+     * Checks of a round: so many that Wilson's bound leaves the wanted width where none is wrong, z²/(N + z²); in the second
+     * round also where one is, for there the first has shown that some gas is easily missed.
+     */
+    private int checksFor(double width, int round) {
         double bound = 0.5 * Math.max(width - unsettled(), LEAST_PART * width);
-        double number = Math.ceil(deviate * deviate * (1 / bound - 1));
-        return (int) Math.max(FEWEST_CHECKS, Math.min(settings.mostTracers(), number));
+        double square = DEVIATE[round] * DEVIATE[round];
+        int number = (int) Math.min(settings.mostTracers(), Math.ceil(square * (1 / bound - 1)));
+        while (round > 0
+                && number < settings.mostTracers()
+                && Interval.upperBound(1, number, CONFIDENCE[round]) > bound) {
+            number += 1 + number / 16;
+        }
+        return Math.max(FEWEST_CHECKS, number);
     }
 
     private boolean mayGoOn(double part) {
