@@ -38,7 +38,10 @@ final class BorderTracing {
     private static final double LAST_PART = 0.02;
     private static final int FEWEST_CHECKS = 1024;
     private static final int CHECKS_AT_ONCE = 256;
+    /** Parts of the budget up to which the map may be made, mended, and its first mesh made. */
     private static final double MAP_PART = 0.6;
+
+    private static final double MENDING_PART = 0.9;
     private static final double MESH_PART = 0.2;
     private static final int SCOUTS = 32;
     private static final int COARSEST = 4;
@@ -102,17 +105,17 @@ final class BorderTracing {
         map = new PatchMap(this::fates, FATES, mesh(), random.split());
         scoutEdges();
         double width = settings.width();
-        refine(MOST_PART * width);
+        refine(MOST_PART * width, MAP_PART);
         double target = cheapestPart() * width;
-        refine(target);
+        refine(target, MAP_PART);
         for (int round = 0; round < CONFIDENCE.length; round++) {
-            check(checksFor(width, DEVIATE[round]), CONFIDENCE[round]);
+            check(checksFor(width, round), CONFIDENCE[round]);
             // What the checks found wrong is mended; the bound stays that of the map as it was. A finer map makes up
             // for
             // a somewhat larger bound, but a second round for a much larger one.
             double left = width - 2 * missedBound;
             boolean last = round == CONFIDENCE.length - 1;
-            refine(left >= 0.5 * target ? left : last ? Math.max(left, LAST_PART * width) : target);
+            refine(left >= 0.5 * target ? left : last ? Math.max(left, LAST_PART * width) : target, MENDING_PART);
             reached = unsettled() + 2 * missedBound <= width;
             if (reached || !mayGoOn(1)) {
                 break;
@@ -168,24 +171,33 @@ final class BorderTracing {
         return Math.max(LEAST_PART, Math.min(MOST_PART, ofMap / (ofMap + ofChecks)));
     }
 
-    /** Checks of which none may be wrong if Wilson's bound, z²/(N + z²), is to leave the wanted width: N. */
-    private int checksFor(double width, double deviate) {
+    /**
+     * Checks of a round: so many that Wilson's bound leaves the wanted width where none is wrong, z²/(N + z²); in the second
+     * round also where one is, for there the first has shown that some gas is easily missed.
+     */
+    private int checksFor(double width, int round) {
         double bound = 0.5 * Math.max(width - unsettled(), LEAST_PART * width);
-        double number = Math.ceil(deviate * deviate * (1 / bound - 1));
-        return (int) Math.max(FEWEST_CHECKS, Math.min(settings.mostTracers(), number));
+        double square = DEVIATE[round] * DEVIATE[round];
+        int number = (int) Math.min(settings.mostTracers(), Math.ceil(square * (1 / bound - 1)));
+        while (round > 0
+                && number < settings.mostTracers()
+                && Interval.upperBound(1, number, CONFIDENCE[round]) > bound) {
+            number += 1 + number / 16;
+        }
+        return Math.max(FEWEST_CHECKS, number);
     }
 
     private boolean mayGoOn(double part) {
         return tracers < part * settings.mostTracers() && steps < part * mostSteps();
     }
 
-    private void refine(double target) {
+    private void refine(double target, double part) {
         double start = Math.max(map.mixed(), 2 * target);
         map.refine(target, () -> {
             progress.accept(0.5
                     * Math.min(
                             1, Math.max(0, Math.log(start / map.mixed()) / Math.log(start / Math.max(1e-9, target)))));
-            return mayGoOn(MAP_PART);
+            return mayGoOn(part);
         });
     }
 
