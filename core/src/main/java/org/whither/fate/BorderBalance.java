@@ -1,5 +1,6 @@
 package org.whither.fate;
 
+import org.whither.film.Correction;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
 
@@ -72,5 +73,16 @@ public record BorderBalance(
     /** (all inflow − all outflow) / all inflow; not a number where nothing enters. */
     public double closure() {
         return (inflow() - outflow()) / inflow();
+    }
+
+    /**
+     * How far a field closes by itself: before a conserving flow balances it, and else as {@link #closure}.
+     *
+     * @param flow the motion of the gas
+     * @param balance its border flows
+     * @return (all inflow − all outflow) / all inflow
+     */
+    public static double closureOfField(FilmFlow flow, BorderBalance balance) {
+        return flow.correction().map(Correction::closure).orElseGet(balance::closure);
     }
 }

@@ -7,10 +7,9 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
-import java.util.OptionalDouble;
 import java.util.SplittableRandom;
 import java.util.function.DoubleConsumer;
-import org.whither.film.ConservingFlow;
+import org.whither.film.Correction;
 import org.whither.film.FilmFlow;
 import org.whither.trace.Direction;
 import org.whither.trace.PathEnd;
@@ -228,10 +227,8 @@ public record Split(
                     new Uncertainty.Integration(
                             otherTolerance, again, again > 0 ? changedFlow / balance.inflow() : Double.NaN, median),
                     widest,
-                    Math.abs(balance.closure()),
-                    flow instanceof ConservingFlow conserving
-                            ? OptionalDouble.of(conserving.columnFlows().correction())
-                            : OptionalDouble.empty());
+                    Math.abs(BorderBalance.closureOfField(flow, balance)),
+                    flow.correction().stream().mapToDouble(Correction::share).findFirst());
         }
     }
 

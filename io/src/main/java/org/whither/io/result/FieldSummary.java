@@ -73,7 +73,7 @@ public final class FieldSummary {
 
     /** How the border flows close by the field itself, before any correction, as a share of the inflow. */
     private double closure() {
-        return flow.correction().map(Correction::closure).orElse(balance.closure());
+        return BorderBalance.closureOfField(flow, balance);
     }
 
     /** What a user must know, a sentence each. */

@@ -41,20 +41,25 @@ public record SplitResult(
 
     private static final int COLUMNS = 120;
 
+    /** How far the border flows close, as a share of the inflow, before the flows are balanced for tracing. */
+    private double closure() {
+        return BorderBalance.closureOfField(flow, split.balance());
+    }
+
     /** Whether the border flows close within the wanted width. */
     public boolean closes() {
-        return Math.abs(split.balance().closure()) <= Math.min(settings.width(), NO_RESULT);
+        return Math.abs(closure()) <= Math.min(settings.width(), NO_RESULT);
     }
 
     /** Whether the border flows close well enough for this to be called a result at all. */
     public boolean isResult() {
-        return Math.abs(split.balance().closure()) <= NO_RESULT;
+        return Math.abs(closure()) <= NO_RESULT;
     }
 
     /** What a user must know, a sentence each, the gravest first. */
     public List<String> warnings() {
         List<String> said = new ArrayList<>();
-        double closure = split.balance().closure();
+        double closure = closure();
         if (!isResult()) {
             said.add(String.format(
                     Locale.ROOT,
@@ -378,7 +383,7 @@ public record SplitResult(
         line(
                 s,
                 "  field        closure %.1e of the inflow%s; interpolation %s",
-                split.balance().closure(),
+                closure(),
                 uncertainty.flowCorrection().isPresent()
                         ? String.format(
                                 Locale.ROOT,
