@@ -76,13 +76,15 @@ public record BorderBalance(
     }
 
     /**
-     * How far a field closes by itself: before a conserving flow balances it, and else as {@link #closure}.
+     * How far a field closes by itself: before a conserving flow balances it, or as {@link #closure}, whichever is worse.
      *
      * @param flow the motion of the gas
      * @param balance its border flows
      * @return (all inflow − all outflow) / all inflow
      */
     public static double closureOfField(FilmFlow flow, BorderBalance balance) {
-        return flow.correction().map(Correction::closure).orElseGet(balance::closure);
+        double before = flow.correction().map(Correction::closure).orElse(0.0);
+        double now = balance.closure();
+        return Math.abs(before) > Math.abs(now) ? before : now;
     }
 }
