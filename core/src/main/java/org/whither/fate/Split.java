@@ -54,7 +54,9 @@ public record Split(
     /** Times the mean residence after which a tracer counts as held. */
     public static final double PATIENCE = 200;
 
-    private static final double NEGLIGIBLE = 1e-9;
+    /** A border flow below this share of all inflow counts as none. */
+    public static final double NEGLIGIBLE = 1e-9;
+
     private static final int MOST_FED_POINTS = 3072;
     private static final int AGAIN = 256;
 

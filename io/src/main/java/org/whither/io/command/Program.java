@@ -30,7 +30,7 @@ import picocli.CommandLine.Spec;
         footerHeading = "%nExit status:%n",
         footer = {
             "  0 done · 1 a fault in the program · 2 wrong usage · 3 the input is refused ·"
-                    + " 4 done, but short of what was wanted (width, closure, pictures)",
+                    + " 4 done, but short of what was wanted (width, closure, a whole table, pictures)",
             "",
             "Caution:",
             "  A result describes the computed field it was given, not the machine. It is no approval and no leakage"

@@ -130,6 +130,8 @@ final class SplitCommand implements Callable<Integer> {
     }
 
     static int status(SplitResult result) {
-        return result.closes() && result.split().widthReached() ? ExitStatus.DONE : ExitStatus.SHORT_OF_WANTED;
+        return result.closes() && result.complete() && result.split().widthReached()
+                ? ExitStatus.DONE
+                : ExitStatus.SHORT_OF_WANTED;
     }
 }

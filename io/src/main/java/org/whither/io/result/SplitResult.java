@@ -56,6 +56,18 @@ public record SplitResult(
         return Math.abs(closure()) <= NO_RESULT;
     }
 
+    /** Whether the feed that the file names lets gas in; true where it names none. */
+    private boolean feedLetsGasIn() {
+        return flow.film().supply().isEmpty()
+                || split.balance().supplyIn()
+                        > Split.NEGLIGIBLE * split.balance().inflow();
+    }
+
+    /** Whether nothing of the table is missing: the feed lets gas in and every tracer was followed to an end. */
+    public boolean complete() {
+        return feedLetsGasIn() && split.lostShare() == 0;
+    }
+
     /** What a user must know, a sentence each, the gravest first. */
     public List<String> warnings() {
         List<String> said = new ArrayList<>();
@@ -77,6 +89,11 @@ public record SplitResult(
                     settings.width() < FieldSummary.DOUBTFUL_CLOSURE
                             ? "the wanted width of " + settings.width()
                             : String.format(Locale.ROOT, "%.1f %%", 100 * FieldSummary.DOUBTFUL_CLOSURE)));
+        }
+        if (!feedLetsGasIn()) {
+            said.add(
+                    "No gas enters through the feed (/supply): the table has no supply gas. Check the supply pressure, the"
+                            + " feed's place and its mass_flux; what is below is of the other gas.");
         }
         if (!split.widthReached()) {
             said.add(String.format(

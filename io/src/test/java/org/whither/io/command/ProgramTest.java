@@ -291,4 +291,20 @@ class ProgramTest {
         }
         assertEquals(kept.get("pressure"), computed.get("pressure"));
     }
+
+    /** A feed that lets nothing in is named, the rest of the table is given, and the status says that something is missing. */
+    @Test
+    void split_feedWithoutInflow_isNamedAndTheRestGiven() throws IOException {
+        Path lost = folder.resolve("lost.h5");
+        assertEquals(
+                0,
+                run("sample", "coned", "--point", "flow-lost", "--grid", "8x16", "--as", lost.toString(), "--quiet")
+                        .status());
+        Run run = run("split", lost.toString(), "--width", "0.02", "--quiet", "--json");
+        assertEquals(4, run.status(), run.err());
+        JsonNode split = json(run.out());
+        assertTrue(split.get("warnings").get(0).asText().contains("No gas enters through the feed"));
+        assertEquals("outer", split.at("/table/0/from").asText());
+        assertEquals(1, split.at("/table/0/share").asDouble(), 0.001);
+    }
 }
