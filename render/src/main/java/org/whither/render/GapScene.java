@@ -938,8 +938,11 @@ final class GapScene {
         while (before > 0 && distance(points, before, last) < back) {
             before--;
         }
-        double length = distance(points, before, last);
         double[] direction = {1, 0, 0};
+        if (before < 0) {
+            return direction;
+        }
+        double length = distance(points, before, last);
         for (int c = 0; c < 3 && length > 0; c++) {
             direction[c] = (points[3 * last + c] - points[3 * before + c]) / length;
         }

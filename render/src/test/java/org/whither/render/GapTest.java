@@ -368,4 +368,17 @@ class GapTest {
         assertEquals(0.75, area, 1e-12);
         assertEquals(0, GapScene.clip(square, 2, true).length);
     }
+
+    /** A path of no length, of a tracer that leaves where it is released, is no fault of the picture's. */
+    @Test
+    void draw_pathWithoutLength_isDrawn() {
+        SpiralFilm film = new SpiralFilm();
+        Path path = film.paths(Frame.ROTATING).get(0);
+        PathPoint first = path.points().get(0);
+        for (List<PathPoint> points : List.of(List.of(first, first), List.of(first), List.<PathPoint>of())) {
+            Path stub = new Path(path.release(), points, path.end());
+            BufferedImage image = Gap.draw(film, List.of(stub), GapSettings.standard("short"));
+            assertEquals(1280, image.getWidth());
+        }
+    }
 }

@@ -547,19 +547,11 @@ public final class FieldReader {
         requireHeap(List.of(mask));
         double[] values = mask.values();
         boolean[] cells = new boolean[values.length];
-        boolean any = false;
         for (int n = 0; n < values.length; n++) {
             if (values[n] != 0 && values[n] != 1) {
                 throw mask.refuse(n, values[n], "1 for a feed cell and 0 for any other", "write only these two");
             }
             cells[n] = values[n] == 1;
-            any |= cells[n];
-        }
-        if (!any) {
-            throw source.refuse(
-                    "dataset " + mask.path() + " marks no cell",
-                    "1 in at least one cell",
-                    "mark the feed cells, or leave out the group /supply");
         }
         return cells;
     }

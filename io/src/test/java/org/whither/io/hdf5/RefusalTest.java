@@ -220,7 +220,6 @@ class RefusalTest {
                 nodes(f -> f.attribute("supply", "radius_from", 0.04), "radius_from is 0.04", "between 0.05", "met"),
                 nodes(f -> f.attribute("supply", "radius_to", 0.051), "radius_to is 0.051", "more than", "outer one"),
                 nodes(f -> f.shape("supply/mask", 1, 6, 4), "both radius_from", "one of the two", "remove the one"),
-                full(f -> f.shape("supply/mask", 0, 6, 4), "mask marks no cell", "at least one cell", "leave out"),
                 full(
                         f -> f.set("supply/mask", 2, 3, 1),
                         "/supply/mask[3, 1] is 2.0",
