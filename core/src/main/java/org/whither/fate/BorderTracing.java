@@ -111,8 +111,7 @@ final class BorderTracing {
         for (int round = 0; round < CONFIDENCE.length; round++) {
             check(checksFor(width, round), CONFIDENCE[round]);
             // What the checks found wrong is mended; the bound stays that of the map as it was. A finer map makes up
-            // for
-            // a somewhat larger bound, but a second round for a much larger one.
+            // for a somewhat larger bound, a second round for a much larger one.
             double left = width - 2 * missedBound;
             boolean last = round == CONFIDENCE.length - 1;
             refine(left >= 0.5 * target ? left : last ? Math.max(left, LAST_PART * width) : target, MENDING_PART);

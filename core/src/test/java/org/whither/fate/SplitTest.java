@@ -10,7 +10,11 @@ import org.whither.film.FilmGrid;
 import org.whither.film.Frame;
 import org.whither.film.NodalFlow;
 import org.whither.film.RadialCase;
+import org.whither.trace.Direction;
+import org.whither.trace.ParallelTracing;
+import org.whither.trace.PathEnd;
 import org.whither.trace.PathEnd.Border;
+import org.whither.trace.TraceSettings;
 
 class SplitTest {
     private static final FilmGrid GRID = RadialCase.grid(6, RadialCase.radii(60, 48, 2e-4), 12, 0.3);
@@ -171,5 +175,25 @@ class SplitTest {
         assertEquals(0.571230, inner, 0.01);
         assertEquals(0, split.balance().closure(), 0.01);
         assertEquals(RadialCase.INNER_FLOW, split.balance().innerOut(), 0.01 * RadialCase.INNER_FLOW);
+    }
+
+    /**
+     * P. V. Danckwerts, Chem. Eng. Sci. 2 (1953): where nothing is held, the mean residence is film mass over mass flow.
+     * Within 1 % from 32768 releases; single sets of 8192 were measured −0.5 % to +0.1 % off.
+     */
+    @Test
+    void residence_radialFilm_meanIsFilmMassOverFlow() {
+        FilmFlow flow = new ConservingFlow(RadialCase.film(GRID, true));
+        ReleasePlan plan = ReleasePlan.entering(flow, Border.SUPPLY);
+        double expected = FilmMass.of(flow) / BorderBalance.of(flow).supplyIn();
+        TraceSettings how = new TraceSettings(Frame.ROTATING, Direction.FORWARD, 1e-6, 2000 * expected);
+        double mean = 0;
+        for (int seed = 1; seed <= 4; seed++) {
+            for (PathEnd end : ParallelTracing.follow(flow, how, plan.releases(seed, 0, 8192), 2, n -> {})
+                    .ends()) {
+                mean += end.time() / (4 * 8192);
+            }
+        }
+        assertEquals(expected, mean, 0.01 * expected);
     }
 }
