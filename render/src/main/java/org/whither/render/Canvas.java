@@ -58,6 +58,7 @@ final class Canvas implements AutoCloseable {
     private final int[] shadowTexture = new int[1];
     private int sceneProgram;
     private int shadowProgram;
+    private IntBuffer pixels;
 
     /**
      * Opens a canvas.
@@ -325,11 +326,12 @@ final class Canvas implements AutoCloseable {
         gl.glActiveTexture(GL.GL_TEXTURE0);
         gl.glBindTexture(GL.GL_TEXTURE_2D, scales.get(ColourScale.PRESSURE));
         gl.glDisable(GL.GL_BLEND);
-        items(gl, scene, false);
+        double[] matrix = view.camera().matrix();
+        items(gl, scene, matrix, false);
         gl.glEnable(GL.GL_BLEND);
         gl.glBlendFuncSeparate(GL.GL_SRC_ALPHA, GL.GL_ONE_MINUS_SRC_ALPHA, GL.GL_ZERO, GL.GL_ONE);
         gl.glDepthMask(false);
-        items(gl, scene, true);
+        items(gl, scene, matrix, true);
         gl.glDepthMask(true);
         gl.glDisable(GL.GL_BLEND);
         gl.glDisable(GL.GL_SCISSOR_TEST);
@@ -337,8 +339,9 @@ final class Canvas implements AutoCloseable {
         gl.glBindVertexArray(0);
     }
 
-    private void items(GL3 gl, Scene scene, boolean translucent) {
+    private void items(GL3 gl, Scene scene, double[] matrix, boolean translucent) {
         int turn = at(gl, sceneProgram, "turn");
+        int shift = at(gl, sceneProgram, "shift");
         int colour = at(gl, sceneProgram, "colour");
         int opacity = at(gl, sceneProgram, "opacity");
         int gloss = at(gl, sceneProgram, "gloss");
@@ -346,7 +349,7 @@ final class Canvas implements AutoCloseable {
         int scaled = at(gl, sceneProgram, "scaled");
         for (Scene.Item item : scene.items()) {
             Scene.Material material = item.material();
-            if (material.opacity() < 1 != translucent) {
+            if (material.opacity() < 1 != translucent || unseen(matrix, item)) {
                 continue;
             }
             int c = material.colour();
@@ -358,28 +361,71 @@ final class Canvas implements AutoCloseable {
             if (material.scale() != null) {
                 gl.glBindTexture(GL.GL_TEXTURE_2D, scales.get(material.scale()));
             }
-            mesh(gl, turn, item);
+            mesh(gl, turn, shift, item);
         }
     }
 
-    private void mesh(GL3 gl, int turn, Scene.Item item) {
+    private void mesh(GL3 gl, int turn, int shift, Scene.Item item) {
         Stored mesh = stored.get(item.mesh());
+        int first = Math.max(0, 3 * item.from());
+        int count = Math.min(mesh.corners, 3 * item.to()) - first;
+        if (count <= 0) {
+            return;
+        }
         gl.glUniform2f(turn, (float) Math.cos(item.turn()), (float) Math.sin(item.turn()));
+        double[] d = item.shift();
+        gl.glUniform3f(shift, (float) d[0], (float) d[1], (float) d[2]);
         gl.glBindVertexArray(mesh.array);
-        gl.glDrawElements(GL.GL_TRIANGLES, mesh.corners, GL.GL_UNSIGNED_INT, 0);
+        gl.glDrawElements(GL.GL_TRIANGLES, count, GL.GL_UNSIGNED_INT, 4L * first);
+    }
+
+    /** Whether all of an item lies beyond one side of what the camera sees. */
+    private static boolean unseen(double[] m, Scene.Item item) {
+        int[] beyond = new int[6];
+        for (int corner = 0; corner < 8; corner++) {
+            double[] p = corner(item, corner);
+            double w = m[3] * p[0] + m[7] * p[1] + m[11] * p[2] + m[15];
+            for (int c = 0; c < 3; c++) {
+                double d = m[c] * p[0] + m[4 + c] * p[1] + m[8 + c] * p[2] + m[12 + c];
+                beyond[2 * c] += d < -w ? 1 : 0;
+                beyond[2 * c + 1] += d > w ? 1 : 0;
+            }
+        }
+        for (int count : beyond) {
+            if (count == 8) {
+                return true;
+            }
+        }
+        return false;
+    }
+
+    /** A corner, 0 … 7, of the box round an item in its place. */
+    private static double[] corner(Scene.Item item, int corner) {
+        float[] box = item.mesh().box();
+        double x = box[(corner & 1) == 0 ? 0 : 3];
+        double y = box[(corner & 2) == 0 ? 1 : 4];
+        double z = box[(corner & 4) == 0 ? 2 : 5];
+        double cos = Math.cos(item.turn());
+        double sin = Math.sin(item.turn());
+        double[] d = item.shift();
+        return new double[] {cos * x - sin * y + d[0], sin * x + cos * y + d[1], z + d[2]};
     }
 
     private double[] castShadows(GL3 gl, Scene scene) {
         double[] low = {Double.POSITIVE_INFINITY, Double.POSITIVE_INFINITY, Double.POSITIVE_INFINITY};
         double[] high = {Double.NEGATIVE_INFINITY, Double.NEGATIVE_INFINITY, Double.NEGATIVE_INFINITY};
+        boolean allPlaced = scene.items().stream().allMatch(Scene.Item::placed);
         for (Scene.Item item : scene.items()) {
-            double cos = Math.cos(item.turn());
-            double sin = Math.sin(item.turn());
-            float[] p = item.mesh().positions();
-            for (int n = 0; n < p.length; n += 3) {
-                extend(low, high, 0, cos * p[n] - sin * p[n + 1]);
-                extend(low, high, 1, sin * p[n] + cos * p[n + 1]);
-                extend(low, high, 2, p[n + 2]);
+            // Small things that move about do not change the light's view from picture to picture.
+            if ((item.placed() && !allPlaced) || item.mesh().positions().length == 0) {
+                continue;
+            }
+            for (int corner = 0; corner < 8; corner++) {
+                double[] p = corner(item, corner);
+                for (int c = 0; c < 3; c++) {
+                    low[c] = Math.min(low[c], p[c]);
+                    high[c] = Math.max(high[c], p[c]);
+                }
             }
         }
         double[] light = Camera.lightMatrix(scene.light(), low, high);
@@ -394,17 +440,13 @@ final class Canvas implements AutoCloseable {
         gl.glUseProgram(shadowProgram);
         matrix(gl, shadowProgram, "lightView", light);
         int turn = at(gl, shadowProgram, "turn");
+        int shift = at(gl, shadowProgram, "shift");
         for (Scene.Item item : scene.items()) {
-            if (item.material().lit() && item.material().opacity() == 1) {
-                mesh(gl, turn, item);
+            if (item.casts() && item.material().lit() && item.material().opacity() == 1) {
+                mesh(gl, turn, shift, item);
             }
         }
         return light;
-    }
-
-    private static void extend(double[] low, double[] high, int axis, double value) {
-        low[axis] = Math.min(low[axis], value);
-        high[axis] = Math.max(high[axis], value);
     }
 
     private BufferedImage read(GL3 gl) {
@@ -412,7 +454,10 @@ final class Canvas implements AutoCloseable {
         gl.glBindFramebuffer(GL3.GL_DRAW_FRAMEBUFFER, framebuffers[1]);
         gl.glBlitFramebuffer(0, 0, width, height, 0, 0, width, height, GL.GL_COLOR_BUFFER_BIT, GL.GL_NEAREST);
         gl.glBindFramebuffer(GL.GL_FRAMEBUFFER, framebuffers[1]);
-        IntBuffer pixels = Buffers.newDirectIntBuffer(width * height);
+        if (pixels == null) {
+            pixels = Buffers.newDirectIntBuffer(width * height);
+        }
+        pixels.clear();
         gl.glPixelStorei(GL.GL_PACK_ALIGNMENT, 4);
         gl.glReadPixels(0, 0, width, height, GL.GL_BGRA, GL3.GL_UNSIGNED_INT_8_8_8_8_REV, pixels);
         BufferedImage image = new BufferedImage(width, height, BufferedImage.TYPE_INT_RGB);
@@ -423,6 +468,28 @@ final class Canvas implements AutoCloseable {
         }
         return image;
     }
+
+    /** How many things OpenGL holds for this canvas: meshes with their buffers, textures, framebuffers, programs. */
+    int held() {
+        GL3 gl = begin();
+        try {
+            int count = 0;
+            for (int name = 1; name < MOST_NAMES; name++) {
+                count += (gl.glIsBuffer(name) ? 1 : 0)
+                        + (gl.glIsVertexArray(name) ? 1 : 0)
+                        + (gl.glIsTexture(name) ? 1 : 0)
+                        + (gl.glIsRenderbuffer(name) ? 1 : 0)
+                        + (gl.glIsFramebuffer(name) ? 1 : 0)
+                        + (gl.glIsProgram(name) || gl.glIsShader(name) ? 1 : 0);
+            }
+            return count;
+        } finally {
+            end();
+        }
+    }
+
+    /** Names of things of OpenGL are looked at up to here; Mesa gives them out in turn, the lowest free first. */
+    private static final int MOST_NAMES = 20_000;
 
     private static float channel(int colour, int shift) {
         return (colour >> shift & 0xff) / 255f;

@@ -9,6 +9,7 @@ final class Mesh {
     private final float[] normals;
     private final float[] values;
     private final int[] triangles;
+    private final float[] box;
 
     /**
      * A mesh.
@@ -32,6 +33,23 @@ final class Mesh {
         this.normals = normals;
         this.values = values;
         this.triangles = triangles;
+        this.box = box(positions);
+    }
+
+    private static float[] box(float[] positions) {
+        float inf = Float.POSITIVE_INFINITY;
+        float[] box = {inf, inf, inf, -inf, -inf, -inf};
+        for (int n = 0; n < positions.length; n++) {
+            int axis = n % 3;
+            box[axis] = Math.min(box[axis], positions[n]);
+            box[3 + axis] = Math.max(box[3 + axis], positions[n]);
+        }
+        return box;
+    }
+
+    /** Least x, y, z, then greatest; the least above the greatest for a mesh without vertices. */
+    float[] box() {
+        return box;
     }
 
     float[] positions() {

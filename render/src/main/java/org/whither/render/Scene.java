@@ -20,8 +20,43 @@ record Scene(List<Item> items, Light light) {
      * @param mesh the mesh
      * @param material what it looks like
      * @param turn angle by which it is turned about the z axis, positive by the right-hand rule (rad)
+     * @param shift by how much it is then moved; length 3; kept
+     * @param from first of its triangles that is drawn
+     * @param to end of those that are drawn
+     * @param casts whether it casts a shadow where it is lit and hides what is behind
      */
-    record Item(Mesh mesh, Material material, double turn) {}
+    record Item(Mesh mesh, Material material, double turn, double[] shift, int from, int to, boolean casts) {
+        private static final double[] NOWHERE = new double[3];
+
+        Item(Mesh mesh, Material material, double turn) {
+            this(mesh, material, turn, NOWHERE, 0, mesh.triangles().length / 3, true);
+        }
+
+        /** The same thing moved to a place; small beside the scene, within which it lies. */
+        Item at(double x, double y, double z) {
+            return new Item(mesh, material, turn, new double[] {x, y, z}, from, to, casts);
+        }
+
+        /** The same thing turned by an angle instead (rad). */
+        Item turned(double angle) {
+            return new Item(mesh, material, angle, shift, from, to, casts);
+        }
+
+        /** Only some of its triangles; an empty part draws nothing. */
+        Item part(int first, int end) {
+            return new Item(mesh, material, turn, shift, first, end, casts);
+        }
+
+        /** The same thing, which casts no shadow. */
+        Item shadowless() {
+            return new Item(mesh, material, turn, shift, from, to, false);
+        }
+
+        /** Whether it was moved to a place of its own. */
+        boolean placed() {
+            return shift[0] != 0 || shift[1] != 0 || shift[2] != 0;
+        }
+    }
 
     /**
      * What a mesh looks like.
