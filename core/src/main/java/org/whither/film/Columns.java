@@ -108,6 +108,11 @@ final class Columns implements GasState {
         return densityOverPressure * Math.sqrt(square(i, j, a, b));
     }
 
+    @Override
+    public double pressureOverDensity() {
+        return 1 / densityOverPressure;
+    }
+
     double nodeSquare(int i, int j) {
         return nodeSquare[grid.node(i, j)];
     }

@@ -38,6 +38,7 @@ public final class ConservingFlow implements FilmFlow {
     private final double[] bendRadial;
     private final boolean nodalThickness;
     private final boolean fedThroughRotor;
+    private PackedFlow packed;
 
     /**
      * The motion of the gas in a film.
@@ -289,7 +290,83 @@ public final class ConservingFlow implements FilmFlow {
     }
 
     @Override
+    public synchronized Optional<PackedFlow> packed() {
+        if (packed == null && PackedFlow.fits(film, levels.length)) {
+            packed = new PackedFlow(film, levels, gas, new Numbers());
+        }
+        return Optional.ofNullable(packed);
+    }
+
+    @Override
     public String interpolation() {
         return "conserving";
+    }
+
+    /** What is packed; the parabola of a lubrication field is a spline through 0 at both faces. */
+    private final class Numbers implements PackedFlow.Source {
+        private int face(int i, int j) {
+            return i * grid.cellsRadial() + j;
+        }
+
+        @Override
+        public double around(int i, int j, int k) {
+            return profiles == null ? 0 : profiles.thetaAt(i, j, k);
+        }
+
+        @Override
+        public double aroundBend(int i, int j, int k) {
+            return profiles == null
+                    ? -2 * (flows.theta(i, j) - dragRotor[face(i, j)] - dragStator[face(i, j)])
+                    : profiles.thetaBend(i, j, k);
+        }
+
+        @Override
+        public double out(int i, int j, int k) {
+            return profiles == null ? 0 : profiles.radialAt(i, j, k);
+        }
+
+        @Override
+        public double outBend(int i, int j, int k) {
+            return profiles == null ? -2 * flows.radial(i, j) : profiles.radialBend(i, j, k);
+        }
+
+        @Override
+        public double spread(int i, int j, int k) {
+            double supply = flows.supply(i, j);
+            if (k == 0) {
+                return fedThroughRotor ? -supply : 0;
+            }
+            if (k == levels.length - 1) {
+                return fedThroughRotor ? 0 : supply;
+            }
+            double sigma = levels[k];
+            double square = sigma * sigma;
+            int left = face(i, j);
+            int right = face(i + 1, j);
+            return (dragRotor[right] - dragRotor[left]) * (2 * sigma - square)
+                    + (dragStator[right] - dragStator[left]) * square
+                    + profiles.spread(i, j, k)
+                    - (fedThroughRotor ? supply : 0);
+        }
+
+        @Override
+        public double dragRotor(int i, int j) {
+            return dragRotor[face(i, j)];
+        }
+
+        @Override
+        public double dragStator(int i, int j) {
+            return dragStator[face(i, j)];
+        }
+
+        @Override
+        public double lean(int i, int j) {
+            return leanRadial[face(i, j)];
+        }
+
+        @Override
+        public double bend(int i, int j) {
+            return bendRadial[face(i, j)];
+        }
     }
 }

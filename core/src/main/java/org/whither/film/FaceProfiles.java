@@ -149,6 +149,34 @@ final class FaceProfiles {
         return radial;
     }
 
+    /** Flow density of constant-i face (i, j) at level k, without what the faces drag along (kg/s). */
+    double thetaAt(int i, int j, int k) {
+        return theta[thetaPiece(i, j, k) + 1];
+    }
+
+    /** A sixth of its second derivative (kg/s). */
+    double thetaBend(int i, int j, int k) {
+        return theta[thetaPiece(i, j, k) + 2];
+    }
+
+    /** Flow density of constant-j face (i, j) at level k (kg/s). */
+    double radialAt(int i, int j, int k) {
+        return radial[radialPiece(i, j, k) + 1];
+    }
+
+    /** A sixth of its second derivative (kg/s). */
+    double radialBend(int i, int j, int k) {
+        return radial[radialPiece(i, j, k) + 2];
+    }
+
+    /** What leaves cell (i, j) below level k less what enters, without what the faces drag along (kg/s). */
+    double spread(int i, int j, int k) {
+        return theta[thetaPiece(i + 1, j, k)]
+                - theta[thetaPiece(i, j, k)]
+                + radial[radialPiece(i, j + 1, k)]
+                - radial[radialPiece(i, j, k)];
+    }
+
     /** Flow of the whole column in the profile of constant-i face (i, j) (kg/s). */
     double thetaTotal(int i, int j) {
         return theta[thetaPiece(i, j, sigma.length - 1)];

@@ -91,6 +91,11 @@ public interface FilmFlow {
         return Optional.empty();
     }
 
+    /** The motion laid out for following many tracers at once, where this interpolation can be; made at the first call. */
+    default Optional<PackedFlow> packed() {
+        return Optional.empty();
+    }
+
     /** Which interpolation this is, as written in results: {@code conserving} or {@code nodal}. */
     String interpolation();
 }

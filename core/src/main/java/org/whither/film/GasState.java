@@ -12,6 +12,9 @@ interface GasState {
     /** Density at a place of a piece (kg/m³). */
     double density(int i, int j, int k, double a, double b, double sigma);
 
+    /** Pressure over density where one ratio holds in the whole film (Pa m³/kg); else not a number. */
+    double pressureOverDensity();
+
     /** What a turn of the observer by 1 rad/s adds to the flow through a constant-i face of row j: ∫ρh r dr (kg). */
     double rotationMoment(int i, int j);
 

@@ -64,6 +64,11 @@ final class Levels implements GasState {
         return gasLaw ? densityOverPressure * root : root;
     }
 
+    @Override
+    public double pressureOverDensity() {
+        return gasLaw ? 1 / densityOverPressure : Double.NaN;
+    }
+
     private double interpolate(double[] values, int stride, int i, int j, int k, double a, double b, double sigma) {
         int n = grid.node(i, j) * stride;
         int m = grid.node(i + 1, j) * stride;

@@ -9,18 +9,18 @@ import java.util.Optional;
  * from the rotor, and a parabola. The figures have no source outside; what is checked is that the full field, which
  * knows only velocities at the nodes, moves like the lubrication film, which knows the exact flows of the faces.
  */
-final class WavyCase {
+public final class WavyCase {
     static final int SECTORS = 6;
     private final FilmGrid grid;
     private final double stream;
 
     /** On a grid of a sixth of the ring; {@code stream} is the amplitude of the stream function over the outer flow. */
-    WavyCase(int cellsTheta, int inner, int outer, double stream) {
+    public WavyCase(int cellsTheta, int inner, int outer, double stream) {
         grid = RadialCase.grid(cellsTheta, RadialCase.radii(inner, outer, 2e-4), SECTORS, 0.3);
         this.stream = stream * RadialCase.OUTER_FLOW / (2 * Math.PI);
     }
 
-    FilmGrid grid() {
+    public FilmGrid grid() {
         return grid;
     }
 
@@ -74,7 +74,7 @@ final class WavyCase {
         return new RingFaces(Location.NODE, rotor, new double[grid.nodes()]);
     }
 
-    Film lubrication() {
+    public Film lubrication() {
         double[] pressure = new double[grid.nodes()];
         for (int i = 0; i < grid.ni(); i++) {
             for (int j = 0; j < grid.nj(); j++) {
@@ -109,7 +109,7 @@ final class WavyCase {
                 Frame.ROTATING);
     }
 
-    Film full(int nk, Frame velocityFrame) {
+    public Film full(int nk, Frame velocityFrame) {
         double[] sigma = RadialCase.levels(nk);
         double[] pressure = new double[grid.nodes()];
         double[] ur = new double[grid.nodes() * nk];
@@ -146,7 +146,7 @@ final class WavyCase {
     }
 
     /** The same full film in a mirror: θ and the rotation rate with the other sign. */
-    static Film mirrored(Film film) {
+    public static Film mirrored(Film film) {
         FilmGrid grid = film.grid();
         FullField field = (FullField) film.field();
         int nk = field.nk();

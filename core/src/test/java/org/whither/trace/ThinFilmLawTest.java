@@ -130,7 +130,7 @@ class ThinFilmLawTest {
     }
 
     /** The height below which a share of a parabolic flow runs: 3σ² − 2σ³ = share. */
-    private static double height(double share) {
+    static double height(double share) {
         double low = 0;
         double high = 1;
         for (int n = 0; n < 60; n++) {
