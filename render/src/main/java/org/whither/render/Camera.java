@@ -136,6 +136,20 @@ final class Camera {
         return matrix.clone();
     }
 
+    /** From the scene to the cube −1 … 1 of a part of the window alone; column-major. */
+    double[] matrixOfPart(Rectangle part) {
+        double sx = (double) window.width / part.width;
+        double sy = (double) window.height / part.height;
+        double tx = (2 * (window.getCenterX() - part.getCenterX())) / part.width;
+        double ty = (2 * (part.getCenterY() - window.getCenterY())) / part.height;
+        double[] m = matrix.clone();
+        for (int c = 0; c < 16; c += 4) {
+            m[c] = sx * matrix[c] + tx * matrix[c + 3];
+            m[c + 1] = sy * matrix[c + 1] + ty * matrix[c + 3];
+        }
+        return m;
+    }
+
     /** Where the eye is; a copy. */
     double[] eye() {
         return eye.clone();

@@ -16,9 +16,11 @@ import java.nio.ByteBuffer;
 import java.nio.IntBuffer;
 import java.nio.charset.StandardCharsets;
 import java.util.ArrayList;
+import java.util.Collections;
 import java.util.EnumMap;
 import java.util.IdentityHashMap;
 import java.util.List;
+import java.util.Set;
 
 /**
  * Draws scenes by OpenGL 3.3 core into an anti-aliased framebuffer of its own and hands back the pixels. Meshes are sent
@@ -30,6 +32,12 @@ final class Canvas implements AutoCloseable {
     private static final int SHADOW = 2048;
 
     private static final int SAMPLES = 4;
+
+    /** Longest side of what is drawn at once (pixels): larger pictures are drawn in tiles of equal size. */
+    private static final int TILE = 2048;
+
+    /** Bytes of memory of Java that a pixel of a picture needs on its way to a file. */
+    private static final int BYTES_PER_PIXEL = 12;
 
     /** A scene and how it falls on the picture. */
     record View(Scene scene, Camera camera) {}
@@ -49,6 +57,8 @@ final class Canvas implements AutoCloseable {
 
     private final int width;
     private final int height;
+    private final int tileWidth;
+    private final int tileHeight;
     private final GLOffscreenAutoDrawable drawable;
     private final IdentityHashMap<Mesh, Stored> stored = new IdentityHashMap<>();
     private final EnumMap<ColourScale, Integer> scales = new EnumMap<>(ColourScale.class);
@@ -59,6 +69,11 @@ final class Canvas implements AutoCloseable {
     private int sceneProgram;
     private int shadowProgram;
     private IntBuffer pixels;
+    /** What the shadow picture shows now, and how it was projected; null where it shows nothing. */
+    private List<Scene.Item> shadowCasters;
+
+    private Scene.Light shadowLight;
+    private double[] shadowMatrix;
 
     /**
      * Opens a canvas.
@@ -66,11 +81,19 @@ final class Canvas implements AutoCloseable {
      * @param width width of the pictures (pixels)
      * @param height height of the pictures (pixels)
      * @throws NoOpenGL where OpenGL cannot be started
-     * @throws IllegalArgumentException where the size is beyond what OpenGL offers
+     * @throws IllegalArgumentException where the size is beyond the memory
      */
     Canvas(int width, int height) {
+        this(width, height, TILE);
+    }
+
+    /** As above, with tiles of a given longest side (pixels). */
+    Canvas(int width, int height, int tile) {
+        checkSize(width, height);
         this.width = width;
         this.height = height;
+        this.tileWidth = parts(width, tile);
+        this.tileHeight = parts(height, tile);
         this.drawable = HeadlessGL.open();
         boolean ready = false;
         try {
@@ -84,6 +107,41 @@ final class Canvas implements AutoCloseable {
                 close();
             }
         }
+    }
+
+    /** The size of the equal parts, none longer than asked for, that cover a length. */
+    private static int parts(int length, int most) {
+        int count = (length + most - 1) / most;
+        return (length + count - 1) / count;
+    }
+
+    /**
+     * Checks that the memory can hold a picture.
+     *
+     * @throws IllegalArgumentException where it cannot
+     */
+    static void checkSize(int width, int height) {
+        if (width < 1 || height < 1) {
+            throw new IllegalArgumentException(
+                    "picture of " + width + " × " + height + " pixels; expected at least one pixel each way");
+        }
+        double needed = (double) width * height * BYTES_PER_PIXEL;
+        double free = freeMemory();
+        if (needed > free) {
+            System.gc();
+            free = freeMemory();
+        }
+        if (needed > free || (double) width * height > Integer.MAX_VALUE - 8) {
+            throw new IllegalArgumentException("picture of " + width + " × " + height + " pixels needs "
+                    + Math.round(needed / 1e6) + " MB of memory, and " + Math.round(free / 1e6)
+                    + " MB are free; choose a smaller size or give the program more memory, as with"
+                    + " WHITHER_JAVA_OPTS=-Xmx8g in the environment");
+        }
+    }
+
+    private static double freeMemory() {
+        Runtime runtime = Runtime.getRuntime();
+        return (double) runtime.maxMemory() - runtime.totalMemory() + runtime.freeMemory();
     }
 
     private GL3 begin() {
@@ -100,11 +158,6 @@ final class Canvas implements AutoCloseable {
 
     private void prepare(GL3 gl) {
         int[] most = new int[1];
-        gl.glGetIntegerv(GL.GL_MAX_RENDERBUFFER_SIZE, most, 0);
-        if (width < 1 || height < 1 || width > most[0] || height > most[0]) {
-            throw new IllegalArgumentException("picture of " + width + " × " + height
-                    + " pixels; this machine's OpenGL draws 1 to " + most[0] + " pixels each way");
-        }
         gl.glGetIntegerv(GL3.GL_MAX_SAMPLES, most, 0);
         int samples = Math.min(SAMPLES, most[0]);
         gl.glGenFramebuffers(3, framebuffers, 0);
@@ -151,12 +204,7 @@ final class Canvas implements AutoCloseable {
 
     private void storage(GL3 gl, int buffer, int format, int samples) {
         gl.glBindRenderbuffer(GL.GL_RENDERBUFFER, buffer);
-        gl.glRenderbufferStorageMultisample(GL.GL_RENDERBUFFER, samples, format, width, height);
-        int error = gl.glGetError();
-        if (error == GL.GL_OUT_OF_MEMORY) {
-            throw new IllegalArgumentException(
-                    "picture of " + width + " × " + height + " pixels does not fit the memory; choose a smaller size");
-        }
+        gl.glRenderbufferStorageMultisample(GL.GL_RENDERBUFFER, samples, format, tileWidth, tileHeight);
     }
 
     private static void attach(GL3 gl, int where, int buffer) {
@@ -265,7 +313,7 @@ final class Canvas implements AutoCloseable {
     }
 
     /**
-     * Draws a picture.
+     * Draws a picture. Meshes that the picture before had and this one has not are released.
      *
      * @param background colour where nothing is drawn, sRGB 0xRRGGBB
      * @param views scenes and their windows, later ones over earlier ones
@@ -275,20 +323,29 @@ final class Canvas implements AutoCloseable {
     BufferedImage draw(int background, List<View> views) {
         GL3 gl = begin();
         try {
-            for (View view : views) {
-                for (Scene.Item item : view.scene().items()) {
-                    stored.computeIfAbsent(item.mesh(), mesh -> store(gl, mesh));
+            store(gl, views);
+            BufferedImage image = new BufferedImage(width, height, BufferedImage.TYPE_INT_RGB);
+            if (pixels == null) {
+                pixels = Buffers.newDirectIntBuffer(tileWidth * tileHeight);
+            }
+            for (int y = 0; y < height; y += tileHeight) {
+                for (int x = 0; x < width; x += tileWidth) {
+                    Rectangle tile =
+                            new Rectangle(x, y, Math.min(tileWidth, width - x), Math.min(tileHeight, height - y));
+                    gl.glBindFramebuffer(GL.GL_FRAMEBUFFER, framebuffers[0]);
+                    gl.glViewport(0, 0, tileWidth, tileHeight);
+                    gl.glDisable(GL.GL_SCISSOR_TEST);
+                    gl.glClearColor(channel(background, 16), channel(background, 8), channel(background, 0), 1);
+                    gl.glClear(GL.GL_COLOR_BUFFER_BIT);
+                    for (View view : views) {
+                        Rectangle part = view.camera().window().intersection(tile);
+                        if (!part.isEmpty()) {
+                            draw(gl, view.scene(), view.camera(), part, tile);
+                        }
+                    }
+                    read(gl, tile, image);
                 }
             }
-            gl.glBindFramebuffer(GL.GL_FRAMEBUFFER, framebuffers[0]);
-            gl.glViewport(0, 0, width, height);
-            gl.glDisable(GL.GL_SCISSOR_TEST);
-            gl.glClearColor(channel(background, 16), channel(background, 8), channel(background, 0), 1);
-            gl.glClear(GL.GL_COLOR_BUFFER_BIT);
-            for (View view : views) {
-                draw(gl, view);
-            }
-            BufferedImage image = read(gl);
             check(gl, "drawing");
             return image;
         } finally {
@@ -296,25 +353,45 @@ final class Canvas implements AutoCloseable {
         }
     }
 
-    private void draw(GL3 gl, View view) {
-        Scene scene = view.scene();
+    private void store(GL3 gl, List<View> views) {
+        Set<Mesh> wanted = Collections.newSetFromMap(new IdentityHashMap<>());
+        for (View view : views) {
+            for (Scene.Item item : view.scene().items()) {
+                wanted.add(item.mesh());
+            }
+        }
+        stored.entrySet().removeIf(entry -> {
+            boolean old = !wanted.contains(entry.getKey());
+            if (old) {
+                release(gl, entry.getValue());
+            }
+            return old;
+        });
+        for (Mesh mesh : wanted) {
+            stored.computeIfAbsent(mesh, key -> store(gl, key));
+        }
+    }
+
+    /** Draws the part of a view that falls on a tile. */
+    private void draw(GL3 gl, Scene scene, Camera camera, Rectangle part, Rectangle tile) {
         boolean anyLit = scene.items().stream().anyMatch(item -> item.material().lit());
         double[] light = anyLit ? castShadows(gl, scene) : new double[16];
 
         gl.glBindFramebuffer(GL.GL_FRAMEBUFFER, framebuffers[0]);
-        Rectangle window = view.camera().window();
-        int bottom = height - window.y - window.height;
-        gl.glViewport(window.x, bottom, window.width, window.height);
+        int left = part.x - tile.x;
+        int bottom = tile.height - (part.y - tile.y) - part.height;
+        gl.glViewport(left, bottom, part.width, part.height);
         gl.glEnable(GL.GL_SCISSOR_TEST);
-        gl.glScissor(window.x, bottom, window.width, window.height);
+        gl.glScissor(left, bottom, part.width, part.height);
         gl.glEnable(GL.GL_DEPTH_TEST);
         gl.glDepthFunc(GL.GL_LEQUAL);
         gl.glDepthMask(true);
         gl.glClear(GL.GL_DEPTH_BUFFER_BIT);
         gl.glUseProgram(sceneProgram);
-        matrix(gl, sceneProgram, "view", view.camera().matrix());
+        double[] matrix = camera.matrixOfPart(part);
+        matrix(gl, sceneProgram, "view", matrix);
         matrix(gl, sceneProgram, "lightView", light);
-        double[] eye = view.camera().eye();
+        double[] eye = camera.eye();
         gl.glUniform3f(at(gl, sceneProgram, "eye"), (float) eye[0], (float) eye[1], (float) eye[2]);
         Scene.Light lamp = scene.light();
         gl.glUniform3f(at(gl, sceneProgram, "lamp"), (float) lamp.x(), (float) lamp.y(), (float) lamp.z());
@@ -326,7 +403,6 @@ final class Canvas implements AutoCloseable {
         gl.glActiveTexture(GL.GL_TEXTURE0);
         gl.glBindTexture(GL.GL_TEXTURE_2D, scales.get(ColourScale.PRESSURE));
         gl.glDisable(GL.GL_BLEND);
-        double[] matrix = view.camera().matrix();
         items(gl, scene, matrix, false);
         gl.glEnable(GL.GL_BLEND);
         gl.glBlendFuncSeparate(GL.GL_SRC_ALPHA, GL.GL_ONE_MINUS_SRC_ALPHA, GL.GL_ZERO, GL.GL_ONE);
@@ -411,7 +487,15 @@ final class Canvas implements AutoCloseable {
         return new double[] {cos * x - sin * y + d[0], sin * x + cos * y + d[1], z + d[2]};
     }
 
+    /** Draws the scene as the lamp sees it, unless that is what the shadow picture shows already. */
     private double[] castShadows(GL3 gl, Scene scene) {
+        List<Scene.Item> casters = scene.items().stream()
+                .filter(item ->
+                        item.casts() && item.material().lit() && item.material().opacity() == 1)
+                .toList();
+        if (casters.equals(shadowCasters) && scene.light().equals(shadowLight)) {
+            return shadowMatrix;
+        }
         double[] low = {Double.POSITIVE_INFINITY, Double.POSITIVE_INFINITY, Double.POSITIVE_INFINITY};
         double[] high = {Double.NEGATIVE_INFINITY, Double.NEGATIVE_INFINITY, Double.NEGATIVE_INFINITY};
         boolean allPlaced = scene.items().stream().allMatch(Scene.Item::placed);
@@ -441,32 +525,30 @@ final class Canvas implements AutoCloseable {
         matrix(gl, shadowProgram, "lightView", light);
         int turn = at(gl, shadowProgram, "turn");
         int shift = at(gl, shadowProgram, "shift");
-        for (Scene.Item item : scene.items()) {
-            if (item.casts() && item.material().lit() && item.material().opacity() == 1) {
-                mesh(gl, turn, shift, item);
-            }
+        for (Scene.Item item : casters) {
+            mesh(gl, turn, shift, item);
         }
+        shadowCasters = casters;
+        shadowLight = scene.light();
+        shadowMatrix = light;
         return light;
     }
 
-    private BufferedImage read(GL3 gl) {
+    private void read(GL3 gl, Rectangle tile, BufferedImage image) {
+        int w = tile.width;
+        int h = tile.height;
         gl.glBindFramebuffer(GL3.GL_READ_FRAMEBUFFER, framebuffers[0]);
         gl.glBindFramebuffer(GL3.GL_DRAW_FRAMEBUFFER, framebuffers[1]);
-        gl.glBlitFramebuffer(0, 0, width, height, 0, 0, width, height, GL.GL_COLOR_BUFFER_BIT, GL.GL_NEAREST);
+        gl.glBlitFramebuffer(0, 0, w, h, 0, 0, w, h, GL.GL_COLOR_BUFFER_BIT, GL.GL_NEAREST);
         gl.glBindFramebuffer(GL.GL_FRAMEBUFFER, framebuffers[1]);
-        if (pixels == null) {
-            pixels = Buffers.newDirectIntBuffer(width * height);
-        }
-        pixels.clear();
         gl.glPixelStorei(GL.GL_PACK_ALIGNMENT, 4);
-        gl.glReadPixels(0, 0, width, height, GL.GL_BGRA, GL3.GL_UNSIGNED_INT_8_8_8_8_REV, pixels);
-        BufferedImage image = new BufferedImage(width, height, BufferedImage.TYPE_INT_RGB);
+        pixels.clear();
+        gl.glReadPixels(0, 0, w, h, GL.GL_BGRA, GL3.GL_UNSIGNED_INT_8_8_8_8_REV, pixels);
         int[] rows = ((DataBufferInt) image.getRaster().getDataBuffer()).getData();
-        for (int y = 0; y < height; y++) {
-            pixels.position((height - 1 - y) * width);
-            pixels.get(rows, y * width, width);
+        for (int y = 0; y < h; y++) {
+            pixels.position((h - 1 - y) * w);
+            pixels.get(rows, (tile.y + y) * width + tile.x, w);
         }
-        return image;
     }
 
     /** How many things OpenGL holds for this canvas: meshes with their buffers, textures, framebuffers, programs. */
@@ -531,11 +613,13 @@ final class Canvas implements AutoCloseable {
         }
     }
 
+    private static void release(GL3 gl, Stored mesh) {
+        gl.glDeleteBuffers(mesh.buffers.length, mesh.buffers, 0);
+        gl.glDeleteVertexArrays(1, new int[] {mesh.array}, 0);
+    }
+
     private void release(GL3 gl) {
-        for (Stored mesh : stored.values()) {
-            gl.glDeleteBuffers(mesh.buffers.length, mesh.buffers, 0);
-            gl.glDeleteVertexArrays(1, new int[] {mesh.array}, 0);
-        }
+        stored.values().forEach(mesh -> release(gl, mesh));
         stored.clear();
         for (int texture : scales.values()) {
             gl.glDeleteTextures(1, new int[] {texture}, 0);

@@ -112,57 +112,8 @@ public final class Gap {
         double above = Math.max(128 * unit, 64 * unit + 4.6 * Math.max(9.6, 13 * unit));
         Rectangle2D room = new Rectangle2D.Double(
                 74 * unit, above, settings.width() - 128 * unit, settings.height() - above - below);
-        List<double[]> extent = gap.extent();
         double aside = gap.upstreamIsTo ? ASIDE : -ASIDE;
-        double[] away = {
-            -Math.cos(ELEVATION) * Math.cos(aside), -Math.cos(ELEVATION) * Math.sin(aside), Math.sin(ELEVATION)
-        };
-        double[] right = {Math.sin(aside), -Math.cos(aside), 0};
-        double[] up = {Math.sin(ELEVATION) * Math.cos(aside), Math.sin(ELEVATION) * Math.sin(aside), Math.cos(ELEVATION)
-        };
-        double[] target = new double[3];
-        double size = 0;
-        for (double[] point : extent) {
-            for (int c = 0; c < 3; c++) {
-                target[c] += point[c] / extent.size();
-            }
-        }
-        for (double[] point : extent) {
-            size = Math.max(
-                    size, Math.hypot(Math.hypot(point[0] - target[0], point[1] - target[1]), point[2] - target[2]));
-        }
-        double distance = 4 * size;
-        Camera camera = null;
-        for (int round = 0; round < 40; round++) {
-            double[] eye = new double[3];
-            for (int c = 0; c < 3; c++) {
-                eye[c] = target[c] + distance * away[c];
-            }
-            camera = Camera.perspective(
-                    eye,
-                    target,
-                    FIELD_OF_VIEW,
-                    Math.max(0.02 * distance, distance - 2.5 * size),
-                    distance + 2.5 * size,
-                    window);
-            Rectangle2D seen = null;
-            for (double[] point : extent) {
-                Point2D p = camera.project(point[0], point[1], point[2]);
-                if (seen == null) {
-                    seen = new Rectangle2D.Double(p.getX(), p.getY(), 0, 0);
-                } else {
-                    seen.add(p);
-                }
-            }
-            double scale = 2 * distance * Math.tan(FIELD_OF_VIEW / 2) / window.height;
-            double dx = (seen.getCenterX() - room.getCenterX()) * scale;
-            double dy = (room.getCenterY() - seen.getCenterY()) * scale;
-            for (int c = 0; c < 3; c++) {
-                target[c] += dx * right[c] + dy * up[c];
-            }
-            distance *= Math.max(seen.getWidth() / room.getWidth(), seen.getHeight() / room.getHeight());
-        }
-        return camera;
+        return new Viewpoint(Math.PI + aside, ELEVATION, FIELD_OF_VIEW).fit(gap.extent(), window, room);
     }
 
     private BufferedImage draw() {

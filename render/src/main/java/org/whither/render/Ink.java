@@ -15,7 +15,9 @@ import java.awt.geom.Path2D;
 import java.awt.geom.Point2D;
 import java.awt.geom.Rectangle2D;
 import java.awt.image.BufferedImage;
+import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.List;
 
 /**
  * Words, legends and lines over a drawn scene, by Java2D, in one hand for all pictures. Sizes follow the picture's, so
@@ -147,6 +149,51 @@ final class Ink implements AutoCloseable {
         };
     }
 
+    /** The first of some wordings, from long to short, that fits; else the last, cut off where it must be. */
+    String first(Font font, double most, String... wordings) {
+        for (String words : wordings) {
+            if (width(font, words) <= most) {
+                return words;
+            }
+        }
+        return fitted(font, wordings[wordings.length - 1], most);
+    }
+
+    /** What parts the items of a line of facts: a line is broken there rather than within an item. */
+    static final String DOT = "  ·  ";
+
+    /**
+     * Words in as many lines as they need, broken between items or, within one that is longer than a line, between words.
+     *
+     * @param most most lines; what has no room in them is cut off
+     */
+    List<String> lines(Font font, String words, double room, int most) {
+        List<String> lines = new ArrayList<>();
+        for (String item : words.split(DOT, -1)) {
+            int last = lines.size() - 1;
+            if (last >= 0 && width(font, lines.get(last) + DOT + item) <= room) {
+                lines.set(last, lines.get(last) + DOT + item);
+                continue;
+            }
+            StringBuilder line = new StringBuilder();
+            for (String word : item.split(" ")) {
+                if (line.length() > 0 && width(font, line + " " + word) > room) {
+                    lines.add(line.toString());
+                    line.setLength(0);
+                }
+                line.append(line.length() > 0 ? " " : "").append(word);
+            }
+            lines.add(line.toString());
+        }
+        if (lines.size() > most) {
+            String rest = String.join(" ", lines.subList(most - 1, lines.size()));
+            lines = new ArrayList<>(lines.subList(0, most - 1));
+            lines.add(rest);
+        }
+        lines.replaceAll(line -> fitted(font, line, room));
+        return lines;
+    }
+
     /** The words, or, where they are wider than allowed, as many as fit and an ellipsis. */
     String fitted(Font font, String words, double most) {
         if (width(font, words) <= most) {
@@ -256,8 +303,11 @@ final class Ink implements AutoCloseable {
             line(x, y0 + h, x, y0 + h + 4 * unit);
             write(small, text, Ticks.number(tick, decimals), x, y0 + h + 5.5 * unit + ascent(small) + 1, Side.MIDDLE);
         }
-        Font captions = fitting(heading, caption, w);
-        write(captions, text, fitted(captions, caption, w), x0, y0 - 6 * unit, Side.LEFT);
+        List<String> captions = lines(heading, caption, w, 2);
+        for (int n = 0; n < captions.size(); n++) {
+            double up = (captions.size() - 1 - n) * height(heading);
+            write(heading, text, captions.get(n), x0, y0 - 6 * unit - up, Side.LEFT);
+        }
     }
 
     private void end(int colour, double x, double y, double h, int way) {
