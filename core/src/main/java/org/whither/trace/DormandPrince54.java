@@ -141,4 +141,49 @@ public final class DormandPrince54 {
             y[c] = start[c] + fraction * (rise + rest * (bend + fraction * (twist + rest * step * last)));
         }
     }
+
+    /** How many numbers {@link #extension} writes for each component of the state. */
+    static final int EXTENSION = 5;
+
+    /**
+     * Copies the continuous extension of the tried step, for {@link #interpolate(double[], int, double)}. To be asked
+     * before {@link #accept}.
+     *
+     * @param into for each component of the state its {@value #EXTENSION} coefficients; overwritten
+     * @param at where in {@code into} they start
+     */
+    void extension(double[] into, int at) {
+        for (int c = 0; c < n; c++) {
+            double rise = end[c] - start[c];
+            double bend = step * k[0][c] - rise;
+            double last = 0;
+            for (int s = 0; s < 7; s++) {
+                last += D[s] * k[s][c];
+            }
+            int to = at + c * EXTENSION;
+            into[to] = start[c];
+            into[to + 1] = rise;
+            into[to + 2] = bend;
+            into[to + 3] = rise - step * k[6][c] - bend;
+            into[to + 4] = step * last;
+        }
+    }
+
+    /**
+     * One component of the state within a step whose extension was copied.
+     *
+     * @param extension what {@link #extension} wrote; not modified
+     * @param at where the component's coefficients start
+     * @param fraction 0 … 1 of the step
+     * @return the component
+     */
+    static double interpolate(double[] extension, int at, double fraction) {
+        double rest = 1 - fraction;
+        return extension[at]
+                + fraction
+                        * (extension[at + 1]
+                                + rest
+                                        * (extension[at + 2]
+                                                + fraction * (extension[at + 3] + rest * extension[at + 4])));
+    }
 }

@@ -15,4 +15,13 @@ public interface PathStep {
      * @return the point
      */
     PathPoint at(double fraction);
+
+    /**
+     * Copies the step, so that points of it can be found after the call in which it was handed over; see
+     * {@link PointFinder}.
+     *
+     * @param into {@link PointFinder#STEP} numbers; overwritten
+     * @param at where in {@code into} they start
+     */
+    void copy(double[] into, int at);
 }

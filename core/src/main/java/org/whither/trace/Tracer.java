@@ -42,6 +42,7 @@ public final class Tracer {
     private final double[] y = new double[3];
     private final double[] probe = new double[3];
     private final RightHandSide rightHandSide = this::evaluate;
+    private final PointFinder finder;
 
     private int i;
     private int j;
@@ -68,6 +69,7 @@ public final class Tracer {
         this.stationaryTurn = frameSpeed;
         this.extent = grid.outerRadius() - grid.innerRadius();
         this.pitch = grid.pitch();
+        this.finder = new PointFinder(flow, settings.frame(), settings.direction());
         this.openRotor = film.supply().isPresent() && film.supply().get().face() == Face.ROTOR;
         this.openStator = film.supply().isPresent() && film.supply().get().face() == Face.STATOR;
     }
@@ -156,6 +158,12 @@ public final class Tracer {
                     part = 0.5;
                 }
                 steps++;
+                if (settings.turnLimit() < Double.POSITIVE_INFINITY) {
+                    double until = way == NO_WAY ? 1 : earliestExit(part);
+                    if (beyondTurns(release, until) >= 0) {
+                        return stopTurning(release, until, observer);
+                    }
+                }
                 if (way == NO_WAY) {
                     if (observer != null) {
                         observer.step(new KeptStep(time, h, 1));
@@ -249,6 +257,27 @@ public final class Tracer {
             return Double.POSITIVE_INFINITY;
         }
         return Math.max(around, Math.max(out, across));
+    }
+
+    // ---- the limit of turns ----------------------------------------------------------------------------------------
+
+    /** How far beyond the limit of turns a point of the tried step lies (rad). */
+    private double beyondTurns(Release release, double fraction) {
+        stepper.interpolate(fraction, probe);
+        double since = time + fraction * stepper.step();
+        double stationary = probe[0] + stationaryTurn * settings.direction().sign() * since;
+        return Math.abs(stationary - release.theta()) - settings.turnLimit();
+    }
+
+    private PathEnd stopTurning(Release release, double until, StepObserver observer) {
+        double fraction =
+                beyondTurns(release, 0) >= 0 ? 0 : rootFinder.solve(200, f -> beyondTurns(release, f), 0, until);
+        if (observer != null) {
+            observer.step(new KeptStep(time, stepper.step(), fraction));
+        }
+        stepper.interpolate(fraction, y);
+        time += fraction * stepper.step();
+        return new PathEnd.StillInside(time, position());
     }
 
     // ---- the borders of a piece ------------------------------------------------------------------------------------
@@ -440,24 +469,7 @@ public final class Tracer {
     }
 
     private PathPoint point(double since, double[] state) {
-        double steady = steadyTheta(since, state[0]);
-        double theta = steady - sectorsPassed * pitch;
-        double r = state[1];
-        double sigma = Math.max(0, Math.min(1, state[2]));
-        flow.rates(i, j, k, theta, r, sigma, rates);
-        double h = flow.thickness(i, j, theta, r);
-        double around = r * (rates[0] + steadyTurn);
-        double across = h * rates[2];
-        double speed = Math.sqrt(around * around + rates[1] * rates[1] + across * across);
-        return new PathPoint(
-                since,
-                state[0],
-                steady,
-                r,
-                flow.rotorZ(i, j, theta, r) + sigma * h,
-                sigma,
-                speed,
-                flow.pressure(i, j, k, theta, r, sigma));
+        return finder.point(since, state[0], state[1], state[2], i, j, k, sectorsPassed);
     }
 
     private final class KeptStep implements PathStep {
@@ -486,6 +498,18 @@ public final class Tracer {
             double[] state = new double[3];
             stepper.interpolate(fraction * share, state);
             return point(from + fraction * share * length, state);
+        }
+
+        @Override
+        public void copy(double[] into, int at) {
+            into[at] = from;
+            into[at + 1] = length;
+            into[at + 2] = share;
+            into[at + 3] = i;
+            into[at + 4] = j;
+            into[at + 5] = k;
+            into[at + 6] = sectorsPassed;
+            stepper.extension(into, at + PointFinder.EXTENSION_AT);
         }
     }
 }

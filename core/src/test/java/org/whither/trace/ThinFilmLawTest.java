@@ -19,7 +19,7 @@ class ThinFilmLawTest {
     private static final FilmGrid GRID = RadialCase.grid(4, RadialCase.radii(12, 10, 2e-4), 6, 0.3);
 
     /** The exact velocities of the radial film outside the feed (Reynolds 1886), asked for at any point of any piece. */
-    private static final FilmFlow EXACT = new FilmFlow() {
+    static final FilmFlow EXACT = new FilmFlow() {
         private final FilmFlow onGrid = new ConservingFlow(RadialCase.film(GRID, true));
 
         @Override

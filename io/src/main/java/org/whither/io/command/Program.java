@@ -37,7 +37,13 @@ import picocli.CommandLine.Spec;
                     + " guarantee, and nothing to set trips, alarms, zones or exposure limits by. Local codes, the seal"
                     + " maker, the plant's safety studies and licensed practice come first. Nitrogen asphyxiates."
         },
-        subcommands = {DemoCommand.class, CheckCommand.class, SplitCommand.class, DrawCommand.class, SampleCommand.class
+        subcommands = {
+            DemoCommand.class,
+            CheckCommand.class,
+            SplitCommand.class,
+            PathsCommand.class,
+            DrawCommand.class,
+            SampleCommand.class
         })
 public final class Program implements Callable<Integer> {
     @Spec

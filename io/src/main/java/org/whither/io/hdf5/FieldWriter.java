@@ -27,7 +27,7 @@ import org.whither.io.units.Quantity;
 /** Writes a gas film in the film-field layout: SI units, 64-bit numbers, the whole file or none. */
 public final class FieldWriter {
     /** The superblock takes 48 bytes. */
-    private static final long HEAP_ADDRESS = 64;
+    static final long HEAP_ADDRESS = 64;
 
     private final TextHeap texts;
 

@@ -69,8 +69,9 @@ final class FlatDataset extends WritableDatasetImpl {
         long dataBytes = getSizeInBytes();
         // The header is as long with any address in it; its length says where the data begin.
         long dataAddress = position
-                + header(position, Constants.UNDEFINED_ADDRESS, dataBytes).limit();
-        put(channel, header(position, dataAddress, dataBytes), position);
+                + header(this, shape, position, Constants.UNDEFINED_ADDRESS, dataBytes)
+                        .limit();
+        put(channel, header(this, shape, position, dataAddress, dataBytes), position);
         long at = dataAddress;
         long count = getSize();
         ByteBuffer buffer = ByteBuffer.allocate(BUFFER_BYTES).order(ByteOrder.nativeOrder());
@@ -89,15 +90,18 @@ final class FlatDataset extends WritableDatasetImpl {
         return dataAddress + dataBytes;
     }
 
-    private ByteBuffer header(long position, long dataAddress, long dataBytes) {
+    /** The header of a contiguous dataset: as long whatever the address of the data. */
+    static ByteBuffer header(
+            WritableDatasetImpl dataset, int[] shape, long position, long dataAddress, long dataBytes) {
         List<Message> messages = new ArrayList<>();
-        messages.add(DataTypeMessage.create(getDataType()));
+        messages.add(DataTypeMessage.create(dataset.getDataType()));
         messages.add(DataSpaceMessage.create(space(shape)));
         messages.add(FillValueMessage.NO_FILL);
         messages.add(ContiguousDataLayoutMessage.create(dataAddress, dataBytes));
-        if (!getAttributes().isEmpty()) {
+        if (!dataset.getAttributes().isEmpty()) {
             messages.add(AttributeInfoMessage.create());
-            for (Map.Entry<String, Attribute> attribute : getAttributes().entrySet()) {
+            for (Map.Entry<String, Attribute> attribute :
+                    dataset.getAttributes().entrySet()) {
                 messages.add(AttributeMessage.create(attribute.getKey(), attribute.getValue()));
             }
         }
