@@ -34,17 +34,22 @@ final class HoldTest {
     }
 
     private static final int THROUGH_TRACERS = 4096;
-    private static final int CLOCK_TRACERS = 512;
+
+    /** Gas that turns for long is followed at least so precisely: an error of a step adds up over its turns. */
+    private static final double TOLERANCE = 1e-7;
+
+    /** Part of the time that the profile clock must show; through-going gas passes in about one median by it. */
+    private static final double CLOCK_PART = 0.25;
 
     private final FilmFlow flow;
     private final ProfileClock clock;
     private final EddySettings settings;
     private final Frame steady;
+    private final double tolerance;
     private final List<Release> entering;
     private final List<PathEnd.Border> borders;
     private final double[] residence;
     private final double medianResidence;
-    private final double clockMedian;
     private long tracers;
     private long steps;
     private PathEnd.Failed failure;
@@ -54,6 +59,7 @@ final class HoldTest {
         this.clock = new ProfileClock(flow);
         this.settings = settings;
         this.steady = flow.film().steadyIn();
+        this.tolerance = Math.min(settings.tolerance(), TOLERANCE);
         double longest = Split.PATIENCE * FilmMass.of(flow) / balance.inflow();
         List<Release> throughGoing = new ArrayList<>();
         List<PathEnd.Border> over = new ArrayList<>();
@@ -66,19 +72,10 @@ final class HoldTest {
         }
         entering = List.copyOf(throughGoing);
         borders = List.copyOf(over);
-        List<PathEnd> ends = follow(flow, settings.frame(), Direction.FORWARD, longest, entering);
-        residence = ends.stream()
+        residence = follow(flow, settings.frame(), Direction.FORWARD, longest, entering).stream()
                 .mapToDouble(end -> end instanceof PathEnd.Left ? end.time() : Double.POSITIVE_INFINITY)
                 .toArray();
         medianResidence = median(residence);
-        List<Release> few = new ArrayList<>();
-        int every = Math.max(1, entering.size() / CLOCK_TRACERS);
-        for (int n = 0; n < entering.size(); n += every) {
-            few.add(entering.get(n));
-        }
-        clockMedian = median(follow(clock, steady, Direction.FORWARD, longest, few).stream()
-                .mapToDouble(end -> end instanceof PathEnd.Left ? end.time() : Double.POSITIVE_INFINITY)
-                .toArray());
     }
 
     private static double median(double[] values) {
@@ -133,10 +130,20 @@ final class HoldTest {
             sieve(flow, settings.frame(), direction, limit(), releases, stays, Stay.THROUGH);
         }
         for (Direction direction : Direction.values()) {
-            sieve(clock, steady, direction, settings.patience() * clockMedian, releases, stays, Stay.CREEPING);
+            sieve(clock, steady, direction, CLOCK_PART * limit(), releases, stays, Stay.CREEPING);
         }
         tracers += releases.size();
         return stays;
+    }
+
+    /** Where releases came from, followed back for a time. */
+    List<PathEnd> back(List<Release> releases, double time) {
+        return follow(flow, settings.frame(), Direction.BACKWARD, time, releases);
+    }
+
+    /** Error of a step with which held gas is followed. */
+    double tolerance() {
+        return tolerance;
     }
 
     private void sieve(
@@ -174,7 +181,7 @@ final class HoldTest {
         }
         ParallelTracing.Outcome outcome = ParallelTracing.follow(
                 by,
-                new TraceSettings(frame, direction, settings.tolerance(), limit),
+                new TraceSettings(frame, direction, tolerance, limit),
                 releases,
                 settings.threads(),
                 n -> {});

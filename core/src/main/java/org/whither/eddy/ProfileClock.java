@@ -6,8 +6,8 @@ import org.whither.film.Film;
 import org.whither.film.FilmFlow;
 
 /**
- * The same paths, timed by a clock that goes slower near the faces, as the gas does: where 1 s passes, it shows 6σ(1 − σ)
- * s. Gas that only creeps along a face because it sticks to it takes no longer by this clock than the gas beside it: in a
+ * The same paths, timed by a clock that goes slower near the faces, as the gas does: where 1 s passes, it shows 4σ(1 − σ)
+ * s, which is 1 s in the middle of the film. Gas that only creeps along a face because it sticks to it takes no longer by this clock than the gas beside it: in a
  * plain film, where a tracer at height σ takes t/(6σ(1 − σ)), all take the same. Gas that turns in a zone stays for ever
  * by either clock. Only in the frame in which the film is steady.
  */
@@ -38,7 +38,7 @@ final class ProfileClock implements FilmFlow {
     @Override
     public void rates(int i, int j, int k, double theta, double r, double sigma, double[] rates) {
         flow.rates(i, j, k, theta, r, sigma, rates);
-        double slow = 1 / Math.max(SLOWEST, 6 * sigma * (1 - sigma));
+        double slow = 1 / Math.max(SLOWEST, 4 * sigma * (1 - sigma));
         rates[0] *= slow;
         rates[1] *= slow;
         rates[2] *= slow;
