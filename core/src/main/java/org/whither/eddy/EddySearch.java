@@ -47,6 +47,8 @@ final class EddySearch {
         progress.accept(0.85);
         LongStayers longStayers = StayMap.longest(flow, settings, test, Eddies.LONGEST_SHARE);
         progress.accept(0.95);
+        StillPoints still = new StillPoints(flow);
+        still.find();
         List<String> notes = new ArrayList<>();
         if (test.failure() != null) {
             notes.add(String.format(
@@ -60,9 +62,10 @@ final class EddySearch {
         var wilson = new WilsonScoreInterval().createInterval(count, held.size(), 0.95);
         boolean known = search.settled() && !search.zones().isEmpty();
         double zones = search.zones().stream().mapToDouble(Zone::massShare).sum();
-        double scattered = search.small().stream().mapToDouble(SmallCluster::mass).sum()
-                * flow.film().grid().sectors()
-                / filmMass;
+        double scattered =
+                search.small().stream().mapToDouble(SmallCluster::mass).sum()
+                        * flow.film().grid().sectors()
+                        / filmMass;
         double low = search.zones().stream()
                 .mapToDouble(zone -> zone.massShare() * zone.massLow() / zone.mass())
                 .sum();
@@ -82,8 +85,8 @@ final class EddySearch {
                 ReversedFlow.of(flow),
                 search.zones(),
                 search.small(),
-                List.of(),
-                List.of(),
+                still.points(),
+                still.separatrices(),
                 longStayers,
                 search.settled(),
                 test.tracers(),

@@ -180,11 +180,7 @@ final class HoldTest {
             return List.of();
         }
         ParallelTracing.Outcome outcome = ParallelTracing.follow(
-                by,
-                new TraceSettings(frame, direction, tolerance, limit),
-                releases,
-                settings.threads(),
-                n -> {});
+                by, new TraceSettings(frame, direction, tolerance, limit), releases, settings.threads(), n -> {});
         steps += outcome.steps();
         return outcome.ends();
     }

@@ -157,12 +157,7 @@ final class Turning implements StepObserver {
             }
         }
         return new Turn(
-                sense,
-                (until - from) / whole,
-                winding.turns(),
-                middle,
-                new Place(mean[1], mean[2], mean[3]),
-                size);
+                sense, (until - from) / whole, winding.turns(), middle, new Place(mean[1], mean[2], mean[3]), size);
     }
 
     /** How far a sequence of points goes round a middle. */

@@ -100,9 +100,7 @@ final class ZoneSearch {
         Deque<Seed> seeds = new ArrayDeque<>();
         for (Clusters.Cluster cluster : Clusters.of(points, reach)) {
             seeds.add(new Seed(
-                    members(points, cluster),
-                    reach,
-                    cluster.members().length * filmMass / grid.sectors() / count));
+                    members(points, cluster), reach, cluster.members().length * filmMass / grid.sectors() / count));
         }
         while (!seeds.isEmpty()) {
             Seed seed = seeds.remove();
@@ -116,9 +114,7 @@ final class ZoneSearch {
     private double[] point(Release at) {
         spot.go(at.theta(), at.radius(), at.sigma());
         return new double[] {
-            spot.phase(),
-            (at.radius() - grid.innerRadius()) / (grid.outerRadius() - grid.innerRadius()),
-            at.sigma()
+            spot.phase(), (at.radius() - grid.innerRadius()) / (grid.outerRadius() - grid.innerRadius()), at.sigma()
         };
     }
 
@@ -212,10 +208,8 @@ final class ZoneSearch {
                     spot.goPhase(point[0], r, point[2]);
                     releases.add(new Release(spot.theta(), r, point[2], 0));
                     points.add(point);
-                    weights.add(spot.massDensity()
-                            * grid.pitch()
-                            * (grid.outerRadius() - grid.innerRadius())
-                            * volume());
+                    weights.add(
+                            spot.massDensity() * grid.pitch() * (grid.outerRadius() - grid.innerRadius()) * volume());
                 }
             }
             HoldTest.Stay[] stays = test.test(releases);
@@ -288,9 +282,15 @@ final class ZoneSearch {
         double[] to = new double[3];
         for (int c = 0; c < 3; c++) {
             int coordinate = c;
-            from[c] = Arrays.stream(seed.points()).mapToDouble(p -> p[coordinate]).min().orElseThrow()
+            from[c] = Arrays.stream(seed.points())
+                            .mapToDouble(p -> p[coordinate])
+                            .min()
+                            .orElseThrow()
                     - seed.reach()[c];
-            to[c] = Arrays.stream(seed.points()).mapToDouble(p -> p[coordinate]).max().orElseThrow()
+            to[c] = Arrays.stream(seed.points())
+                            .mapToDouble(p -> p[coordinate])
+                            .max()
+                            .orElseThrow()
                     + seed.reach()[c];
         }
         Box box = new Box(from, to);
@@ -442,11 +442,9 @@ final class ZoneSearch {
         Place at = start;
         for (int n = 0; n < 6; n++) {
             Optional<Turning.Turn> turn = Turning.watch(
-                    flow,
-                    turningTolerance(),
-                    new Release(at.theta(), at.radius(), at.sigma(), 0),
-                    2 * test.limit());
-            if (turn.isEmpty() || (best.isPresent() && turn.get().size() >= best.get().size())) {
+                    flow, turningTolerance(), new Release(at.theta(), at.radius(), at.sigma(), 0), 2 * test.limit());
+            if (turn.isEmpty()
+                    || (best.isPresent() && turn.get().size() >= best.get().size())) {
                 break;
             }
             best = turn;
@@ -462,10 +460,7 @@ final class ZoneSearch {
         for (int n = 0; n < TURNING; n++) {
             Place at = places.get((int) ((n + 0.5) / TURNING * places.size()));
             Optional<Turning.Turn> turn = Turning.watch(
-                    flow,
-                    turningTolerance(),
-                    new Release(at.theta(), at.radius(), at.sigma(), 0),
-                    2 * test.limit());
+                    flow, turningTolerance(), new Release(at.theta(), at.radius(), at.sigma(), 0), 2 * test.limit());
             if (turn.isPresent() && (centre == null || turn.get().sense() == centre.sense())) {
                 periods[seen++] = turn.get().period();
             }
