@@ -63,6 +63,7 @@ final class BatchTracer {
     private int ended;
 
     private List<Release> releases;
+    private StepWatcher watcher;
     private PathEnd[] ends;
     private PathMeasure[] measures;
 
@@ -83,6 +84,43 @@ final class BatchTracer {
         this.openStator = film.supply().isPresent() && film.supply().get().face() == Face.STATOR;
         this.perExtent = 1 / (settings.tolerance() * (grid.outerRadius() - grid.innerRadius()));
         this.perThickness = 1 / settings.tolerance();
+    }
+
+    /** Watches the steps of all tracers. */
+    @FunctionalInterface
+    interface StepWatcher {
+        /**
+         * Called once for each step that is kept; for one tracer in order of time.
+         *
+         * @param release number of the tracer's release
+         * @param step the step, as {@link PointFinder} keeps one; overwritten after the call
+         */
+        void step(int release, double[] step);
+    }
+
+    private final double[] watched = new double[PointFinder.STEP];
+
+    /** Has a watcher told of every step from now on. */
+    void watch(StepWatcher next) {
+        watcher = next;
+    }
+
+    private void tell(int lane, double tried, double fraction) {
+        watched[0] = time[lane];
+        watched[1] = tried;
+        watched[2] = fraction;
+        watched[3] = i[lane];
+        watched[4] = j[lane];
+        watched[5] = k[lane];
+        watched[6] = sectorsPassed[lane];
+        for (int n = 0; n < 3; n++) {
+            int at = PointFinder.EXTENSION_AT + n * DormandPrince54.EXTENSION;
+            watched[at] = number(Lanes.START + n, lane);
+            for (int power = 0; power < 4; power++) {
+                watched[at + 1 + power] = number(Lanes.POWER + 3 * power + n, lane);
+            }
+        }
+        watcher.step(release[lane], watched);
     }
 
     long steps() {
@@ -284,6 +322,9 @@ final class BatchTracer {
         int way = (int) number(Lanes.WAY, lane);
         if (measures != null) {
             measure(lane, fraction * tried);
+        }
+        if (watcher != null) {
+            tell(lane, tried, fraction);
         }
         time[lane] += fraction * tried;
         double left = settings.timeLimit() - time[lane];

@@ -69,7 +69,7 @@ public final class Tracer {
         this.stationaryTurn = frameSpeed;
         this.extent = grid.outerRadius() - grid.innerRadius();
         this.pitch = grid.pitch();
-        this.finder = new PointFinder(flow, settings.frame(), settings.direction());
+        this.finder = new PointFinder(flow, settings.frame(), settings.direction(), false);
         this.openRotor = film.supply().isPresent() && film.supply().get().face() == Face.ROTOR;
         this.openStator = film.supply().isPresent() && film.supply().get().face() == Face.STATOR;
     }

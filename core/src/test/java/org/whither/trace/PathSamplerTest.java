@@ -4,6 +4,8 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertInstanceOf;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import java.util.ArrayList;
+import java.util.List;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.EnumSource;
@@ -228,6 +230,69 @@ class PathSamplerTest {
             assertEquals(0, path.duration(), 1e-11);
             assertEquals(0, path.value(path.size() - 1, 0));
             assertEquals(1, path.value(0, 4), 1e-9);
+        }
+    }
+
+    /** Side by side the paths are the same to the tolerance, and none depends on those beside it. */
+    @Test
+    void sideBySide_areTheSamePaths() {
+        FilmFlow flow = new ConservingFlow(new WavyCase(16, 8, 8, 0.5).lubrication());
+        assertTrue(flow.packed().isPresent());
+        List<Release> releases = new ArrayList<>();
+        for (int n = 0; n < 40; n++) {
+            releases.add(new Release(0.9 * n, 0.055 + 0.0002 * n, 0.15 + 0.018 * n, 1));
+        }
+        for (PointSpacing spacing : new PointSpacing[] {new PointSpacing.Equal(21), new PointSpacing.Within(1e-3)}) {
+            PathSampler.Settings how = settings(Frame.STATIONARY, Course.BOTH, 1e-8, spacing);
+            List<SampledPath> together = new PathSampler(flow, how).follow(releases);
+            List<SampledPath> again = new PathSampler(flow, how, 3).follow(releases.subList(17, 40));
+            int less = 0;
+            for (int n = 0; n < 40; n++) {
+                SampledPath path = together.get(n);
+                SampledPath alone = new PathSampler(flow, how).follow(releases.get(n));
+                assertEquals(alone.duration(), path.duration(), 1e-5 * alone.duration());
+                assertEquals(alone.revolutions(), path.revolutions(), 1e-5);
+                if (spacing instanceof PointSpacing.Equal) {
+                    assertEquals(alone.size(), path.size());
+                    for (int point = 0; point < path.size(); point++) {
+                        assertEquals(alone.value(point, 1), path.value(point, 1), 1e-4);
+                        assertEquals(alone.value(point, 2), path.value(point, 2), 1e-6);
+                        assertEquals(alone.value(point, 3), path.value(point, 3), 1e-9);
+                        assertEquals(alone.value(point, 4), path.value(point, 4), 1e-4);
+                        assertEquals(alone.value(point, 5), path.value(point, 5), 1e-3 * alone.value(point, 5));
+                        assertEquals(alone.value(point, 6), path.value(point, 6), 1e-4 * alone.value(point, 6));
+                    }
+                } else {
+                    assertTrue(path.size() > 0.5 * alone.size() && path.size() < 2 * alone.size());
+                    less += path.size() - alone.size();
+                }
+                if (n >= 17) {
+                    SampledPath other = again.get(n - 17);
+                    assertEquals(path.size(), other.size());
+                    for (int v = 0; v < path.size() * SampledPath.COLUMNS; v++) {
+                        assertEquals(path.value(v / 7, v % 7), other.value(v / 7, v % 7));
+                    }
+                }
+            }
+            assertTrue(Math.abs(less) < 400, "about as many points: " + less);
+        }
+    }
+
+    @Test
+    void sideBySide_withinTolerance_keepNearThePath() {
+        FilmFlow flow = new ConservingFlow(new WavyCase(16, 8, 8, 0.5).lubrication());
+        List<Release> releases = List.of(new Release(0.1, 0.064, 0.31, 1), new Release(0.1, 0.056, 0.7, 1));
+        for (double tolerance : new double[] {1e-2, 1e-4}) {
+            List<SampledPath> few = new PathSampler(
+                            flow, settings(Frame.STATIONARY, Course.BOTH, 1e-8, new PointSpacing.Within(tolerance)))
+                    .follow(releases);
+            List<SampledPath> many = new PathSampler(
+                            flow, settings(Frame.STATIONARY, Course.BOTH, 1e-8, new PointSpacing.Equal(20001)))
+                    .follow(releases);
+            for (int n = 0; n < 2; n++) {
+                double worst = worst(few.get(n), many.get(n), flow);
+                assertTrue(worst <= tolerance && worst > 0.2 * tolerance, worst + " of " + tolerance);
+            }
         }
     }
 }

@@ -11,7 +11,6 @@ import java.util.function.DoubleConsumer;
 import org.whither.film.FilmFlow;
 import org.whither.trace.InOrder;
 import org.whither.trace.PathSampler;
-import org.whither.trace.Release;
 import org.whither.trace.SampledPath;
 
 /**
@@ -50,8 +49,8 @@ public record PathExport(
     /** Most paths in a scene. */
     public static final int MOST_PATHS_IN_SCENE = GltfOutput.MOST_PATHS;
 
-    /** Paths followed by one thread at a time; few enough to be spread well and to be held. */
-    private static final int PIECE = 16;
+    /** Paths followed by one thread at a time; few enough to be held, enough to be followed side by side. */
+    private static final int PIECE = 128;
 
     /**
      * Follows the tracers and writes their paths into a folder: {@code paths.json} and the files asked for.
@@ -121,8 +120,7 @@ public record PathExport(
         int from = piece * PIECE;
         PathSampler sampler = new PathSampler(flow, settings);
         List<EndedPath> paths = new ArrayList<>(PIECE);
-        for (Release release : releases.slice(from, Math.min(releases.count(), from + PIECE))) {
-            SampledPath path = sampler.follow(release);
+        for (SampledPath path : sampler.follow(releases.slice(from, Math.min(releases.count(), from + PIECE)))) {
             paths.add(new EndedPath(
                     from + paths.size(),
                     path,
