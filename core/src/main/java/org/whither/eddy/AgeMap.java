@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
 import java.util.function.DoubleConsumer;
+import java.util.stream.IntStream;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
 import org.whither.trace.Direction;
@@ -197,11 +198,24 @@ public final class AgeMap {
         return quantile(0, age.length, share);
     }
 
+    /** A quantile of the age of all gas at one radius, weighted by mass; as {@link #column}. */
+    public double ring(int q, double share) {
+        int[] those = new int[phases * heights];
+        for (int n = 0; n < those.length; n++) {
+            those[n] = index(n / heights, q, n % heights);
+        }
+        return quantile(those, share);
+    }
+
     private double quantile(int from, int to, double share) {
-        Integer[] order = new Integer[to - from];
+        return quantile(IntStream.range(from, to).toArray(), share);
+    }
+
+    private double quantile(int[] those, double share) {
+        Integer[] order = new Integer[those.length];
         double total = 0;
         int known = 0;
-        for (int n = from; n < to; n++) {
+        for (int n : those) {
             if (!Double.isNaN(age[n])) {
                 order[known++] = n;
                 total += mass[n];

@@ -20,7 +20,7 @@ class ArrowsTest {
     @Test
     void scan_house_findsAllModules() {
         assertTrue(HOUSE.size() > 100, "only " + HOUSE.size() + " classes were found");
-        for (String room : new String[] {"film", "trace", "fate", "render", "samples", "io"}) {
+        for (String room : new String[] {"film", "trace", "fate", "eddy", "render", "samples", "io"}) {
             assertTrue(
                     HOUSE.stream().anyMatch(found -> found.getPackageName().startsWith("org.whither." + room)), room);
         }
@@ -36,6 +36,8 @@ class ArrowsTest {
                 .definedBy("org.whither.trace..")
                 .layer("fate")
                 .definedBy("org.whither.fate..")
+                .layer("eddy")
+                .definedBy("org.whither.eddy..")
                 .layer("render")
                 .definedBy("org.whither.render..")
                 .layer("samples")
@@ -48,12 +50,14 @@ class ArrowsTest {
                 .mayOnlyAccessLayers("film")
                 .whereLayer("fate")
                 .mayOnlyAccessLayers("film", "trace")
-                .whereLayer("render")
+                .whereLayer("eddy")
                 .mayOnlyAccessLayers("film", "trace", "fate")
+                .whereLayer("render")
+                .mayOnlyAccessLayers("film", "trace", "fate", "eddy")
                 .whereLayer("samples")
                 .mayOnlyAccessLayers("film", "trace", "fate")
                 .whereLayer("io")
-                .mayOnlyAccessLayers("film", "trace", "fate", "render", "samples");
+                .mayOnlyAccessLayers("film", "trace", "fate", "eddy", "render", "samples");
         arrows.check(HOUSE);
     }
 
@@ -88,7 +92,8 @@ class ArrowsTest {
                 .check(HOUSE);
         noClasses()
                 .that()
-                .resideInAnyPackage("org.whither.film..", "org.whither.trace..", "org.whither.fate..")
+                .resideInAnyPackage(
+                        "org.whither.film..", "org.whither.trace..", "org.whither.fate..", "org.whither.eddy..")
                 .should()
                 .dependOnClassesThat()
                 .resideInAnyPackage("java.io..", "java.nio.file..", "java.awt..", "com.fasterxml..")

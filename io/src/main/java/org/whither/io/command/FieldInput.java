@@ -29,7 +29,8 @@ record FieldInput(Path file, String sha256, FilmFlow flow) {
         return read(field.file(), field.interpolation(), talk);
     }
 
-    private static FieldInput read(Path file, Interpolation interpolation, Talk talk) throws IOException {
+    /** Reads a field file with the interpolation asked for. */
+    static FieldInput read(Path file, Interpolation interpolation, Talk talk) throws IOException {
         try (Talk.Stretch stretch = talk.begin("Reading " + file.getFileName())) {
             FilmFlow flow = interpolation.of(FieldReader.read(file), file);
             stretch.accept(0.9);

@@ -43,6 +43,7 @@ import picocli.CommandLine.Spec;
             SplitCommand.class,
             PathsCommand.class,
             DrawCommand.class,
+            ReportCommand.class,
             SampleCommand.class
         })
 public final class Program implements Callable<Integer> {

@@ -7,6 +7,12 @@ import org.whither.film.Gas;
 public final class EngineerUnits {
     private static final double NORMAL_PRESSURE = 101_325;
     private static final double NORMAL_TEMPERATURE = 273.15;
+    /** 14.696 psia as the trade writes it; a pound-force is 4.4482216152605 N, an inch 0.0254 m (exact). */
+    private static final double STANDARD_PRESSURE = 14.696 * 4.4482216152605 / (0.0254 * 0.0254);
+    /** 60 °F. */
+    private static final double STANDARD_TEMPERATURE = (60 + 459.67) / 1.8;
+
+    private static final double CUBIC_FOOT = 0.3048 * 0.3048 * 0.3048;
 
     private EngineerUnits() {}
 
@@ -42,8 +48,31 @@ public final class EngineerUnits {
      * @param gas the gas
      */
     public static double normalLitresPerMinute(double massFlow, Gas gas) {
-        double density = NORMAL_PRESSURE * gas.molarMass() / (Gas.MOLAR_GAS_CONSTANT * NORMAL_TEMPERATURE);
-        return massFlow / density * 60_000;
+        return massFlow / density(NORMAL_PRESSURE, NORMAL_TEMPERATURE, gas) * 60_000;
+    }
+
+    /**
+     * Mass flow (kg/s) in standard cubic feet a minute, at 60 °F and 14.696 psia as an ideal gas.
+     *
+     * @param massFlow mass flow (kg/s)
+     * @param gas the gas
+     */
+    public static double standardCubicFeetPerMinute(double massFlow, Gas gas) {
+        return massFlow / density(STANDARD_PRESSURE, STANDARD_TEMPERATURE, gas) * 60 / CUBIC_FOOT;
+    }
+
+    private static double density(double pressure, double temperature, Gas gas) {
+        return pressure * gas.molarMass() / (Gas.MOLAR_GAS_CONSTANT * temperature);
+    }
+
+    /** Pressure (Pa) in bar. */
+    public static double bar(double pascal) {
+        return pascal / 1e5;
+    }
+
+    /** Rotation rate (rad/s) in revolutions a minute. */
+    public static double revolutionsPerMinute(double radiansPerSecond) {
+        return radiansPerSecond * 30 / Math.PI;
     }
 
     /** Mass flow (kg/s) in g/h and in Nl/min. */
@@ -57,7 +86,7 @@ public final class EngineerUnits {
     }
 
     /** Four digits of a value, without an exponent where that is readable. */
-    static String digits(double value) {
+    public static String digits(double value) {
         double size = Math.abs(value);
         if (size == 0) {
             return "0";

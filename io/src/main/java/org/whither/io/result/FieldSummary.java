@@ -94,17 +94,22 @@ public final class FieldSummary {
         } else if (!(balance.supplyIn() > 0)) {
             said.add("No gas enters through the feed.");
         }
-        double changed = flow.correction().map(Correction::share).orElse(0.0);
-        if (changed > DOUBTFUL_CORRECTION) {
-            said.add(String.format(
-                    Locale.ROOT,
-                    "The mass flows of the cells had to be changed by %.1f %% to balance: the %s in the file do not"
-                            + " satisfy continuity well.",
-                    100 * changed,
-                    film.field() instanceof FullField ? "velocities" : "pressure and the film thickness"));
-        }
+        correctionWarning(flow).ifPresent(said::add);
         said.addAll(validity.warnings());
         return said;
+    }
+
+    /** What must be said where the flows of a field had to be changed much to conserve mass. */
+    static Optional<String> correctionWarning(FilmFlow flow) {
+        double changed = flow.correction().map(Correction::share).orElse(0.0);
+        return changed > DOUBTFUL_CORRECTION
+                ? Optional.of(String.format(
+                        Locale.ROOT,
+                        "The mass flows of the cells had to be changed by %.1f %% to balance: the %s in the file do not"
+                                + " satisfy continuity well.",
+                        100 * changed,
+                        flow.film().field() instanceof FullField ? "velocities" : "pressure and the film thickness"))
+                : Optional.empty();
     }
 
     /** The summary in plain words and the engineer's units. */

@@ -42,7 +42,7 @@ public record SplitResult(
     private static final int COLUMNS = 120;
 
     /** How far the border flows close, as a share of the inflow, before the flows are balanced for tracing. */
-    private double closure() {
+    double closure() {
         return BorderBalance.closureOfField(flow, split.balance());
     }
 
@@ -57,7 +57,7 @@ public record SplitResult(
     }
 
     /** Whether the feed that the file names lets gas in; true where it names none. */
-    private boolean feedLetsGasIn() {
+    boolean feedLetsGasIn() {
         return flow.film().supply().isEmpty()
                 || split.balance().supplyIn()
                         > Split.NEGLIGIBLE * split.balance().inflow();
@@ -126,6 +126,7 @@ public record SplitResult(
                     100 * changed));
         }
         said.addAll(split.notes());
+        FieldSummary.correctionWarning(flow).ifPresent(said::add);
         said.addAll(Validity.of(flow).warnings());
         return said;
     }
@@ -190,7 +191,7 @@ public record SplitResult(
         return said;
     }
 
-    private double inflow(PathEnd.Border border) {
+    double inflow(PathEnd.Border border) {
         return switch (border) {
             case SUPPLY -> split.balance().supplyIn();
             case INNER -> split.balance().innerIn();
@@ -198,7 +199,7 @@ public record SplitResult(
         };
     }
 
-    private double leaving(PathEnd.Border border) {
+    double leaving(PathEnd.Border border) {
         return switch (border) {
             case SUPPLY -> split.balance().supplyOut();
             case INNER -> split.balance().innerOut();
@@ -459,67 +460,9 @@ public record SplitResult(
         line(s, rest.toString());
     }
 
-    /** The answer in one or two sentences. */
+    /** The answer in a sentence or two, as {@link Answer} words it. */
     public String answer() {
-        Film film = flow.film();
-        StringBuilder s = new StringBuilder();
-        Optional<SplitRow> inner = split.row(PathEnd.Border.SUPPLY, Destination.INNER);
-        Optional<SplitRow> outer = split.row(PathEnd.Border.SUPPLY, Destination.OUTER);
-        if (inner.isPresent() || outer.isPresent()) {
-            double half = Math.max(
-                    inner.map(row -> row.share().width()).orElse(0.0) / 2,
-                    outer.map(row -> row.share().width()).orElse(0.0) / 2);
-            s.append(String.format(
-                    Locale.ROOT,
-                    "Of every 100 kg of supply gas, %.1f leave to the %s (outer diameter) and %.1f to the %s (inner"
-                            + " diameter), ±%.1f.",
-                    100 * outer.map(row -> row.share().share()).orElse(0.0),
-                    film.conditions().outerSide(),
-                    100 * inner.map(row -> row.share().share()).orElse(0.0),
-                    film.conditions().innerSide(),
-                    Math.max(0.1, Math.ceil(1000 * half) / 10)));
-            split.row(PathEnd.Border.SUPPLY, Destination.SUPPLY)
-                    .ifPresent(row -> s.append(String.format(
-                            Locale.ROOT,
-                            " %.1f of them go back into the feed.",
-                            100 * row.share().share())));
-        } else {
-            s.append("No supply gas enters the film.");
-        }
-        s.append(' ').append(crossing());
-        return s.toString();
-    }
-
-    private String crossing() {
-        Film film = flow.film();
-        BorderBalance balance = split.balance();
-        if (balance.outerIn() <= 1e-9 * balance.inflow()) {
-            return String.format(
-                    Locale.ROOT,
-                    "No gas enters the film from the %s.",
-                    film.conditions().outerSide());
-        }
-        Optional<SplitRow> row = split.row(PathEnd.Border.OUTER, Destination.INNER);
-        String enters = String.format(
-                Locale.ROOT,
-                "%.4g g/h of gas enter the film from the %s;",
-                EngineerUnits.gramsPerHour(balance.outerIn()),
-                film.conditions().outerSide());
-        if (row.isEmpty() || row.get().share().share() == 0) {
-            return enters
-                    + String.format(
-                            Locale.ROOT,
-                            " none was found to reach the %s: less than %.2f %% of it.",
-                            film.conditions().innerSide(),
-                            100 * row.map(r -> r.share().high()).orElse(1.0));
-        }
-        return enters
-                + String.format(
-                        Locale.ROOT,
-                        " %.1f %% of it (%.4g g/h) REACHES THE %s.",
-                        100 * row.get().share().share(),
-                        EngineerUnits.gramsPerHour(row.get().massFlow()),
-                        film.conditions().innerSide().toUpperCase(Locale.ROOT));
+        return Answer.of(this);
     }
 
     private void rowText(StringBuilder s, SplitRow row, boolean backward) {

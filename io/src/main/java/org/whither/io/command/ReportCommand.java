@@ -1,0 +1,212 @@
+package org.whither.io.command;
+
+import com.fasterxml.jackson.databind.node.ObjectNode;
+import java.io.IOException;
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.time.ZonedDateTime;
+import java.util.List;
+import java.util.Locale;
+import java.util.Optional;
+import java.util.concurrent.Callable;
+import org.whither.eddy.AgeMap;
+import org.whither.fate.SplitSettings;
+import org.whither.io.file.WholeFolder;
+import org.whither.io.report.Comparison;
+import org.whither.io.report.ReportNumbers;
+import org.whither.io.report.ReportPage;
+import org.whither.io.report.ReportPicture;
+import org.whither.io.result.ResultJson;
+import org.whither.io.result.SplitResult;
+import org.whither.render.NoOpenGL;
+import picocli.CommandLine.Command;
+import picocli.CommandLine.Mixin;
+import picocli.CommandLine.Option;
+
+/** One page for the plant. */
+@Command(
+        name = "report",
+        mixinStandardHelpOptions = true,
+        versionProvider = Program.Version.class,
+        header = "Make one page that tells where the gas goes, how sure that is, and shows it.%n",
+        description = {
+            "Writes report.html, which holds everything in itself and prints on two pages A4, and its numbers as"
+                    + " report.json, into the folder. With --json and no --out it writes no file. Status 4 where the"
+                    + " wanted width or closure was not reached, or pictures could not be drawn; the page then says so.%n"
+        },
+        sortOptions = false)
+final class ReportCommand implements Callable<Integer> {
+    private static final int AGE_PHASES = 12;
+    private static final int AGE_RADII = 36;
+    private static final int AGE_HEIGHTS = 10;
+
+    @Mixin
+    private FieldParameter field;
+
+    @Option(
+            names = "--compare",
+            paramLabel = "OTHER",
+            description = "Set another field beside it, such as before and after, or at another speed, and tell the"
+                    + " differences in words.")
+    private Path other;
+
+    @Option(names = "--plain", description = "Leave out the tables for specialists.")
+    private boolean plain;
+
+    @Option(names = "--no-pictures", description = "Draw no pictures; charts stay.")
+    private boolean noPictures;
+
+    @Mixin
+    private FolderOption folder;
+
+    @Mixin
+    private TracingOptions tracing;
+
+    @Mixin
+    private Talk talk;
+
+    /** What is known of one field. */
+    private record Told(FieldInput input, SplitResult result, ObjectNode numbers) {}
+
+    @Override
+    public Integer call() throws IOException {
+        SplitSettings settings = tracing.split();
+        boolean files = folder.given() || !talk.json();
+        FieldInput input = FieldInput.read(field, talk);
+        Optional<FieldInput> beside =
+                other == null ? Optional.empty() : Optional.of(FieldInput.read(other, field.interpolation(), talk));
+        Path target = folder.or(input.defaultFolder());
+        if (files) {
+            WholeFolder.check(target);
+        }
+        Told a = tell(input, settings);
+        Optional<Told> b = Optional.empty();
+        if (beside.isPresent()) {
+            b = Optional.of(tell(beside.get(), settings));
+            Comparison.add(a.numbers(), b.get().numbers());
+        }
+        Optional<String> missing = files ? write(a, b, target) : Optional.empty();
+        if (talk.json()) {
+            talk.out().print(ResultJson.text(a.numbers()));
+            talk.out().flush();
+        }
+        say(a, b);
+        if (files) {
+            talk.say("The page: " + target.resolve("report.html"));
+        }
+        missing.ifPresent(talk::warn);
+        int status = Math.max(
+                SplitCommand.status(a.result()),
+                b.map(told -> SplitCommand.status(told.result())).orElse(ExitStatus.DONE));
+        return missing.isPresent() ? ExitStatus.SHORT_OF_WANTED : status;
+    }
+
+    private void say(Told a, Optional<Told> b) {
+        a.result().warnings().forEach(warning -> talk.say("Warning: " + warning));
+        talk.say(a.result().answer());
+        b.ifPresent(told -> {
+            talk.say("");
+            talk.say("B, " + told.input().title() + ":");
+            told.result().warnings().forEach(warning -> talk.say("Warning: " + warning));
+            talk.say(told.result().answer());
+            a.numbers()
+                    .at("/comparison/differences")
+                    .forEach(difference ->
+                            talk.say("- " + difference.get("words").asText()));
+        });
+    }
+
+    private Told tell(FieldInput input, SplitSettings settings) {
+        SplitResult result = SplitCommand.find(input, settings, talk);
+        return new Told(input, result, numbers(input, result, tracing, talk));
+    }
+
+    /** The numbers of a report: the split's, and what else the page tells. */
+    static ObjectNode numbers(FieldInput input, SplitResult result, TracingOptions tracing, Talk talk) {
+        try (Talk.Stretch stretch = talk.begin("Looking at the age of the gas")) {
+            AgeMap age = AgeMap.of(
+                    input.flow(),
+                    Pictures.settings(input.flow(), tracing.frame(), tracing.tolerance()),
+                    AGE_PHASES,
+                    AGE_RADII,
+                    AGE_HEIGHTS,
+                    tracing.threads(),
+                    stretch);
+            return ReportNumbers.of(result, Program.Version.number(), Optional.of(age), Optional.empty());
+        }
+    }
+
+    private Optional<String> write(Told a, Optional<Told> b, Path target) throws IOException {
+        List<ReportPicture> pictures = List.of();
+        Optional<String> missing = Optional.empty();
+        if (!noPictures) {
+            try (Talk.Stretch stretch = talk.begin("Drawing")) {
+                pictures = b.isPresent()
+                        ? ReportPictures.of(
+                                a.input(), a.result(), b.get().input(), b.get().result(), tracing, stretch)
+                        : ReportPictures.of(a.input(), a.result(), tracing, stretch);
+            } catch (NoOpenGL e) {
+                missing = Optional.of(e.getMessage());
+            }
+        }
+        ReportPage.Settings page = new ReportPage.Settings(
+                plain,
+                ZonedDateTime.now(),
+                words(a, b),
+                noPictures ? Optional.of("none were asked for.") : missing,
+                Optional.empty());
+        List<ReportPicture> drawn = pictures;
+        WholeFolder.add(target, into -> write(a.numbers(), drawn, page, into));
+        return missing;
+    }
+
+    private static void write(ObjectNode numbers, List<ReportPicture> pictures, ReportPage.Settings page, Path into)
+            throws IOException {
+        Files.writeString(into.resolve("report.json"), ResultJson.text(numbers));
+        Files.writeString(into.resolve("report.html"), ReportPage.of(numbers, pictures, page));
+    }
+
+    /** Writes the report of a field whose split is known; tells in a sentence why there are no pictures, if so. */
+    static Optional<String> write(FieldInput input, SplitResult result, TracingOptions tracing, Talk talk, Path into)
+            throws IOException {
+        ReportCommand command = new ReportCommand();
+        command.tracing = tracing;
+        command.talk = talk;
+        ObjectNode numbers = numbers(input, result, tracing, talk);
+        List<ReportPicture> pictures = List.of();
+        Optional<String> missing = Optional.empty();
+        try (Talk.Stretch stretch = talk.begin("Drawing the report")) {
+            pictures = ReportPictures.of(input, result, tracing, stretch);
+        } catch (NoOpenGL e) {
+            missing = Optional.of(e.getMessage());
+        }
+        Told told = new Told(input, result, numbers);
+        write(
+                numbers,
+                pictures,
+                new ReportPage.Settings(
+                        false, ZonedDateTime.now(), command.words(told, Optional.empty()), missing, Optional.empty()),
+                into);
+        return missing;
+    }
+
+    /** The command line that makes the same report again, without the folders of the fields. */
+    private String words(Told a, Optional<Told> b) {
+        SplitResult result = a.result();
+        StringBuilder words = new StringBuilder("whither report ").append(quoted(result.file()));
+        b.ifPresent(
+                told -> words.append(" --compare ").append(quoted(told.result().file())));
+        words.append(plain ? " --plain" : "");
+        words.append(noPictures ? " --no-pictures" : "");
+        words.append(" --interpolation ").append(result.flow().interpolation());
+        words.append(" --frame ").append(result.settings().frame().name().toLowerCase(Locale.ROOT));
+        words.append(" --tolerance ").append(result.settings().tolerance());
+        words.append(" --width ").append(result.settings().width());
+        words.append(" --seed ").append(result.settings().seed());
+        return words.toString();
+    }
+
+    private static String quoted(String name) {
+        return name.matches("[\\w.+-]+") ? name : "'" + name.replace("'", "'\\''") + "'";
+    }
+}
