@@ -47,6 +47,11 @@ public final class ConservingFlow implements FilmFlow {
      * @throws IllegalArgumentException where its field is a {@link FullField} and its faces are not given at the nodes
      */
     public ConservingFlow(Film film) {
+        this(film, FaceProfiles.MOST_KEPT);
+    }
+
+    /** As {@link #ConservingFlow(Film)}, with the most bytes that profiles across the film may be kept in. */
+    ConservingFlow(Film film, long mostKept) {
         this.film = film;
         this.grid = film.grid();
         this.nodalThickness = film.faces().at() == Location.NODE;
@@ -58,11 +63,11 @@ public final class ConservingFlow implements FilmFlow {
         leanRadial = new double[dragRotor.length];
         bendRadial = new double[dragRotor.length];
         if (film.field() instanceof FullField full) {
-            NodalFlow nodal = new NodalFlow(film);
+            NodalFluxes nodal = new NodalFluxes(film);
             Levels atLevels = new Levels(film);
             gas = atLevels;
             drag(rotor, stator);
-            profiles = new FaceProfiles(nodal, atLevels, rotor, stator);
+            profiles = new FaceProfiles(film, nodal, atLevels, rotor, stator, mostKept);
             levels = new double[full.nk()];
             for (int k = 0; k < levels.length; k++) {
                 levels[k] = full.sigma(k);
@@ -78,6 +83,26 @@ public final class ConservingFlow implements FilmFlow {
         }
     }
 
+    /**
+     * Memory that the motion of a film takes, beside the film itself, when it is made and laid out for tracing: the
+     * packed numbers, profiles across the film where they are kept, and some forty numbers a node of the face, most of
+     * them while the flows are balanced.
+     *
+     * @param film a film
+     * @return bytes
+     */
+    public static long heap(Film film) {
+        long nodes = film.grid().nodes();
+        long face = 40L * Double.BYTES * nodes;
+        if (!(film.field() instanceof FullField full)) {
+            return face + nodes * PackedFlow.bytesPerNode(2, false);
+        }
+        long profiles = FaceProfiles.bytes(film.grid(), full.nk());
+        return face
+                + (profiles <= FaceProfiles.MOST_KEPT ? profiles : 0)
+                + nodes * PackedFlow.bytesPerNode(full.nk(), full.hasDensity() || full.hasTemperature());
+    }
+
     private void drag(double rotor, double stator) {
         for (int i = 0; i < grid.ni(); i++) {
             for (int j = 0; j < grid.cellsRadial(); j++) {
@@ -91,7 +116,7 @@ public final class ConservingFlow implements FilmFlow {
     }
 
     /** Balances the column flows of the profiles, and makes the profiles carry them. */
-    private ColumnFlows balanced(NodalFlow nodal) {
+    private ColumnFlows balanced(NodalFluxes nodal) {
         int ncj = grid.cellsRadial();
         double[] theta = new double[grid.ni() * ncj];
         double[] radial = new double[grid.cellsTheta() * grid.nj()];
@@ -187,20 +212,22 @@ public final class ConservingFlow implements FilmFlow {
         } else {
             double thick = levels[k + 1] - levels[k];
             double c = (sigma - levels[k]) / thick;
-            double[] around = profiles.theta();
-            double[] out = profiles.radial();
+            double[] around0 = profiles.theta(i, j);
+            double[] around1 = profiles.theta(i + 1, j);
+            double[] out0 = profiles.radial(i, j);
+            double[] out1 = profiles.radial(i, j + 1);
             int at0 = profiles.thetaPiece(i, j, k);
             int at1 = profiles.thetaPiece(i + 1, j, k);
             int atInner = profiles.radialPiece(i, j, k);
             int atOuter = profiles.radialPiece(i, j + 1, k);
-            driven0 = FaceProfiles.density(around, at0, c, thick);
-            driven1 = FaceProfiles.density(around, at1, c, thick);
-            inner = FaceProfiles.density(out, atInner, c, thick);
-            outer = FaceProfiles.density(out, atOuter, c, thick);
-            spread += FaceProfiles.below(around, at1, c, thick)
-                    - FaceProfiles.below(around, at0, c, thick)
-                    + FaceProfiles.below(out, atOuter, c, thick)
-                    - FaceProfiles.below(out, atInner, c, thick);
+            driven0 = FaceProfiles.density(around0, at0, c, thick);
+            driven1 = FaceProfiles.density(around1, at1, c, thick);
+            inner = FaceProfiles.density(out0, atInner, c, thick);
+            outer = FaceProfiles.density(out1, atOuter, c, thick);
+            spread += FaceProfiles.below(around1, at1, c, thick)
+                    - FaceProfiles.below(around0, at0, c, thick)
+                    + FaceProfiles.below(out1, atOuter, c, thick)
+                    - FaceProfiles.below(out0, atInner, c, thick);
         }
 
         double bCentre = 2 * b - 1;

@@ -1,5 +1,6 @@
 package org.whither.film;
 
+import java.util.stream.IntStream;
 import org.apache.commons.math3.linear.Array2DRowRealMatrix;
 import org.apache.commons.math3.linear.LUDecomposition;
 import org.apache.commons.math3.linear.RealMatrix;
@@ -18,61 +19,121 @@ import org.apache.commons.math3.linear.RealMatrix;
 final class FaceProfiles {
     private static final int NUMBERS = 3;
 
+    /** Profiles of more bytes than this are not kept but formed anew where they are asked for. */
+    static final long MOST_KEPT = 256L << 20;
+
+    /** Faces whose profiles a thread remembers where they are not kept; a power of 2. */
+    private static final int REMEMBERED_BITS = 8;
+
     private final FilmGrid grid;
+    private final NodalFluxes fluxes;
+    private final Levels levels;
+    private final RingFaces faces;
+    private final double rotorSpeed;
+    private final double statorSpeed;
     private final double[] sigma;
+    private final double[][] spline;
     private final int stride;
+    /** All numbers of the faces, or null where there are too many to be kept. */
     private final double[] theta;
+
     private final double[] radial;
+    /** Flow of the whole column by the nodes, and, once carried, what was added to it (kg/s). */
+    private final double[] addedTheta;
+
+    private final double[] addedRadial;
+    private final ThreadLocal<Recent> recentTheta = ThreadLocal.withInitial(Recent::new);
+    private final ThreadLocal<Recent> recentRadial = ThreadLocal.withInitial(Recent::new);
+
+    /** Profiles that a thread has lately asked for. */
+    private static final class Recent {
+        private final int[] faces = new int[1 << REMEMBERED_BITS];
+        private final double[][] numbers = new double[1 << REMEMBERED_BITS][];
+
+        /** Where a face is remembered, if it is. */
+        private static int place(int face) {
+            return (face * 0x9E3779B1) >>> (Integer.SIZE - REMEMBERED_BITS);
+        }
+    }
 
     /**
      * Profiles from the nodal fluxes.
      *
-     * @param nodal the nodal fluxes, seen from the frame in which the film is steady
+     * @param film the film
+     * @param fluxes its nodal fluxes, seen from the frame in which the film is steady
      * @param levels its density
      * @param rotorSpeed speed of the rotor in that frame (rad/s)
      * @param statorSpeed speed of the stator in that frame (rad/s)
+     * @param mostKept the most bytes that profiles may be kept in
      */
-    FaceProfiles(NodalFlow nodal, Levels levels, double rotorSpeed, double statorSpeed) {
-        grid = nodal.film().grid();
-        RingFaces faces = nodal.film().faces();
-        sigma = new double[nodal.layers() + 1];
+    FaceProfiles(Film film, NodalFluxes fluxes, Levels levels, double rotorSpeed, double statorSpeed, long mostKept) {
+        grid = film.grid();
+        faces = film.faces();
+        this.fluxes = fluxes;
+        this.levels = levels;
+        this.rotorSpeed = rotorSpeed;
+        this.statorSpeed = statorSpeed;
+        FullField field = (FullField) film.field();
+        sigma = new double[field.nk()];
         for (int k = 0; k < sigma.length; k++) {
-            sigma[k] = nodal.level(k);
+            sigma[k] = field.sigma(k);
         }
         stride = NUMBERS * sigma.length;
-        double[][] spline = secondDerivatives(sigma);
-        double[] density = new double[sigma.length];
-        theta = new double[grid.ni() * grid.cellsRadial() * stride];
-        for (int i = 0; i < grid.ni(); i++) {
-            int line = i % grid.cellsTheta();
+        spline = secondDerivatives(sigma);
+        addedTheta = new double[grid.ni() * grid.cellsRadial()];
+        addedRadial = new double[grid.cellsTheta() * grid.nj()];
+        boolean kept = bytes(grid, sigma.length) <= mostKept;
+        theta = kept ? new double[addedTheta.length * stride] : null;
+        radial = kept ? new double[addedRadial.length * stride] : null;
+        IntStream.range(0, grid.ni()).parallel().forEach(i -> {
+            double[] one = kept ? null : new double[stride];
             for (int j = 0; j < grid.cellsRadial(); j++) {
-                int start = grid.node(line, j);
-                double slope = grid.lineSlope(line, j);
-                double half = 0.5 * (grid.radius(j + 1) - grid.radius(j));
-                double drag = levels.columnDensity(start) * faces.thickness(start) * grid.radius(j)
-                        + levels.columnDensity(start + 1) * faces.thickness(start + 1) * grid.radius(j + 1);
-                for (int k = 0; k < sigma.length; k++) {
-                    double turning = (1 - sigma[k]) * rotorSpeed + sigma[k] * statorSpeed;
-                    double through = nodal.fluxTheta(start, k)
-                            + nodal.fluxTheta(start + 1, k)
-                            - slope * (nodal.fluxRadial(start, k) + nodal.fluxRadial(start + 1, k));
-                    density[k] = half * (through - drag * turning);
-                }
-                fill(theta, thetaPiece(i, j, 0), density, spline);
+                int face = thetaFace(i, j);
+                int at = kept ? face * stride : 0;
+                formTheta(i, j, kept ? theta : one, at);
+                addedTheta[face] = (kept ? theta : one)[at + stride - NUMBERS];
             }
-        }
-        radial = new double[grid.cellsTheta() * grid.nj() * stride];
-        for (int i = 0; i < grid.cellsTheta(); i++) {
-            for (int j = 0; j < grid.nj(); j++) {
-                double half = 0.5 * (grid.theta(i + 1, j) - grid.theta(i, j));
-                int start = grid.node(i, j);
-                int end = grid.node((i + 1) % grid.cellsTheta(), j);
-                for (int k = 0; k < sigma.length; k++) {
-                    density[k] = half * (nodal.fluxRadial(start, k) + nodal.fluxRadial(end, k));
-                }
-                fill(radial, radialPiece(i, j, 0), density, spline);
+            for (int j = 0; j < grid.nj() && i < grid.cellsTheta(); j++) {
+                int face = radialFace(i, j);
+                int at = kept ? face * stride : 0;
+                formRadial(i, j, kept ? radial : one, at);
+                addedRadial[face] = (kept ? radial : one)[at + stride - NUMBERS];
             }
+        });
+    }
+
+    /** Memory that the profiles of a grid take where they are kept (bytes). */
+    static long bytes(FilmGrid grid, int nk) {
+        long faces = (long) grid.ni() * grid.cellsRadial() + (long) grid.cellsTheta() * grid.nj();
+        return faces * nk * NUMBERS * Double.BYTES;
+    }
+
+    private void formTheta(int i, int j, double[] into, int at) {
+        double[] density = new double[sigma.length];
+        int line = i % grid.cellsTheta();
+        int start = grid.node(line, j);
+        double slope = grid.lineSlope(line, j);
+        double half = 0.5 * (grid.radius(j + 1) - grid.radius(j));
+        double drag = levels.columnDensity(start) * faces.thickness(start) * grid.radius(j)
+                + levels.columnDensity(start + 1) * faces.thickness(start + 1) * grid.radius(j + 1);
+        for (int k = 0; k < sigma.length; k++) {
+            double turning = (1 - sigma[k]) * rotorSpeed + sigma[k] * statorSpeed;
+            double through = fluxes.theta(line, j, k)
+                    + fluxes.theta(line, j + 1, k)
+                    - slope * (fluxes.radial(line, j, k) + fluxes.radial(line, j + 1, k));
+            density[k] = half * (through - drag * turning);
         }
+        fill(into, at, density);
+    }
+
+    private void formRadial(int i, int j, double[] into, int at) {
+        double[] density = new double[sigma.length];
+        double half = 0.5 * (grid.theta(i + 1, j) - grid.theta(i, j));
+        int end = (i + 1) % grid.cellsTheta();
+        for (int k = 0; k < sigma.length; k++) {
+            density[k] = half * (fluxes.radial(i, j, k) + fluxes.radial(end, j, k));
+        }
+        fill(into, at, density);
     }
 
     /** The matrix that takes values at the levels to a sixth of the second derivatives of their spline. */
@@ -110,7 +171,7 @@ final class FaceProfiles {
         }
     }
 
-    private void fill(double[] profiles, int at, double[] density, double[][] spline) {
+    private void fill(double[] profiles, int at, double[] density) {
         for (int k = 0; k < density.length; k++) {
             double second = 0;
             for (int n = 0; n < density.length; n++) {
@@ -129,72 +190,114 @@ final class FaceProfiles {
         }
     }
 
-    /** Where the numbers of layer k of constant-i face (i, j) begin in {@link #theta()}. */
+    private int thetaFace(int i, int j) {
+        return i * (grid.nj() - 1) + j;
+    }
+
+    private int radialFace(int i, int j) {
+        return i * grid.nj() + j;
+    }
+
+    /** An array that holds the numbers of constant-i face (i, j), from {@link #thetaPiece} on. */
+    double[] theta(int i, int j) {
+        if (theta != null) {
+            return theta;
+        }
+        int face = thetaFace(i, j);
+        Recent recent = recentTheta.get();
+        int place = Recent.place(face);
+        if (recent.numbers[place] == null || recent.faces[place] != face) {
+            double[] numbers = new double[stride];
+            formTheta(i, j, numbers, 0);
+            add(numbers, 0, addedTheta[face]);
+            recent.numbers[place] = numbers;
+            recent.faces[place] = face;
+        }
+        return recent.numbers[place];
+    }
+
+    /** An array that holds the numbers of constant-j face (i, j), from {@link #radialPiece} on. */
+    double[] radial(int i, int j) {
+        if (radial != null) {
+            return radial;
+        }
+        int face = radialFace(i, j);
+        Recent recent = recentRadial.get();
+        int place = Recent.place(face);
+        if (recent.numbers[place] == null || recent.faces[place] != face) {
+            double[] numbers = new double[stride];
+            formRadial(i, j, numbers, 0);
+            add(numbers, 0, addedRadial[face]);
+            recent.numbers[place] = numbers;
+            recent.faces[place] = face;
+        }
+        return recent.numbers[place];
+    }
+
+    /** Where the numbers of layer k of constant-i face (i, j) begin in {@link #theta(int, int)}. */
     int thetaPiece(int i, int j, int k) {
-        return (i * (grid.nj() - 1) + j) * stride + NUMBERS * k;
+        return (theta == null ? 0 : thetaFace(i, j) * stride) + NUMBERS * k;
     }
 
-    /** Where the numbers of layer k of constant-j face (i, j) begin in {@link #radial()}. */
+    /** Where the numbers of layer k of constant-j face (i, j) begin in {@link #radial(int, int)}. */
     int radialPiece(int i, int j, int k) {
-        return (i * grid.nj() + j) * stride + NUMBERS * k;
-    }
-
-    /** All numbers of the constant-i faces. */
-    double[] theta() {
-        return theta;
-    }
-
-    /** All numbers of the constant-j faces. */
-    double[] radial() {
-        return radial;
+        return (radial == null ? 0 : radialFace(i, j) * stride) + NUMBERS * k;
     }
 
     /** Flow density of constant-i face (i, j) at level k, without what the faces drag along (kg/s). */
     double thetaAt(int i, int j, int k) {
-        return theta[thetaPiece(i, j, k) + 1];
+        return theta(i, j)[thetaPiece(i, j, k) + 1];
     }
 
     /** A sixth of its second derivative (kg/s). */
     double thetaBend(int i, int j, int k) {
-        return theta[thetaPiece(i, j, k) + 2];
+        return theta(i, j)[thetaPiece(i, j, k) + 2];
     }
 
     /** Flow density of constant-j face (i, j) at level k (kg/s). */
     double radialAt(int i, int j, int k) {
-        return radial[radialPiece(i, j, k) + 1];
+        return radial(i, j)[radialPiece(i, j, k) + 1];
     }
 
     /** A sixth of its second derivative (kg/s). */
     double radialBend(int i, int j, int k) {
-        return radial[radialPiece(i, j, k) + 2];
+        return radial(i, j)[radialPiece(i, j, k) + 2];
     }
 
     /** What leaves cell (i, j) below level k less what enters, without what the faces drag along (kg/s). */
     double spread(int i, int j, int k) {
-        return theta[thetaPiece(i + 1, j, k)]
-                - theta[thetaPiece(i, j, k)]
-                + radial[radialPiece(i, j + 1, k)]
-                - radial[radialPiece(i, j, k)];
+        return theta(i + 1, j)[thetaPiece(i + 1, j, k)]
+                - theta(i, j)[thetaPiece(i, j, k)]
+                + radial(i, j + 1)[radialPiece(i, j + 1, k)]
+                - radial(i, j)[radialPiece(i, j, k)];
     }
 
-    /** Flow of the whole column in the profile of constant-i face (i, j) (kg/s). */
+    /** Flow of the whole column of constant-i face (i, j) by the nodes (kg/s); to be asked before it is carried. */
     double thetaTotal(int i, int j) {
-        return theta[thetaPiece(i, j, sigma.length - 1)];
+        return addedTheta[thetaFace(i, j)];
     }
 
-    /** Flow of the whole column in the profile of constant-j face (i, j) (kg/s). */
+    /** Flow of the whole column of constant-j face (i, j) by the nodes (kg/s); to be asked before it is carried. */
     double radialTotal(int i, int j) {
-        return radial[radialPiece(i, j, sigma.length - 1)];
+        return addedRadial[radialFace(i, j)];
     }
 
-    /** Makes the profile of constant-i face (i, j) carry a total, the difference spread as a parabola (kg/s). */
+    /** Makes the profile of constant-i face (i, j) carry a total, the difference spread as a parabola (kg/s); once. */
     void carryTheta(int i, int j, double total) {
-        add(theta, thetaPiece(i, j, 0), total - thetaTotal(i, j));
+        int face = thetaFace(i, j);
+        addedTheta[face] = total - addedTheta[face];
+        if (theta != null) {
+            add(theta, face * stride, addedTheta[face]);
+        }
     }
 
-    /** Makes the profile of constant-j face (i, j) carry a total, the difference spread as a parabola (kg/s). */
+    /** Makes the profile of constant-j face (i, j) carry a total, the difference spread as a parabola (kg/s); once. */
     void carryRadial(int i, int j, double total) {
-        add(radial, radialPiece(i, j, 0), total - radialTotal(i, j));
+        int face = radialFace(i, j);
+        addedRadial[face] = total - addedRadial[face];
+        if (radial != null) {
+            add(radial, face * stride, addedRadial[face]);
+        }
     }
 
     private void add(double[] profiles, int at, double flow) {
@@ -213,7 +316,7 @@ final class FaceProfiles {
             k++;
         }
         double thick = sigma[k + 1] - sigma[k];
-        return below(radial, radialPiece(i, j, k), (height - sigma[k]) / thick, thick);
+        return below(radial(i, j), radialPiece(i, j, k), (height - sigma[k]) / thick, thick);
     }
 
     /**

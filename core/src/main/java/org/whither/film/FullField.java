@@ -1,17 +1,18 @@
 package org.whither.film;
 
 /**
- * The field of a flow solver: pressure and velocity at the nodes of the grid and at levels across the film. Arrays are
- * ni × nj × nk, row-major, and are kept without a copy, since they may fill most of the memory: nobody may change them.
+ * The field of a flow solver: pressure and velocity at the nodes of the grid and at levels across the film. Values are
+ * ni × nj × nk, row-major, and are kept without a copy, since they may fill most of the memory.
  */
 public final class FullField implements FieldData {
     private final double[] sigma;
-    private final double[] pressure;
-    private final double[] velocityR;
-    private final double[] velocityTheta;
-    private final double[] velocityZ;
-    private final double[] density;
-    private final double[] temperature;
+    private final Values pressure;
+    private final Values velocityR;
+    private final Values velocityTheta;
+    private final Values velocityZ;
+    private final Values density;
+    private final Values temperature;
+    private final boolean constantAcross;
 
     /**
      * A full field.
@@ -26,12 +27,12 @@ public final class FullField implements FieldData {
      */
     public FullField(
             double[] sigma,
-            double[] pressure,
-            double[] velocityR,
-            double[] velocityTheta,
-            double[] velocityZ,
-            double[] density,
-            double[] temperature) {
+            Values pressure,
+            Values velocityR,
+            Values velocityTheta,
+            Values velocityZ,
+            Values density,
+            Values temperature) {
         this.sigma = sigma.clone();
         this.pressure = pressure;
         this.velocityR = velocityR;
@@ -39,6 +40,26 @@ public final class FullField implements FieldData {
         this.velocityZ = velocityZ;
         this.density = density;
         this.temperature = temperature;
+        this.constantAcross = pressure.size() != velocityR.size();
+    }
+
+    /** The same from arrays, which are kept. */
+    public FullField(
+            double[] sigma,
+            double[] pressure,
+            double[] velocityR,
+            double[] velocityTheta,
+            double[] velocityZ,
+            double[] density,
+            double[] temperature) {
+        this(
+                sigma,
+                Values.of(pressure),
+                Values.of(velocityR),
+                Values.of(velocityTheta),
+                Values.of(velocityZ),
+                density == null ? null : Values.of(density),
+                temperature == null ? null : Values.of(temperature));
     }
 
     /** Number of levels across the film. */
@@ -53,27 +74,27 @@ public final class FullField implements FieldData {
 
     /** Whether the pressure is given once a column rather than at each level. */
     public boolean pressureConstantAcrossFilm() {
-        return pressure.length != velocityR.length;
+        return constantAcross;
     }
 
     /** Absolute pressure at a node index and level (Pa). */
     public double pressure(int node, int k) {
-        return pressureConstantAcrossFilm() ? pressure[node] : pressure[node * sigma.length + k];
+        return pressure.at(constantAcross ? node : node * sigma.length + k);
     }
 
     /** Radial velocity at a node index and level (m/s). */
     public double velocityR(int node, int k) {
-        return velocityR[node * sigma.length + k];
+        return velocityR.at(node * sigma.length + k);
     }
 
     /** Circumferential velocity in the film's velocity frame at a node index and level (m/s). */
     public double velocityTheta(int node, int k) {
-        return velocityTheta[node * sigma.length + k];
+        return velocityTheta.at(node * sigma.length + k);
     }
 
     /** Velocity along the shaft at a node index and level (m/s). */
     public double velocityZ(int node, int k) {
-        return velocityZ[node * sigma.length + k];
+        return velocityZ.at(node * sigma.length + k);
     }
 
     /** Whether the solver gave a temperature. */
@@ -88,7 +109,7 @@ public final class FullField implements FieldData {
 
     /** Temperature at a node index and level (K); only where {@link #hasTemperature}. */
     public double temperature(int node, int k) {
-        return temperature[node * sigma.length + k];
+        return temperature.at(node * sigma.length + k);
     }
 
     /**
@@ -102,9 +123,9 @@ public final class FullField implements FieldData {
      */
     public double density(int node, int k, Gas gas, double filmTemperature) {
         if (density != null) {
-            return density[node * sigma.length + k];
+            return density.at(node * sigma.length + k);
         }
-        double t = temperature == null ? filmTemperature : temperature[node * sigma.length + k];
+        double t = temperature == null ? filmTemperature : temperature.at(node * sigma.length + k);
         return gas.density(pressure(node, k), t);
     }
 }

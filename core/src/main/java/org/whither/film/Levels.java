@@ -1,6 +1,8 @@
 package org.whither.film;
 
-/** Pressure and density of a full field, at the nodes and levels. */
+import java.util.stream.IntStream;
+
+/** Pressure and density of a full field, at the nodes and levels; nothing is kept of it that the field has. */
 final class Levels implements GasState {
     private final FilmGrid grid;
     private final RingFaces faces;
@@ -8,14 +10,8 @@ final class Levels implements GasState {
     private final int nk;
     private final boolean gasLaw;
     private final double densityOverPressure;
-    /** nodes × nk, or one value a node where the pressure is constant across the film. */
-    private final double[] pressureSquare;
-
-    private final int pressureStride;
-    /** Likewise; the array of the pressures where the gas law at one temperature gives the density. */
-    private final double[] densitySquare;
-
-    private final int densityStride;
+    private final Gas gas;
+    private final double temperature;
     private final double[] meanSquare;
 
     Levels(Film film) {
@@ -23,45 +19,53 @@ final class Levels implements GasState {
         faces = film.faces();
         field = (FullField) film.field();
         nk = field.nk();
-        double temperature = film.conditions().temperature();
-        densityOverPressure = film.gas().density(1, temperature);
-        pressureStride = field.pressureConstantAcrossFilm() ? 1 : nk;
-        pressureSquare = new double[grid.nodes() * pressureStride];
+        gas = film.gas();
+        temperature = film.conditions().temperature();
+        densityOverPressure = gas.density(1, temperature);
         gasLaw = !field.hasDensity() && !field.hasTemperature();
-        densityStride = gasLaw ? pressureStride : nk;
-        densitySquare = gasLaw ? pressureSquare : new double[grid.nodes() * nk];
         meanSquare = new double[grid.nodes()];
-        for (int node = 0; node < grid.nodes(); node++) {
-            for (int k = 0; k < pressureStride; k++) {
-                pressureSquare[node * pressureStride + k] = square(field.pressure(node, k));
-            }
-            double mean = 0;
-            double before = field.density(node, 0, film.gas(), temperature);
-            for (int k = 0; k < nk; k++) {
-                double rho = field.density(node, k, film.gas(), temperature);
-                if (!gasLaw) {
-                    densitySquare[node * nk + k] = square(rho);
+        IntStream.range(0, grid.ni()).parallel().forEach(i -> {
+            for (int node = grid.node(i, 0); node < grid.node(i + 1, 0); node++) {
+                double mean = 0;
+                double before = field.density(node, 0, gas, temperature);
+                for (int k = 1; k < nk; k++) {
+                    double rho = field.density(node, k, gas, temperature);
+                    mean += 0.5 * (before + rho) * (field.sigma(k) - field.sigma(k - 1));
+                    before = rho;
                 }
-                mean += k == 0 ? 0 : 0.5 * (before + rho) * (field.sigma(k) - field.sigma(k - 1));
-                before = rho;
+                meanSquare[node] = square(mean);
             }
-            meanSquare[node] = square(mean);
-        }
+        });
     }
 
     private static double square(double x) {
         return x * x;
     }
 
+    private double pressureSquare(int node, int k) {
+        return square(field.pressure(node, k));
+    }
+
+    private double densitySquare(int node, int k) {
+        return square(field.density(node, k, gas, temperature));
+    }
+
     @Override
     public double pressure(int i, int j, int k, double a, double b, double sigma) {
-        return Math.sqrt(interpolate(pressureSquare, pressureStride, i, j, k, a, b, sigma));
+        if (field.pressureConstantAcrossFilm()) {
+            return Math.sqrt(pressurePlane(i, j, k, a, b));
+        }
+        double c = (sigma - field.sigma(k)) / (field.sigma(k + 1) - field.sigma(k));
+        return Math.sqrt((1 - c) * pressurePlane(i, j, k, a, b) + c * pressurePlane(i, j, k + 1, a, b));
     }
 
     @Override
     public double density(int i, int j, int k, double a, double b, double sigma) {
-        double root = Math.sqrt(interpolate(densitySquare, densityStride, i, j, k, a, b, sigma));
-        return gasLaw ? densityOverPressure * root : root;
+        if (gasLaw) {
+            return densityOverPressure * pressure(i, j, k, a, b, sigma);
+        }
+        double c = (sigma - field.sigma(k)) / (field.sigma(k + 1) - field.sigma(k));
+        return Math.sqrt((1 - c) * densityPlane(i, j, k, a, b) + c * densityPlane(i, j, k + 1, a, b));
     }
 
     @Override
@@ -69,20 +73,18 @@ final class Levels implements GasState {
         return gasLaw ? 1 / densityOverPressure : Double.NaN;
     }
 
-    private double interpolate(double[] values, int stride, int i, int j, int k, double a, double b, double sigma) {
-        int n = grid.node(i, j) * stride;
-        int m = grid.node(i + 1, j) * stride;
-        if (stride == 1) {
-            return plane(values, n, m, 1, a, b);
-        }
-        double c = (sigma - field.sigma(k)) / (field.sigma(k + 1) - field.sigma(k));
-        return (1 - c) * plane(values, n + k, m + k, stride, a, b)
-                + c * plane(values, n + k + 1, m + k + 1, stride, a, b);
+    private double pressurePlane(int i, int j, int k, double a, double b) {
+        int n = grid.node(i, j);
+        int m = grid.node(i + 1, j);
+        return (1 - a) * ((1 - b) * pressureSquare(n, k) + b * pressureSquare(n + 1, k))
+                + a * ((1 - b) * pressureSquare(m, k) + b * pressureSquare(m + 1, k));
     }
 
-    private static double plane(double[] values, int n, int m, int stride, double a, double b) {
-        return (1 - a) * ((1 - b) * values[n] + b * values[n + stride])
-                + a * ((1 - b) * values[m] + b * values[m + stride]);
+    private double densityPlane(int i, int j, int k, double a, double b) {
+        int n = grid.node(i, j);
+        int m = grid.node(i + 1, j);
+        return (1 - a) * ((1 - b) * densitySquare(n, k) + b * densitySquare(n + 1, k))
+                + a * ((1 - b) * densitySquare(m, k) + b * densitySquare(m + 1, k));
     }
 
     /** Mean density of the column at a node (kg/m³). */

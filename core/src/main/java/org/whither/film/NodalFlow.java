@@ -10,6 +10,7 @@ public final class NodalFlow implements FilmFlow {
     private final FilmGrid grid;
     private final FullField field;
     private final int nk;
+    private final NodalFluxes fluxes;
     private final double[] fluxTheta;
     private final double[] fluxRadial;
     private final double[] fluxSigma;
@@ -38,96 +39,25 @@ public final class NodalFlow implements FilmFlow {
         fluxRadial = new double[size];
         fluxSigma = new double[size];
         columnDensity = new double[size];
-        double observer = film.velocityFrame().angularSpeed(film.conditions().rotationRate());
-        double turn = observer - film.steadyFrameSpeed();
+        fluxes = new NodalFluxes(film);
         for (int i = 0; i < grid.ni(); i++) {
             for (int j = 0; j < grid.nj(); j++) {
-                fill(i, j, turn);
+                fill(i, j);
             }
         }
     }
 
-    private void fill(int i, int j, double turn) {
+    private void fill(int i, int j) {
         int node = grid.node(i, j);
-        RingFaces faces = film.faces();
-        double r = grid.radius(j);
-        double h = faces.thickness(node);
-        double rotorTheta = slopeTheta(i, j, false);
-        double statorTheta = slopeTheta(i, j, true);
-        double rotorR = slopeRadial(i, j, false, rotorTheta);
-        double statorR = slopeRadial(i, j, true, statorTheta);
+        double h = film.faces().thickness(node);
         for (int k = 0; k < nk; k++) {
-            double sigma = field.sigma(k);
-            double rho = field.density(node, k, film.gas(), film.conditions().temperature());
-            double ur = field.velocityR(node, k);
-            double ut = field.velocityTheta(node, k) + turn * r;
-            double levelTheta = (1 - sigma) * rotorTheta + sigma * statorTheta;
-            double levelR = (1 - sigma) * rotorR + sigma * statorR;
-            double rise = field.velocityZ(node, k) - ur * levelR - ut / r * levelTheta;
             int at = node * nk + k;
-            fluxTheta[at] = rho * h * ut;
-            fluxRadial[at] = rho * h * r * ur;
-            fluxSigma[at] = rho * r * rise;
-            columnDensity[at] = rho * h;
+            fluxTheta[at] = fluxes.theta(i, j, k);
+            fluxRadial[at] = fluxes.radial(i, j, k);
+            columnDensity[at] =
+                    field.density(node, k, film.gas(), film.conditions().temperature()) * h;
         }
-        // A sealed face lets nothing through, whatever the last digits of the solver's velocities say.
-        Face fed = film.supply().isPresent() && touchesFeed(i, j)
-                ? film.supply().get().face()
-                : null;
-        if (fed != Face.ROTOR) {
-            fluxSigma[node * nk] = 0;
-        }
-        if (fed != Face.STATOR) {
-            fluxSigma[node * nk + nk - 1] = 0;
-        }
-    }
-
-    private boolean touchesFeed(int i, int j) {
-        int nci = grid.cellsTheta();
-        for (int di = -1; di <= 0; di++) {
-            for (int dj = -1; dj <= 0; dj++) {
-                int cj = j + dj;
-                if (cj >= 0 && cj < grid.cellsRadial() && film.feeds(grid.cell(Math.floorMod(i + di, nci), cj))) {
-                    return true;
-                }
-            }
-        }
-        return false;
-    }
-
-    private double faceZ(int i, int j, boolean stator) {
-        int node = grid.node(i, j);
-        return stator ? film.faces().statorZ(node) : film.faces().rotorZ(node);
-    }
-
-    /** ∂z/∂θ of a face at a node (m/rad), central, over the sector's border as well. */
-    private double slopeTheta(int i, int j, boolean stator) {
-        int last = grid.ni() - 1;
-        int before = i > 0 ? i - 1 : last - 1;
-        int after = i < last ? i + 1 : 1;
-        double thetaBefore = i > 0 ? grid.theta(before, j) : grid.theta(before, j) - grid.pitch();
-        double thetaAfter = i < last ? grid.theta(after, j) : grid.theta(after, j) + grid.pitch();
-        return (faceZ(after, j, stator) - faceZ(before, j, stator)) / (thetaAfter - thetaBefore);
-    }
-
-    /** ∂z/∂r of a face at a node at constant θ (m/m), central, one-sided at the two diameters. */
-    private double slopeRadial(int i, int j, boolean stator, double slopeTheta) {
-        int below = Math.max(0, j - 1);
-        int above = Math.min(grid.nj() - 1, j + 1);
-        double dr = grid.radius(above) - grid.radius(below);
-        double alongLine = (faceZ(i, above, stator) - faceZ(i, below, stator)) / dr;
-        double lineSlope = (grid.theta(i, above) - grid.theta(i, below)) / dr;
-        return alongLine - lineSlope * slopeTheta;
-    }
-
-    /** Mass flux ρh u_θ at a node index and level, in the frame in which the film is steady (kg/(m s)). */
-    double fluxTheta(int node, int k) {
-        return fluxTheta[node * nk + k];
-    }
-
-    /** Mass flux ρh r u_r at a node index and level (kg/s a radian). */
-    double fluxRadial(int node, int k) {
-        return fluxRadial[node * nk + k];
+        fluxes.across(i, j, fluxSigma, node * nk);
     }
 
     @Override
@@ -220,24 +150,7 @@ public final class NodalFlow implements FilmFlow {
 
     @Override
     public double supplyFlow(int i, int j) {
-        int cell = grid.cell(i, j);
-        if (!film.feeds(cell)) {
-            return 0;
-        }
-        Supply supply = film.supply().orElseThrow();
-        if (supply.hasMassFlux()) {
-            return supply.massFlux(cell) * grid.cellArea(i, j);
-        }
-        boolean stator = supply.face() == Face.STATOR;
-        int k = stator ? nk - 1 : 0;
-        double dr = grid.radius(j + 1) - grid.radius(j);
-        double lower = grid.theta(i + 1, j) - grid.theta(i, j);
-        double upper = grid.theta(i + 1, j + 1) - grid.theta(i, j + 1);
-        double atLower = 0.5 * (fluxSigma[grid.node(i, j) * nk + k] + fluxSigma[grid.node(i + 1, j) * nk + k]);
-        double atUpper = 0.5 * (fluxSigma[grid.node(i, j + 1) * nk + k] + fluxSigma[grid.node(i + 1, j + 1) * nk + k]);
-        // ∫ f(b) Δθ(b) db with both linear in b
-        double rise = dr * (atLower * (2 * lower + upper) + atUpper * (lower + 2 * upper)) / 6;
-        return stator ? -rise : rise;
+        return fluxes.supplyFlow(i, j);
     }
 
     @Override

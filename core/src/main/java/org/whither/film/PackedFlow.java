@@ -1,5 +1,7 @@
 package org.whither.film;
 
+import java.util.stream.IntStream;
+
 /**
  * The motion of the gas of a {@link ConservingFlow}, laid out for following many tracers at once: 32-bit numbers, in
  * blocks that lie beside each other along θ, along which tracers run through most cells. Three planes of blocks hold all:
@@ -152,23 +154,27 @@ public final class PackedFlow {
         levels = new float[size(film, LEVEL)];
         pressures = Double.isNaN(ratio) ? new float[size(film, 1)] : null;
         cells = new float[(nj - 1) * ni * CELL];
-        for (int j = 0; j < nj; j++) {
-            for (int k = 0; k < nk; k++) {
-                for (int i = 0; i < ni; i++) {
+        // All levels of a node together: their profiles across the film are formed once.
+        IntStream.range(0, nj).parallel().forEach(j -> {
+            for (int i = 0; i < ni; i++) {
+                for (int k = 0; k < nk; k++) {
                     packLevel(grid, gas, source, i, j, k);
                 }
+                if (j < nj - 1) {
+                    packCell(film, source, i, j);
+                }
             }
-        }
-        for (int j = 0; j < nj - 1; j++) {
-            for (int i = 0; i < ni; i++) {
-                packCell(film, source, i, j);
-            }
-        }
+        });
     }
 
     /** Whether a film is small enough for its blocks to be numbered. */
     static boolean fits(Film film, int nk) {
         return (long) film.grid().nodes() * nk * LEVEL < Integer.MAX_VALUE - 64;
+    }
+
+    /** Memory that it takes a node of the face, of nk levels, with the pressures or where they follow from the density. */
+    static long bytesPerNode(int nk, boolean pressures) {
+        return Float.BYTES * (nk * (LEVEL + (pressures ? 1L : 0)) + CELL);
     }
 
     private int size(Film film, int block) {

@@ -36,6 +36,7 @@ final class CheckCommand implements Callable<Integer> {
         }
         summary.warnings().forEach(warning -> talk.say("Warning: " + warning));
         talk.say(summary.text());
+        talk.say("Tracing takes " + Memory.words(input.flow().film()) + ".");
         return summary.closes() ? ExitStatus.DONE : ExitStatus.SHORT_OF_WANTED;
     }
 }

@@ -2,12 +2,15 @@ package org.whither.io.command;
 
 import java.io.IOException;
 import java.io.InputStream;
+import java.io.UncheckedIOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
-import java.security.DigestInputStream;
 import java.security.MessageDigest;
 import java.security.NoSuchAlgorithmException;
 import java.util.HexFormat;
+import java.util.concurrent.CompletableFuture;
+import java.util.concurrent.CompletionException;
+import org.whither.film.Film;
 import org.whither.film.FilmFlow;
 import org.whither.io.hdf5.FieldReader;
 
@@ -32,9 +35,13 @@ record FieldInput(Path file, String sha256, FilmFlow flow) {
     /** Reads a field file with the interpolation asked for. */
     static FieldInput read(Path file, Interpolation interpolation, Talk talk) throws IOException {
         try (Talk.Stretch stretch = talk.begin("Reading " + file.getFileName())) {
-            FilmFlow flow = interpolation.of(FieldReader.read(file), file);
+            CompletableFuture<String> checksum = CompletableFuture.supplyAsync(() -> sha256(file));
+            Film film = FieldReader.read(file);
+            stretch.accept(0.4);
+            Memory.require(film, file);
+            FilmFlow flow = interpolation.of(film, file);
             stretch.accept(0.9);
-            return new FieldInput(file, sha256(file), flow);
+            return new FieldInput(file, joined(checksum), flow);
         }
     }
 
@@ -50,15 +57,31 @@ record FieldInput(Path file, String sha256, FilmFlow flow) {
         return title == null || title.isBlank() ? file.getFileName().toString() : title;
     }
 
-    private static String sha256(Path file) throws IOException {
+    private static String joined(CompletableFuture<String> checksum) throws IOException {
+        try {
+            return checksum.join();
+        } catch (CompletionException e) {
+            if (e.getCause() instanceof UncheckedIOException failure) {
+                throw failure.getCause();
+            }
+            throw e;
+        }
+    }
+
+    private static String sha256(Path file) {
         MessageDigest digest;
         try {
             digest = MessageDigest.getInstance("SHA-256");
         } catch (NoSuchAlgorithmException e) {
             throw new IllegalStateException(e);
         }
-        try (InputStream in = new DigestInputStream(Files.newInputStream(file), digest)) {
-            in.transferTo(java.io.OutputStream.nullOutputStream());
+        try (InputStream in = Files.newInputStream(file)) {
+            byte[] bytes = new byte[1 << 18];
+            for (int read = in.read(bytes); read >= 0; read = in.read(bytes)) {
+                digest.update(bytes, 0, read);
+            }
+        } catch (IOException e) {
+            throw new UncheckedIOException(e);
         }
         return HexFormat.of().formatHex(digest.digest());
     }

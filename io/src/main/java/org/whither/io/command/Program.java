@@ -73,7 +73,11 @@ public final class Program implements Callable<Integer> {
         line.setUsageHelpAutoWidth(true);
         line.setExecutionExceptionHandler((failure, command, parsed) -> ending(failure, command.getErr()));
         line.setParameterExceptionHandler(Program::wrongUsage);
-        return line.execute(arguments);
+        try {
+            return line.execute(arguments);
+        } catch (OutOfMemoryError e) {
+            return ending(e, err); // errors pass the handler of exceptions by
+        }
     }
 
     @Override
@@ -100,10 +104,15 @@ public final class Program implements Callable<Integer> {
             err.println("whither: " + sentence((IOException) failure));
             return ExitStatus.REFUSED;
         }
-        if (failure instanceof OutOfMemoryError) {
-            err.println("whither: the memory is not enough for this field; give the program more, as with"
-                    + " WHITHER_JAVA_OPTS=-Xmx8g in the environment");
-            return ExitStatus.REFUSED;
+        for (Throwable cause = failure; cause != null; cause = cause.getCause()) {
+            if (cause instanceof OutOfMemoryError) {
+                long given = Runtime.getRuntime().maxMemory() >> 20;
+                err.println("whither: the " + given
+                        + " MiB of memory that the program has are not enough for this; give it"
+                        + " more, as with WHITHER_JAVA_OPTS=-Xmx" + 2 * given + "m in the environment, or use a coarser"
+                        + " grid");
+                return ExitStatus.REFUSED;
+            }
         }
         err.println("whither: a fault in the program; please report it with these lines and, if you may, the field:");
         failure.printStackTrace(err);

@@ -53,6 +53,7 @@ import java.util.Locale;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.function.LongSupplier;
+import java.util.function.ToLongFunction;
 import org.whither.film.Conditions;
 import org.whither.film.Face;
 import org.whither.film.FieldData;
@@ -66,6 +67,7 @@ import org.whither.film.LubricationField;
 import org.whither.film.MassFlows;
 import org.whither.film.RingFaces;
 import org.whither.film.Supply;
+import org.whither.film.Values;
 import org.whither.io.file.RefusedInput;
 import org.whither.io.units.Quantity;
 
@@ -87,6 +89,8 @@ public final class FieldReader {
     /** Share of the free heap that the arrays of a file may take. */
     private static final double HEAP_SHARE = 0.9;
 
+    private static final long MAPPED_FROM = 32L << 20;
+
     private static final double ON_FACE = 1e-9;
 
     private final HdfSource source;
@@ -104,12 +108,17 @@ public final class FieldReader {
      * @throws RefusedInput where the file is not one of the layout, is damaged, or holds what no film can be
      */
     public static Film read(Path file) {
-        return read(file, FieldReader::freeHeap);
+        return read(file, FieldReader::freeHeap, MAPPED_FROM);
     }
 
     /** As {@link #read(Path)}, with the memory that arrays may take at the time (bytes). */
     static Film read(Path file, LongSupplier freeHeap) {
-        try (HdfSource source = HdfSource.open(file, freeHeap)) {
+        return read(file, freeHeap, MAPPED_FROM);
+    }
+
+    /** The same with the size from which numbers in one piece are left where they lie in the file (bytes). */
+    static Film read(Path file, LongSupplier freeHeap, long mappedFrom) {
+        try (HdfSource source = HdfSource.open(file, freeHeap, mappedFrom)) {
             return new FieldReader(source).film();
         }
     }
@@ -360,26 +369,29 @@ public final class FieldReader {
         }
     }
 
-    private void checkPressure(StoredArray stored, double[] pressure, int levels) {
-        for (int n = 0; n < pressure.length; n++) {
-            if (!(pressure[n] > 0)) {
-                throw stored.refuse(
-                        n, pressure[n], "an absolute pressure above 0 Pa", "add the ambient pressure to gauge values");
-            }
-        }
-        if (pressure.length != grid.nodes() * levels) {
+    private void checkPressure(StoredArray stored, Values pressure, int levels) {
+        checkPositive(stored, pressure, "an absolute pressure above 0 Pa", "add the ambient pressure to gauge values");
+        if (pressure.size() != grid.nodes() * levels) {
             return; // at the cells, where no value lies on the seam
         }
         for (int n = 0; n < grid.nj() * levels; n++) {
             int last = (grid.ni() - 1) * grid.nj() * levels + n;
-            if (!(Math.abs(pressure[last] - pressure[n]) <= SEAM_TOLERANCE * pressure[n])) {
+            double begin = pressure.at(n);
+            double end = pressure.at(last);
+            if (!(Math.abs(end - begin) <= SEAM_TOLERANCE * begin)) {
                 throw stored.refuse(
                         last,
-                        pressure[last],
-                        pressure[n] + " Pa within " + 100 * SEAM_TOLERANCE
-                                + " %, as on the first node line of the sector",
+                        end,
+                        begin + " Pa within " + 100 * SEAM_TOLERANCE + " %, as on the first node line of the sector",
                         "write the same pressure on both ends of the sector, or mend /grid@sectors");
             }
+        }
+    }
+
+    private static void checkPositive(StoredArray stored, Values values, String expected, String mend) {
+        int bad = StoredArray.firstNotPositive(values);
+        if (bad >= 0) {
+            throw stored.refuse(bad, values.at(bad), expected, mend);
         }
     }
 
@@ -394,7 +406,7 @@ public final class FieldReader {
         }
         requireHeap(arrays);
         double[] values = pressure.values();
-        checkPressure(pressure, values, 1);
+        checkPressure(pressure, Values.of(values), 1);
         MassFlows massFlows =
                 flows ? new MassFlows(arrays.get(1).values(), arrays.get(2).values()) : null;
         return new LubricationField(at, values, massFlows);
@@ -425,15 +437,15 @@ public final class FieldReader {
             temperature = section.array(TEMPERATURE, Quantity.TEMPERATURE).withShape(words, ni, nj, nk);
             arrays.add(temperature);
         }
-        requireHeap(arrays);
-        double[] pressures = pressure.values();
+        requireHeap(arrays, StoredArray::heapOfNumbers);
+        Values pressures = pressure.numbers();
         checkPressure(pressure, pressures, constantAcross ? 1 : nk);
         return new FullField(
                 sigma,
                 pressures,
-                velocityR.values(),
-                velocityTheta.values(),
-                velocityZ.values(),
+                velocityR.numbers(),
+                velocityTheta.numbers(),
+                velocityZ.numbers(),
                 density == null ? null : positive(density, "a density above 0 kg/m^3"),
                 temperature == null ? null : positive(temperature, "an absolute temperature above 0 K"));
     }
@@ -468,13 +480,9 @@ public final class FieldReader {
         return sigma;
     }
 
-    private static double[] positive(StoredArray stored, String expected) {
-        double[] values = stored.values();
-        for (int n = 0; n < values.length; n++) {
-            if (!(values[n] > 0)) {
-                throw stored.refuse(n, values[n], expected, "write absolute values in the unit that units names");
-            }
-        }
+    private static Values positive(StoredArray stored, String expected) {
+        Values values = stored.numbers();
+        checkPositive(stored, values, expected, "write absolute values in the unit that units names");
         return values;
     }
 
@@ -558,10 +566,14 @@ public final class FieldReader {
 
     /** Refuses arrays that the heap cannot take, saying how large it would have to be. */
     private void requireHeap(List<StoredArray> arrays) {
+        requireHeap(arrays, StoredArray::heap);
+    }
+
+    private void requireHeap(List<StoredArray> arrays, ToLongFunction<StoredArray> heap) {
         long kept = 0;
         long whileRead = 0;
         for (StoredArray array : arrays) {
-            kept += array.heap();
+            kept += heap.applyAsLong(array);
             whileRead = Math.max(whileRead, array.heapWhileRead());
         }
         long free = source.freeHeap(kept + whileRead);
@@ -576,6 +588,6 @@ public final class FieldReader {
                 "the numbers of " + arrays.get(0).path() + (arrays.size() > 1 ? " and its companions" : "") + " take "
                         + ((kept + whileRead + (1 << 20) - 1) >> 20) + " MiB of memory",
                 "at most the " + (free >> 20) + " MiB that are free in the program's heap",
-                "set JAVA_TOOL_OPTIONS=-Xmx" + megabytes + "m where the machine has that much, or use a coarser grid");
+                "set WHITHER_JAVA_OPTS=-Xmx" + megabytes + "m where the machine has that much, or use a coarser grid");
     }
 }

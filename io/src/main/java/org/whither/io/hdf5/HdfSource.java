@@ -48,12 +48,14 @@ final class HdfSource implements AutoCloseable {
     private final Path file;
     private final long size;
     private final LongSupplier freeHeap;
+    private final long mappedFrom;
     private final HdfFile hdf;
 
-    private HdfSource(Path file, long size, LongSupplier freeHeap, HdfFile hdf) {
+    private HdfSource(Path file, long size, LongSupplier freeHeap, long mappedFrom, HdfFile hdf) {
         this.file = file;
         this.size = size;
         this.freeHeap = freeHeap;
+        this.mappedFrom = mappedFrom;
         this.hdf = hdf;
     }
 
@@ -62,9 +64,10 @@ final class HdfSource implements AutoCloseable {
      *
      * @param file the file
      * @param freeHeap memory that arrays may take at the time (bytes)
+     * @param mappedFrom size from which numbers of a dataset in one piece are left where they lie (bytes)
      * @throws RefusedInput where it is no HDF5 file that can be read
      */
-    static HdfSource open(Path file, LongSupplier freeHeap) {
+    static HdfSource open(Path file, LongSupplier freeHeap, long mappedFrom) {
         if (!Files.exists(file)) {
             throw RefusedInput.of(file, "there is no such file", "an HDF5 file", "check the name");
         }
@@ -81,7 +84,7 @@ final class HdfSource implements AutoCloseable {
                         "name another file, or bring the data into that layout first");
             }
             HdfFile hdf = guarded(file, "", () -> open(file, channel, size));
-            HdfSource source = new HdfSource(file, size, freeHeap, hdf);
+            HdfSource source = new HdfSource(file, size, freeHeap, mappedFrom, hdf);
             try {
                 source.checkLength();
             } catch (RefusedInput e) {
@@ -158,6 +161,11 @@ final class HdfSource implements AutoCloseable {
             System.gc();
         }
         return freeHeap.getAsLong();
+    }
+
+    /** Size from which numbers of a dataset in one piece are left where they lie (bytes). */
+    long mappedFrom() {
+        return mappedFrom;
     }
 
     /** A refusal of this file. */
@@ -323,7 +331,7 @@ final class HdfSource implements AutoCloseable {
                     file,
                     (where.isEmpty() ? "the file" : where) + " does not fit the program's heap",
                     "a file that is undamaged and fits",
-                    "copy the file again, or set JAVA_TOOL_OPTIONS=-Xmx to more than the "
+                    "copy the file again, or set WHITHER_JAVA_OPTS=-Xmx to more than the "
                             + (Runtime.getRuntime().maxMemory() >> 20) + " MiB it has",
                     e);
         }

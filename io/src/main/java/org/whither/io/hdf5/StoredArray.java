@@ -10,7 +10,12 @@ import io.jhdf.object.datatype.EnumDataType;
 import io.jhdf.object.datatype.FixedPoint;
 import io.jhdf.object.datatype.FloatingPoint;
 import java.nio.ByteBuffer;
+import java.nio.ByteOrder;
+import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.List;
+import java.util.stream.IntStream;
+import org.whither.film.Values;
 import org.whither.io.file.RefusedInput;
 import org.whither.io.units.Quantity;
 import org.whither.io.units.ToSi;
@@ -23,6 +28,9 @@ import org.whither.io.units.UnitReader;
  * order, straight from the stored bytes into a flat array.
  */
 final class StoredArray {
+    /** Numbers that one thread turns or looks through at a time. */
+    private static final int BLOCK = 1 << 16;
+
     private final HdfSource source;
     private final Dataset dataset;
     private final String path;
@@ -121,14 +129,40 @@ final class StoredArray {
         return this;
     }
 
-    /** Memory that its numbers take when read (bytes). */
+    /** Memory that {@link #values} takes (bytes). */
     long heap() {
         return count() * Double.BYTES;
     }
 
-    /** Memory that is needed besides while they are read (bytes). */
+    /** Memory that {@link #numbers} takes (bytes); none where the file itself is mapped. */
+    long heapOfNumbers() {
+        return staysInFile() ? 0 : count() * (inSingles() ? Float.BYTES : Double.BYTES);
+    }
+
+    /** Memory that is needed besides while they are read (bytes): the chunks at hand, stored and inflated. */
     long heapWhileRead() {
-        return dataset instanceof ChunkedDataset ? count() * type.getSize() : 0;
+        if (!(dataset instanceof ChunkedDataset chunked)) {
+            return 0;
+        }
+        long bytes = 4L * type.getSize() * Runtime.getRuntime().availableProcessors();
+        for (int length : source.guarded("dataset " + path, chunked::getChunkDimensions)) {
+            bytes = length < 0 || bytes > Long.MAX_VALUE / 64 / Math.max(1, length)
+                    ? Long.MAX_VALUE / 64
+                    : bytes * length;
+        }
+        return bytes;
+    }
+
+    private boolean inSingles() {
+        return type instanceof FloatingPoint && type.getSize() <= Float.BYTES;
+    }
+
+    /** Whether its numbers are used where they lie in the file: large, in one piece, of 32 or 64 bits. */
+    private boolean staysInFile() {
+        return dataset instanceof ContiguousDataset
+                && type instanceof FloatingPoint
+                && type.getSize() >= Float.BYTES
+                && count() * type.getSize() >= source.mappedFrom();
     }
 
     private long count() {
@@ -147,6 +181,64 @@ final class StoredArray {
      * @throws RefusedInput where they cannot be read, or one is not finite
      */
     double[] values() {
+        checkReadable();
+        double[] values = new double[(int) count()];
+        source.guarded("dataset " + path, () -> {
+            read(values);
+            return null;
+        });
+        int bad = first(values.length, (from, to) -> {
+            for (int n = from; n < to; n++) {
+                double value = toSi.convert(values[n]);
+                if (!Double.isFinite(value)) {
+                    return n;
+                }
+                values[n] = value;
+            }
+            return -1;
+        });
+        if (bad >= 0) {
+            throw notFinite(bad, values[bad]);
+        }
+        return values;
+    }
+
+    /**
+     * Its numbers, row-major, in SI, kept in as many bits as they are stored in, or left where they lie in the file.
+     *
+     * @throws RefusedInput where they cannot be read, or one is not finite
+     */
+    Values numbers() {
+        if (!staysInFile() && !inSingles()) {
+            return Values.of(values());
+        }
+        checkReadable();
+        Values values = source.guarded("dataset " + path, () -> {
+            if (staysInFile()) {
+                return StoredNumbers.of(contiguous(), type.getSize() == Float.BYTES, toSi);
+            }
+            float[] stored = new float[(int) count()];
+            read(stored);
+            return StoredNumbers.of(stored, toSi);
+        });
+        int bad = source.guarded(
+                "dataset " + path,
+                () -> first(values.size(), (from, to) -> {
+                    for (int n = from; n < to; n++) {
+                        if (!Double.isFinite(values.at(n))) {
+                            return n;
+                        }
+                    }
+                    return -1;
+                }));
+        if (bad >= 0) {
+            throw notFinite(bad, values.at(bad));
+        }
+        return values;
+    }
+
+    /** Refuses what cannot be in the file, or was never filled. */
+    private void checkReadable() {
         long count = count();
         long bytes = count * type.getSize();
         if (bytes > Integer.MAX_VALUE) {
@@ -162,25 +254,42 @@ final class StoredArray {
                     "copy the file again, or write it again");
         }
         checkWritten();
-        ByteBuffer stored = source.guarded("dataset " + path, () -> ((DatasetBase) dataset).getDataBuffer());
-        if (stored.remaining() < bytes) {
-            throw source.refuse(
-                    "dataset " + path + " has " + stored.remaining() + " bytes",
-                    bytes + " bytes for " + shapeText(),
-                    "copy the file again, or write it again");
-        }
-        double[] values = source.guarded("dataset " + path, () -> decoded(stored, (int) count));
-        for (int n = 0; n < values.length; n++) {
-            double value = toSi.convert(values[n]);
-            if (!Double.isFinite(value)) {
-                throw source.refuse(
-                        at(n) + " is " + values[n],
-                        "a finite " + quantity.words(),
-                        "find out why the solver gave no number there, and write the value");
+    }
+
+    /** Works on the numbers of one block; gives the first index at which a number will not do, or −1. */
+    @FunctionalInterface
+    private interface Block {
+        int work(int from, int to);
+    }
+
+    /** Works on all numbers, block by block on several threads; the first index that will not do, or −1. */
+    private static int first(int count, Block block) {
+        int blocks = (int) (((long) count + BLOCK - 1) / BLOCK);
+        return IntStream.range(0, blocks)
+                .parallel()
+                .map(n -> block.work(n * BLOCK, (int) Math.min(count, (n + 1L) * BLOCK)))
+                .filter(found -> found >= 0)
+                .min()
+                .orElse(-1);
+    }
+
+    /** The first index at which a number is not above 0, or −1. */
+    static int firstNotPositive(Values values) {
+        return first(values.size(), (from, to) -> {
+            for (int n = from; n < to; n++) {
+                if (!(values.at(n) > 0)) {
+                    return n;
+                }
             }
-            values[n] = value;
-        }
-        return values;
+            return -1;
+        });
+    }
+
+    private RefusedInput notFinite(int index, double stored) {
+        return source.refuse(
+                at(index) + " is " + stored,
+                "a finite " + quantity.words(),
+                "find out why the solver gave no number there, and write the value");
     }
 
     /** The place of a number, as in {@code /grid/rotor_z[3, 0]}. */
@@ -278,55 +387,134 @@ final class StoredArray {
                 "write them all, zeros too, and let the solver close the file");
     }
 
-    private double[] decoded(ByteBuffer stored, int count) {
-        double[] values = new double[count];
-        if (type instanceof FloatingPoint floating) {
-            stored.order(floating.getByteOrder());
-            decodeFloating(stored, values);
-        } else {
-            FixedPoint whole = (FixedPoint) type;
-            stored.order(whole.getByteOrder());
-            decodeWhole(stored, values, whole.isSigned());
+    /** The stored bytes of a dataset in one piece, from position 0, in their byte order. */
+    private ByteBuffer contiguous() {
+        ByteBuffer stored = ((DatasetBase) dataset).getDataBuffer();
+        long bytes = count() * type.getSize();
+        if (stored.remaining() < bytes) {
+            throw source.refuse(
+                    "dataset " + path + " has " + stored.remaining() + " bytes",
+                    bytes + " bytes for " + shapeText(),
+                    "copy the file again, or write it again");
         }
-        return values;
+        return stored.slice(stored.position(), (int) bytes).order(order());
     }
 
-    private void decodeFloating(ByteBuffer stored, double[] values) {
-        int start = stored.position();
+    private ByteOrder order() {
+        return type instanceof FloatingPoint floating ? floating.getByteOrder() : ((FixedPoint) type).getByteOrder();
+    }
+
+    /** Reads all numbers as they are stored, on several threads, into a double[] or a float[]. */
+    private void read(Object into) {
+        if (dataset instanceof ChunkedDataset chunked) {
+            List<int[]> offsets = new ArrayList<>();
+            int[] offset = new int[shape.length];
+            int[] chunk = chunked.getChunkDimensions();
+            do {
+                offsets.add(offset.clone());
+            } while (next(offset, chunk));
+            offsets.parallelStream().forEach(at -> readChunk(chunked, at, chunk, into));
+        } else {
+            ByteBuffer stored = contiguous();
+            first((int) count(), (from, to) -> {
+                decode(stored, from, into, from, to - from);
+                return -1;
+            });
+        }
+    }
+
+    /** Puts the part of a chunk that lies within the dataset into its place, row by row. */
+    private void readChunk(ChunkedDataset chunked, int[] offset, int[] chunk, Object into) {
+        byte[] bytes = chunked.getDecompressedChunk(offset);
+        long wanted = type.getSize();
+        for (int length : chunk) {
+            wanted *= length;
+        }
+        if (bytes.length < wanted) {
+            throw new HdfException("a chunk of " + bytes.length + " bytes instead of " + wanted);
+        }
+        ByteBuffer stored = ByteBuffer.wrap(bytes).order(order());
+        int last = shape.length - 1;
+        int length = Math.min(chunk[last], shape[last] - offset[last]);
+        int[] row = new int[shape.length];
+        int[] inside = new int[shape.length];
+        for (int d = 0; d <= last; d++) {
+            inside[d] = Math.min(chunk[d], shape[d] - offset[d]);
+        }
+        int d;
+        do {
+            int from = 0;
+            int to = 0;
+            for (int n = 0; n <= last; n++) {
+                from = from * chunk[n] + row[n];
+                to = to * shape[n] + offset[n] + row[n];
+            }
+            decode(stored, from, into, to, length);
+            for (d = last - 1; d >= 0 && ++row[d] == inside[d]; d--) {
+                row[d] = 0;
+            }
+        } while (d >= 0);
+    }
+
+    /** Turns stored numbers, from one index of a buffer on, into numbers from another index of an array on. */
+    private void decode(ByteBuffer stored, int from, Object into, int to, int count) {
+        if (into instanceof float[] singles) {
+            decodeSingles(stored, from, singles, to, count);
+        } else if (type instanceof FloatingPoint) {
+            decodeFloating(stored, from, (double[]) into, to, count);
+        } else {
+            decodeWhole(stored, from, (double[]) into, to, count, ((FixedPoint) type).isSigned());
+        }
+    }
+
+    private void decodeSingles(ByteBuffer stored, int from, float[] values, int to, int count) {
+        if (type.getSize() == Float.BYTES) {
+            part(stored, from, count).asFloatBuffer().get(values, to, count);
+            return;
+        }
+        for (int n = 0; n < count; n++) {
+            values[to + n] = FloatingPoint.toFloat(stored.getShort((from + n) * Short.BYTES));
+        }
+    }
+
+    private void decodeFloating(ByteBuffer stored, int from, double[] values, int to, int count) {
         switch (type.getSize()) {
-            case Double.BYTES -> stored.asDoubleBuffer().get(values);
+            case Double.BYTES -> part(stored, from, count).asDoubleBuffer().get(values, to, count);
             case Float.BYTES -> {
-                for (int n = 0; n < values.length; n++) {
-                    values[n] = stored.getFloat(start + n * Float.BYTES);
+                for (int n = 0; n < count; n++) {
+                    values[to + n] = stored.getFloat((from + n) * Float.BYTES);
                 }
             }
             default -> {
-                for (int n = 0; n < values.length; n++) {
-                    values[n] = FloatingPoint.toFloat(stored.getShort(start + n * Short.BYTES));
+                for (int n = 0; n < count; n++) {
+                    values[to + n] = FloatingPoint.toFloat(stored.getShort((from + n) * Short.BYTES));
                 }
             }
         }
     }
 
-    private void decodeWhole(ByteBuffer stored, double[] values, boolean signed) {
-        int start = stored.position();
-        for (int n = 0; n < values.length; n++) {
+    private ByteBuffer part(ByteBuffer stored, int from, int count) {
+        return stored.slice(from * type.getSize(), count * type.getSize()).order(stored.order());
+    }
+
+    private void decodeWhole(ByteBuffer stored, int from, double[] values, int to, int count, boolean signed) {
+        for (int n = 0; n < count; n++) {
             switch (type.getSize()) {
                 case Byte.BYTES -> {
-                    byte b = stored.get(start + n);
-                    values[n] = signed ? b : Byte.toUnsignedInt(b);
+                    byte b = stored.get(from + n);
+                    values[to + n] = signed ? b : Byte.toUnsignedInt(b);
                 }
                 case Short.BYTES -> {
-                    short s = stored.getShort(start + n * Short.BYTES);
-                    values[n] = signed ? s : Short.toUnsignedInt(s);
+                    short s = stored.getShort((from + n) * Short.BYTES);
+                    values[to + n] = signed ? s : Short.toUnsignedInt(s);
                 }
                 case Integer.BYTES -> {
-                    int i = stored.getInt(start + n * Integer.BYTES);
-                    values[n] = signed ? i : Integer.toUnsignedLong(i);
+                    int i = stored.getInt((from + n) * Integer.BYTES);
+                    values[to + n] = signed ? i : Integer.toUnsignedLong(i);
                 }
                 default -> {
-                    long l = stored.getLong(start + n * Long.BYTES);
-                    values[n] = signed || l >= 0 ? l : l + 0x1p64;
+                    long l = stored.getLong((from + n) * Long.BYTES);
+                    values[to + n] = signed || l >= 0 ? l : l + 0x1p64;
                 }
             }
         }

@@ -30,6 +30,29 @@ class LibraryInterplayTest {
     private static final Path LAYOUT_PAGE = Path.of("LAYOUT.md");
     private static final Pattern NUMBER = Pattern.compile("-?\\d[\\d.]*(?:e[+-]?\\d+)?");
 
+    /** Stores the fields of a file anew; their numbers are exact in 32 bits. A pressure in kPa is not in SI. */
+    private static final List<String> STORE = List.of(
+            "import sys, shutil, h5py",
+            "ways = {'piece': {}, 'chunks': dict(chunks=(4, 2, 3)), 'deflate': dict(chunks=(3, 5, 4), compression=4),",
+            "    'shuffle': dict(chunks=(2, 3, 3), compression=9, shuffle=True, fletcher32=True)}",
+            "for unit in 'Pa', 'kPa':",
+            "    for dtype in '<f4', '>f4', '<f8', '>f8':",
+            "        for way, storage in ways.items():",
+            "            name = f'{sys.argv[2]}/stored-{unit}-{dtype[1:]}-{ord(dtype[0])}-{way}.h5'",
+            "            shutil.copy(sys.argv[1], name)",
+            "            with h5py.File(name, 'r+') as file:",
+            "                for key in list(file['field']):",
+            "                    old = file['field'][key]",
+            "                    values, units = old[...], old.attrs['units']",
+            "                    del file['field'][key]",
+            "                    if key == 'pressure' and unit == 'kPa':",
+            "                        values, units = values / 1000, 'kPa'",
+            "                        dtype_here = dtype[0] + 'f8'",
+            "                    else:",
+            "                        dtype_here = dtype",
+            "                    new = file['field'].create_dataset(key, data=values.astype(dtype_here), **storage)",
+            "                    new.attrs['units'] = units");
+
     @TempDir
     private Path folder;
 
@@ -46,6 +69,33 @@ class LibraryInterplayTest {
             read++;
         }
         assertEquals(8, read);
+    }
+
+    /** Every way of storing numbers that the layout allows, chunks with partial edges, mapped and copied. */
+    @Test
+    void everyStorage_isReadEqual() throws Exception {
+        String python = python();
+        Path script = folder.resolve("store.py");
+        Files.writeString(script, String.join("\n", STORE) + "\n");
+        run(
+                python,
+                "-B",
+                script.toString(),
+                FieldFixture.FOLDER.resolve("full-plain.h5").toString(),
+                folder.toString());
+        List<Path> files;
+        try (var found = Files.list(folder)) {
+            files = found.filter(file -> file.getFileName().toString().startsWith("stored-"))
+                    .sorted()
+                    .toList();
+        }
+        assertEquals(32, files.size());
+        for (Path file : files) {
+            for (long mappedFrom : new long[] {0, Long.MAX_VALUE}) {
+                Film read = FieldReader.read(file, () -> Long.MAX_VALUE, mappedFrom);
+                FieldFixture.assertSame(FieldFixture.full(), read, 0);
+            }
+        }
     }
 
     @ParameterizedTest

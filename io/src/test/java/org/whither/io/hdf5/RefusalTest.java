@@ -315,7 +315,7 @@ class RefusalTest {
                 file,
                 "/field/pressure and its companions take 1 MiB",
                 "heap",
-                "set JAVA_TOOL_OPTIONS=-Xmx");
+                "set WHITHER_JAVA_OPTS=-Xmx");
     }
 
     private static String refusal(Path file) {
