@@ -1,16 +1,17 @@
 package org.whither.io.command;
 
 import java.io.IOException;
+import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.List;
 import java.util.Optional;
 import java.util.concurrent.Callable;
 import org.whither.io.file.WholeFolder;
 import org.whither.io.hdf5.FieldWriter;
+import org.whither.io.report.ReportPicture;
 import org.whither.io.result.SplitResult;
-import org.whither.render.Gap;
-import org.whither.render.GapSettings;
 import org.whither.render.NoOpenGL;
-import org.whither.render.PictureSettings;
 import org.whither.samples.SampleSeals;
 import org.whither.samples.SolvedFilm;
 import picocli.CommandLine.Command;
@@ -26,14 +27,14 @@ import picocli.CommandLine.Spec;
         header = "Do the whole job on a built-in, invented seal.%n",
         description = {
             "Computes the film of an invented spiral-groove seal, writes it as a field file, finds where its supply gas"
-                    + " goes, and draws it. Writes field.h5, split.json, plan.png and gap.png into the folder.",
+                    + " goes, draws it, and makes one page of it. Writes field.h5, split.json, report.html and report.json,"
+                    + " plan.png, relief.png and gap.png into the folder.",
             "Without usable OpenGL it still gives the numbers, says which packages pictures need, and ends with status"
                     + " 4.%n"
         },
         sortOptions = false)
 final class DemoCommand implements Callable<Integer> {
     private static final Path DEFAULT_FOLDER = Path.of("demo-whither");
-    private static final int PATHS = 7;
 
     @Spec
     private CommandSpec spec;
@@ -66,10 +67,17 @@ final class DemoCommand implements Callable<Integer> {
             FieldInput input = FieldInput.read(file, talk);
             found[0] = SplitCommand.find(input, settings, talk);
             SplitCommand.writeNumbers(found[0], into);
-            sentence[0] = draw(input, found[0], into).orElse(null);
+            List<ReportPicture> pictures = new ArrayList<>();
+            Optional<String> missing = draw(input, found[0], pictures);
+            for (ReportPicture picture : pictures) {
+                Files.write(into.resolve(picture.name() + ".png"), picture.png());
+            }
+            ReportCommand.write(input, found[0], tracing, talk, pictures, missing, into);
+            sentence[0] = missing.orElse(null);
         });
         SplitCommand.print(found[0], talk);
         talk.say("Written: " + target.toAbsolutePath());
+        talk.say("The page for the plant: " + target.resolve("report.html").toAbsolutePath());
         if (sentence[0] != null) {
             talk.warn(sentence[0]);
             return ExitStatus.SHORT_OF_WANTED;
@@ -77,21 +85,11 @@ final class DemoCommand implements Callable<Integer> {
         return SplitCommand.status(found[0]);
     }
 
-    private Optional<String> draw(FieldInput input, SplitResult result, Path into) throws IOException {
+    /** Draws the pictures, or tells in a sentence why it could not. */
+    private Optional<String> draw(FieldInput input, SplitResult result, List<ReportPicture> pictures)
+            throws IOException {
         try (Talk.Stretch stretch = talk.begin("Drawing")) {
-            Optional<String> missing = SplitCommand.drawPlan(input, result, into, tracing);
-            stretch.accept(0.6);
-            if (missing.isPresent()) {
-                return missing;
-            }
-            var how = Pictures.settings(input.flow(), tracing.frame(), tracing.tolerance());
-            PictureSettings picture = PictureSettings.standard(input.title()).speedsIn(tracing.frame());
-            Pictures.write(
-                    Gap.draw(
-                            input.flow(),
-                            Pictures.paths(input.flow(), how, tracing.seed(), PATHS),
-                            new GapSettings(picture, GapSettings.USUAL)),
-                    into.resolve("gap.png"));
+            pictures.addAll(ReportPictures.of(input, result, tracing, stretch));
             return Optional.empty();
         } catch (NoOpenGL e) {
             return Optional.of(e.getMessage());

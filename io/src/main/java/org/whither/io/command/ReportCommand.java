@@ -10,6 +10,8 @@ import java.util.Locale;
 import java.util.Optional;
 import java.util.concurrent.Callable;
 import org.whither.eddy.AgeMap;
+import org.whither.eddy.Eddies;
+import org.whither.eddy.EddySettings;
 import org.whither.fate.SplitSettings;
 import org.whither.io.file.WholeFolder;
 import org.whither.io.report.Comparison;
@@ -39,6 +41,9 @@ final class ReportCommand implements Callable<Integer> {
     private static final int AGE_PHASES = 12;
     private static final int AGE_RADII = 36;
     private static final int AGE_HEIGHTS = 10;
+
+    /** Tracers inside the film: a page tells of zones of a good part of the gas; command eddies looks closer. */
+    private static final int EDDY_TRACERS = 6_000;
 
     @Mixin
     private FieldParameter field;
@@ -123,8 +128,9 @@ final class ReportCommand implements Callable<Integer> {
 
     /** The numbers of a report: the split's, and what else the page tells. */
     static ObjectNode numbers(FieldInput input, SplitResult result, TracingOptions tracing, Talk talk) {
+        AgeMap age;
         try (Talk.Stretch stretch = talk.begin("Looking at the age of the gas")) {
-            AgeMap age = AgeMap.of(
+            age = AgeMap.of(
                     input.flow(),
                     Pictures.settings(input.flow(), tracing.frame(), tracing.tolerance()),
                     AGE_PHASES,
@@ -132,7 +138,19 @@ final class ReportCommand implements Callable<Integer> {
                     AGE_HEIGHTS,
                     tracing.threads(),
                     stretch);
-            return ReportNumbers.of(result, Program.Version.number(), Optional.of(age), Optional.empty());
+        }
+        try (Talk.Stretch stretch = talk.begin("Looking for held gas")) {
+            Eddies eddies = Eddies.of(
+                    input.flow(),
+                    new EddySettings(
+                            tracing.frame(),
+                            tracing.tolerance(),
+                            EddySettings.PATIENCE,
+                            EDDY_TRACERS,
+                            tracing.seed(),
+                            tracing.threads()),
+                    stretch);
+            return ReportNumbers.of(result, Program.Version.number(), Optional.of(age), Optional.of(eddies));
         }
     }
 
@@ -166,28 +184,23 @@ final class ReportCommand implements Callable<Integer> {
         Files.writeString(into.resolve("report.html"), ReportPage.of(numbers, pictures, page));
     }
 
-    /** Writes the report of a field whose split is known; tells in a sentence why there are no pictures, if so. */
-    static Optional<String> write(FieldInput input, SplitResult result, TracingOptions tracing, Talk talk, Path into)
+    /** Writes the report of a field whose split is known, with pictures that are drawn or a sentence why there are none. */
+    static void write(
+            FieldInput input,
+            SplitResult result,
+            TracingOptions tracing,
+            Talk talk,
+            List<ReportPicture> pictures,
+            Optional<String> missing,
+            Path into)
             throws IOException {
-        ReportCommand command = new ReportCommand();
-        command.tracing = tracing;
-        command.talk = talk;
-        ObjectNode numbers = numbers(input, result, tracing, talk);
-        List<ReportPicture> pictures = List.of();
-        Optional<String> missing = Optional.empty();
-        try (Talk.Stretch stretch = talk.begin("Drawing the report")) {
-            pictures = ReportPictures.of(input, result, tracing, stretch);
-        } catch (NoOpenGL e) {
-            missing = Optional.of(e.getMessage());
-        }
-        Told told = new Told(input, result, numbers);
+        Told told = new Told(input, result, numbers(input, result, tracing, talk));
+        String words = new ReportCommand().words(told, Optional.empty());
         write(
-                numbers,
+                told.numbers(),
                 pictures,
-                new ReportPage.Settings(
-                        false, ZonedDateTime.now(), command.words(told, Optional.empty()), missing, Optional.empty()),
+                new ReportPage.Settings(false, ZonedDateTime.now(), words, missing, Optional.empty()),
                 into);
-        return missing;
     }
 
     /** The command line that makes the same report again, without the folders of the fields. */

@@ -13,11 +13,14 @@ import org.whither.fate.FedPoint;
 import org.whither.film.Conditions;
 import org.whither.film.FilmFlow;
 import org.whither.io.report.ReportPicture;
+import org.whither.io.result.FieldSummary;
 import org.whither.io.result.SplitResult;
 import org.whither.render.Gap;
 import org.whither.render.GapSettings;
 import org.whither.render.PictureSettings;
 import org.whither.render.Plan;
+import org.whither.render.Relief;
+import org.whither.render.ReliefSettings;
 import org.whither.trace.Path;
 import org.whither.trace.PathEnd;
 import org.whither.trace.TraceSettings;
@@ -31,7 +34,7 @@ final class ReportPictures {
     private final FilmFlow flow;
     private final TracingOptions tracing;
     private final TraceSettings how;
-    private final PictureSettings settings;
+    private PictureSettings settings;
     private final String prefix;
     private final String inner;
     private final String outer;
@@ -54,7 +57,9 @@ final class ReportPictures {
         ReportPictures pictures = new ReportPictures(input, tracing, "");
         List<ReportPicture> all = new ArrayList<>();
         all.add(pictures.plan(result));
-        progress.accept(0.5);
+        progress.accept(0.4);
+        all.add(pictures.relief());
+        progress.accept(0.7);
         all.add(pictures.gap());
         progress.accept(1);
         return all;
@@ -71,6 +76,14 @@ final class ReportPictures {
             throws IOException {
         ReportPictures first = new ReportPictures(a, tracing, "A: ");
         ReportPictures second = new ReportPictures(b, tracing, "B: ");
+        double[] rangeA = new FieldSummary(a.flow()).pressures();
+        double[] rangeB = new FieldSummary(b.flow()).pressures();
+        double low = Math.min(rangeA[0], rangeB[0]);
+        double high = Math.max(rangeA[1], rangeB[1]);
+        if (high > low) {
+            first.settings = first.settings.pressures(low, high);
+            second.settings = second.settings.pressures(low, high);
+        }
         List<ReportPicture> all = new ArrayList<>();
         all.add(first.plan(resultA));
         progress.accept(0.25);
@@ -87,6 +100,7 @@ final class ReportPictures {
         List<FedPoint> fed = Pictures.few(result.split().fed());
         List<Path> few = Pictures.paths(flow, how, tracing.seed(), PLAN_PATHS);
         return picture(
+                "plan",
                 "The face",
                 Plan.draw(flow, fed, few, settings),
                 "The seal face of " + input.title()
@@ -100,9 +114,22 @@ final class ReportPictures {
                                         + " nearer it comes to an edge of the feed, the less is left for that side."));
     }
 
+    private ReportPicture relief() throws IOException {
+        List<Path> paths = Pictures.paths(flow, how, tracing.seed(), GAP_PATHS);
+        return picture(
+                "relief",
+                "The pressure",
+                Relief.draw(flow, paths, ReliefSettings.ring(settings)),
+                "The film pressure of " + input.title() + " drawn as a landscape over the ring, with " + paths.size()
+                        + " paths of gas laid over it: " + ends(paths) + ".",
+                "Its height is the film pressure. Gas runs off the ridges to both sides: look at which side of a ridge"
+                        + " the feed lies on, and at the wall that holds one side's gas back from the other.");
+    }
+
     private ReportPicture gap() throws IOException {
         List<Path> paths = Pictures.paths(flow, how, tracing.seed(), GAP_PATHS);
         return picture(
+                "gap",
                 "The film",
                 Gap.draw(flow, paths, new GapSettings(settings, GapSettings.USUAL)),
                 String.format(
@@ -120,14 +147,14 @@ final class ReportPictures {
                         GapSettings.USUAL));
     }
 
-    private ReportPicture picture(String title, BufferedImage image, String alternative, String caption)
+    private ReportPicture picture(String name, String title, BufferedImage image, String alternative, String caption)
             throws IOException {
         ByteArrayOutputStream png = new ByteArrayOutputStream();
         if (!ImageIO.write(image, "png", png)) {
             throw new IOException("a picture cannot be made: this Java has no PNG writer");
         }
         return new ReportPicture(
-                prefix + title, png.toByteArray(), image.getWidth(), image.getHeight(), alternative, caption);
+                name, prefix + title, png.toByteArray(), image.getWidth(), image.getHeight(), alternative, caption);
     }
 
     private static String side(String name, String diameter) {

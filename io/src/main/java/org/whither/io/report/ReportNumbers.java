@@ -8,6 +8,8 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import org.whither.eddy.AgeMap;
+import org.whither.eddy.Eddies;
+import org.whither.eddy.Zone;
 import org.whither.fate.BorderBalance;
 import org.whither.fate.Destination;
 import org.whither.fate.SplitRow;
@@ -40,13 +42,13 @@ public final class ReportNumbers {
      * @param result its split
      * @param version version of the program
      * @param age how old its gas is, or empty where it was not looked for
-     * @param eddies its recirculation as JSON, or empty where it was not looked for
+     * @param eddies its recirculation, or empty where it was not looked for
      */
-    public static ObjectNode of(SplitResult result, String version, Optional<AgeMap> age, Optional<ObjectNode> eddies) {
+    public static ObjectNode of(SplitResult result, String version, Optional<AgeMap> age, Optional<Eddies> eddies) {
         return new ReportNumbers(result).root(version, age, eddies);
     }
 
-    private ObjectNode root(String version, Optional<AgeMap> age, Optional<ObjectNode> eddies) {
+    private ObjectNode root(String version, Optional<AgeMap> age, Optional<Eddies> eddies) {
         ObjectNode split = result.json();
         JsonNode summary = new FieldSummary(result.flow()).json(result.file(), result.sha256());
         ObjectNode root = JsonNodeFactory.instance.objectNode();
@@ -70,11 +72,7 @@ public final class ReportNumbers {
         // Times of the clock differ from run to run; the cautions stand below.
         split.remove(List.of("wall_seconds", "caution", "result", "version", "validity"));
         root.set("split", split);
-        eddies.ifPresent(found -> {
-            ObjectNode kept = found.deepCopy();
-            kept.remove(List.of("field", "caution", "wall_seconds", "result", "version"));
-            root.set("recirculation", kept);
-        });
+        eddies.ifPresent(found -> recirculation(root.putObject("recirculation"), found));
         root.put("caution", Cautions.TEXT);
         return root;
     }
@@ -212,6 +210,36 @@ public final class ReportNumbers {
         }
     }
 
+    private static void recirculation(ObjectNode node, Eddies eddies) {
+        node.put("held_mass_share", eddies.heldMassShare());
+        node.put("held_low", eddies.heldLow());
+        node.put("held_high", eddies.heldHigh());
+        node.put("held_after", eddies.heldAfter());
+        node.put("patience", eddies.settings().patience());
+        node.put("median_residence", eddies.medianResidence());
+        node.put("creeping_mass_share", eddies.creepingMassShare());
+        node.put("smallest_seen", eddies.smallestSeen());
+        node.put("reversed_volume_share", eddies.reversed().volumeShare());
+        node.put("uphill_volume_share", eddies.reversed().uphillShare());
+        node.put("settled", eddies.settled());
+        node.put("tracers", eddies.tracers());
+        ArrayNode zones = node.putArray("zones");
+        for (Zone zone : eddies.zones()) {
+            ObjectNode each = zones.addObject();
+            each.put("count", zone.count());
+            each.put("diameter_mm", 2e3 * zone.centre().radius());
+            each.put("sigma", zone.centre().sigma());
+            each.put("diameter_from_mm", 2e3 * zone.radius().low());
+            each.put("diameter_to_mm", 2e3 * zone.radius().high());
+            each.put("mass_share", zone.massShare());
+            each.put("volume", zone.volume());
+            each.put("mass", zone.mass());
+            each.put("sense", zone.sense().words());
+            zone.turnoverTime().ifPresent(time -> each.put("turnover_time", time));
+        }
+        eddies.notes().forEach(node.putArray("notes")::add);
+    }
+
     private static void number(ObjectNode node, String name, double value) {
         if (Double.isFinite(value)) {
             node.put(name, value);
@@ -273,28 +301,28 @@ public final class ReportNumbers {
                 "Reduced Reynolds number",
                 validity.reducedReynolds(),
                 Validity.REYNOLDS_BOUND,
-                "how much inertia counts beside viscosity in a thin film");
+                "inertia beside viscosity in a thin film");
         bound(
                 bounds,
                 "knudsen",
                 "Knudsen number",
                 validity.knudsen(),
                 Validity.KNUDSEN_BOUND,
-                "how far a molecule flies, in film thicknesses: above the bound the gas slips along the faces");
+                "flight of a molecule in film thicknesses; beyond the bound the gas slips along the faces");
         bound(
                 bounds,
                 "exit_mach",
                 "Exit Mach number",
                 validity.exitMach(),
                 Validity.MACH_BOUND,
-                "how near the leaving gas is to the speed of sound: above the bound the exit may choke");
+                "speed of the leaving gas over that of sound; beyond the bound the exit may choke");
         bound(
                 bounds,
                 "film_slope",
                 "Film slope",
                 validity.slope(),
                 Validity.SLOPE_BOUND,
-                "how steeply the film thickness changes along the face, groove walls left out");
+                "steepest change of the film thickness along the face, groove walls left out");
     }
 
     private static void bound(ArrayNode bounds, String key, String words, double value, double bound, String meaning) {

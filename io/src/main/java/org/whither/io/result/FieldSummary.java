@@ -66,6 +66,11 @@ public final class FieldSummary {
         range[1] = Math.max(range[1], value);
     }
 
+    /** The lowest and the highest pressure of the field (Pa); a copy. */
+    public double[] pressures() {
+        return pressure.clone();
+    }
+
     /** Whether the border flows of the field, before any correction, close well enough to act on. */
     public boolean closes() {
         return Math.abs(closure()) <= DOUBTFUL_CLOSURE;

@@ -15,6 +15,7 @@ import java.nio.file.Path;
 import java.util.List;
 import java.util.stream.Stream;
 import javax.imageio.ImageIO;
+import org.jsoup.Jsoup;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 
@@ -49,7 +50,19 @@ class ProgramTest {
         Path out = folder.resolve("demo");
         Run run = run("demo", "--grid", "24x32", "--width", "0.02", "--out", out.toString());
         assertEquals(0, run.status(), run.err());
-        assertEquals(List.of(".whither-results", "field.h5", "gap.png", "plan.png", "split.json"), names(out));
+        assertEquals(
+                List.of(
+                        ".whither-results",
+                        "field.h5",
+                        "gap.png",
+                        "plan.png",
+                        "relief.png",
+                        "report.html",
+                        "report.json",
+                        "split.json"),
+                names(out));
+        assertTrue(run.out().contains("The page for the plant: " + out.resolve("report.html")), run.out());
+        assertEquals(3, Jsoup.parse(out.resolve("report.html")).select("img").size());
         assertEquals(1280, ImageIO.read(out.resolve("plan.png").toFile()).getWidth());
         assertEquals(720, ImageIO.read(out.resolve("gap.png").toFile()).getHeight());
         assertTrue(run.out().contains("Of every 100 kg of supply gas"), run.out());
@@ -212,6 +225,10 @@ class ProgramTest {
             {"draw", field, "--exaggeration", "-1"},
             {"draw", field, "--view", "sky"},
             {"draw", field, "--paths", "-3"},
+            {"report"},
+            {"report", field, "--width", "2"},
+            {"report", field, "--compare"},
+            {"report", field, "--interpolation", "wishful"},
             {"sample", "nothing"},
             {"sample", "spiral", "--point", "nowhere"},
             {"sample", "spiral", "--grid", "3"},
@@ -237,7 +254,7 @@ class ProgramTest {
         byte[] bytes = Files.readAllBytes(FIELD);
         Path cut = Files.write(folder.resolve("cut.h5"), java.util.Arrays.copyOf(bytes, bytes.length / 2));
         List<String> before = names(folder);
-        for (String command : List.of("check", "split", "draw")) {
+        for (String command : List.of("check", "split", "draw", "report")) {
             for (Path file : List.of(text, cut, folder.resolve("missing.h5"), folder)) {
                 Run run = run(command, file.toString(), "--quiet", "--json");
                 assertEquals(3, run.status(), command + " " + file + ": " + run.err());
@@ -259,6 +276,7 @@ class ProgramTest {
             {"demo", "--quiet", "--out", out.toString()},
             {"split", FIELD.toString(), "--quiet", "--out", out.toString()},
             {"draw", FIELD.toString(), "--quiet", "--out", out.toString()},
+            {"report", FIELD.toString(), "--quiet", "--out", out.toString()},
             {
                 "split",
                 FIELD.toString(),

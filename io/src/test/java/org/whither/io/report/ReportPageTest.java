@@ -8,21 +8,27 @@ import static org.junit.jupiter.api.Assertions.assertTrue;
 import com.fasterxml.jackson.databind.JsonNode;
 import com.fasterxml.jackson.databind.ObjectMapper;
 import com.fasterxml.jackson.databind.node.ObjectNode;
+import java.awt.image.BufferedImage;
+import java.io.ByteArrayOutputStream;
 import java.io.IOException;
 import java.time.ZoneOffset;
 import java.time.ZonedDateTime;
+import java.util.ArrayList;
 import java.util.Base64;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
 import java.util.Set;
+import javax.imageio.ImageIO;
 import org.jsoup.Jsoup;
 import org.jsoup.nodes.Document;
 import org.jsoup.nodes.Element;
 import org.junit.jupiter.api.BeforeAll;
 import org.junit.jupiter.api.Test;
 import org.whither.eddy.AgeMap;
+import org.whither.eddy.Eddies;
+import org.whither.eddy.EddySettings;
 import org.whither.fate.Split;
 import org.whither.fate.SplitSettings;
 import org.whither.film.Conditions;
@@ -67,7 +73,15 @@ class ReportPageTest {
                         flow, new TraceSettings(Frame.ROTATING, Direction.FORWARD, 1e-5, 0.1), 4, 6, 4, 2, x -> {}))
                 : Optional.empty();
         return ReportNumbers.of(
-                new SplitResult(flow, SETTINGS, split, "field.h5", "0".repeat(64), 1), "1.2.3", age, Optional.empty());
+                new SplitResult(flow, SETTINGS, split, "field.h5", "0".repeat(64), 1),
+                "1.2.3",
+                age,
+                withAge
+                        ? Optional.of(Eddies.of(
+                                flow,
+                                new EddySettings(Frame.ROTATING, 1e-5, EddySettings.PATIENCE, 1024, 1, 2),
+                                x -> {}))
+                        : Optional.empty());
     }
 
     private static Film hostile() {
@@ -93,8 +107,8 @@ class ReportPageTest {
 
     private static String page(ObjectNode of, boolean plain) {
         List<ReportPicture> pictures = List.of(
-                new ReportPicture("The face", PNG, 1280, 720, HOSTILE, "look at " + HOSTILE),
-                new ReportPicture("The film", PNG, 1280, 720, "the film", "look"));
+                new ReportPicture("plan", "The face", PNG, 1280, 720, HOSTILE, "look at " + HOSTILE),
+                new ReportPicture("gap", "The film", PNG, 1280, 720, "the film", "look"));
         return ReportPage.of(
                 of,
                 pictures,
@@ -102,6 +116,29 @@ class ReportPageTest {
                         plain,
                         ZonedDateTime.of(2026, 12, 1, 16, 40, 0, 0, ZoneOffset.UTC),
                         "whither report 'fi<e>ld.h5'",
+                        Optional.empty(),
+                        Optional.empty()));
+    }
+
+    /** The page of the numbers of this test with four pictures of the usual size and captions of the usual length. */
+    static String fullPage() throws IOException {
+        if (numbers == null) {
+            trace();
+        }
+        ByteArrayOutputStream png = new ByteArrayOutputStream();
+        ImageIO.write(new BufferedImage(1280, 720, BufferedImage.TYPE_INT_RGB), "png", png);
+        List<ReportPicture> pictures = new ArrayList<>();
+        for (String name : List.of("plan", "relief", "gap", "meridian")) {
+            pictures.add(new ReportPicture(
+                    name, name, png.toByteArray(), 1280, 720, name, "Look at what lies where. ".repeat(8)));
+        }
+        return ReportPage.of(
+                numbers,
+                pictures,
+                new ReportPage.Settings(
+                        false,
+                        ZonedDateTime.of(2026, 12, 1, 16, 40, 0, 0, ZoneOffset.UTC),
+                        "whither report field.h5 --interpolation conserving --frame rotating --tolerance 1e-6",
                         Optional.empty(),
                         Optional.empty()));
     }
