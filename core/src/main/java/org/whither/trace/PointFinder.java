@@ -119,7 +119,22 @@ final class PointFinder {
      */
     void place(double[] step, int at, double fraction, double[] place) {
         locate(step, at, fraction, place);
-        double inSector = steadyTheta(time(step, at, fraction), place[3]) - step[at + 6] * pitch;
+        height(step, at, time(step, at, fraction), place);
+    }
+
+    /**
+     * Turns the place at the end of one step into that at the start of the next, in another piece: the same but for what
+     * jumps between pieces.
+     *
+     * @param step the next step; not modified
+     * @param place see {@link #place}; its first three numbers are overwritten
+     */
+    void enter(double[] step, double[] place) {
+        height(step, 0, step[0], place);
+    }
+
+    private void height(double[] step, int at, double since, double[] place) {
+        double inSector = steadyTheta(since, place[3]) - step[at + 6] * pitch;
         int i = (int) step[at + 3];
         int j = (int) step[at + 4];
         double h = flow.thickness(i, j, inSector, place[4]);

@@ -154,17 +154,20 @@ final class Strand {
     // ---- points within a tolerance ---------------------------------------------------------------------------------
 
     private void thin(double[] step) {
-        finder.place(step, 0, 0, start);
         if (!begun) {
             begun = true;
+            finder.place(step, 0, 0, start);
             look(step, 0, start);
             takeLatest();
-        } else if (Math.abs(start[0] - latest[2]) > 0.05 * tolerance * start[1]) {
-            if (!latestTaken) {
+        } else if (step[3] != latestStep[3] || step[4] != latestStep[4] || step[5] != latestStep[5]) {
+            finder.enter(step, start);
+            if (Math.abs(start[0] - latest[2]) > 0.05 * tolerance * start[1]) {
+                if (!latestTaken) {
+                    takeLatest();
+                }
+                look(step, 0, start);
                 takeLatest();
             }
-            look(step, 0, start);
-            takeLatest();
         }
         finder.place(step, 0, 1, end);
         double bend = finder.bend(step, start, end);
@@ -177,6 +180,9 @@ final class Strand {
             consider(step, fraction, start);
         }
         consider(step, 1, end);
+        double[] free = start;
+        start = end; // where the next step starts
+        end = free;
     }
 
     private void consider(double[] step, double fraction, double[] place) {

@@ -37,7 +37,7 @@ final class ReleaseOption {
             paramLabel = "WHERE",
             description = {
                 "Where tracers start; may be given several times (default: " + STANDARD + ").",
-                "feed:N: N over the feed, each for the same mass flow.",
+                "feed:N: N over the feed of one sector, each for the same part of the whole ring's mass flow.",
                 "at:THETA,RADIUS,SIGMA: one point; rad, m, and the height as a fraction of the film thickness, 0 at the"
                         + " rotor face. THETA is the angle of the field's own grid.",
                 "grid:BORDER,NxM: N round a sector by M across supply, inner or outer, where gas enters there (followed"

@@ -8,6 +8,7 @@ import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
+import java.util.stream.IntStream;
 import org.whither.film.Conditions;
 import org.whither.film.FilmGrid;
 import org.whither.io.result.Cautions;
@@ -112,16 +113,15 @@ final class GltfOutput implements PathOutput<List<EndedPath>> {
         return points;
     }
 
-    /** Lowest and highest speed of the paths shown (m/s). */
+    /** The speeds between which all but the slowest and the fastest fiftieth of the points shown lie (m/s). */
     private double[] speeds() {
-        double[] range = {Double.POSITIVE_INFINITY, Double.NEGATIVE_INFINITY};
-        for (EndedPath each : shown) {
-            for (int n = 0; n < Math.min(each.path().size(), MOST_POINTS); n++) {
-                range[0] = Math.min(range[0], each.path().value(n, 5));
-                range[1] = Math.max(range[1], each.path().value(n, 5));
-            }
-        }
-        return range[1] >= range[0] ? range : new double[] {0, 0};
+        double[] speeds = shown.stream()
+                .flatMapToDouble(each -> IntStream.range(0, Math.min(each.path().size(), MOST_POINTS))
+                        .mapToDouble(n -> each.path().value(n, 5)))
+                .sorted()
+                .toArray();
+        int rest = speeds.length / 50;
+        return speeds.length == 0 ? new double[] {0, 0} : new double[] {speeds[rest], speeds[speeds.length - 1 - rest]};
     }
 
     private ObjectNode extras(SealModel model, double[] range, int tubes, PathTotals totals) {
@@ -152,6 +152,9 @@ final class GltfOutput implements PathOutput<List<EndedPath>> {
         for (int n = 0; n <= 8; n++) {
             colours.add(String.format(Locale.ROOT, "#%06x", SealModel.speedColour(n / 8.0)));
         }
+        node.put(
+                "speed_scale_note",
+                "A fiftieth of the points is slower or faster than the scale and has its end colours.");
         node.put("speed_scale_source", SealModel.speedScaleSource());
         node.put("paths_shown", tubes);
         node.put("paths_followed", totals.tracers());
