@@ -41,6 +41,16 @@ enum Destination {
         return end instanceof PathEnd.StillInside ? HELD : UNKNOWN;
     }
 
+    static Destination of(org.whither.fate.Destination destination) {
+        return switch (destination) {
+            case INNER -> INNER;
+            case OUTER -> OUTER;
+            case SUPPLY -> BACK;
+            case HELD -> HELD;
+            case LOST -> UNKNOWN;
+        };
+    }
+
     /** What a legend says of it. */
     String words(Conditions conditions) {
         return switch (this) {

@@ -62,7 +62,7 @@ final class FaceWords {
 
     /** What a place of the rotor face is, or null. */
     Kind kind(double theta, double r) {
-        if (!shape.grooved() || r < grid.innerRadius() || r > grid.outerRadius()) {
+        if (!shape.rotorGrooved() || r < grid.innerRadius() || r > grid.outerRadius()) {
             return null;
         }
         FilmShape.Band dam = shape.dam();

@@ -43,7 +43,10 @@ final class FilmShape {
     private final int middleLayer;
     private final double rotorLow;
     private final double rotorHigh;
+    private final double statorLow;
+    private final double statorHigh;
     private final double leastThickness;
+    private final List<Edge> rotorEdges;
     private final List<Edge> grooveEdges;
     private final List<Band> grooveBands;
     private final Band dam;
@@ -58,6 +61,8 @@ final class FilmShape {
         this.middleLayer = k;
         double low = Double.POSITIVE_INFINITY;
         double high = Double.NEGATIVE_INFINITY;
+        double under = Double.POSITIVE_INFINITY;
+        double over = Double.NEGATIVE_INFINITY;
         double thin = Double.POSITIVE_INFINITY;
         for (int i = 0; i < grid.cellsTheta(); i++) {
             for (int j = 0; j < grid.cellsRadial(); j++) {
@@ -65,15 +70,21 @@ final class FilmShape {
                     double z = cornerRotorZ(i, j, c);
                     low = Math.min(low, z);
                     high = Math.max(high, z);
-                    thin = Math.min(thin, flow.thickness(i, j, cornerTheta(i, j, c), cornerRadius(j, c)));
+                    double h = flow.thickness(i, j, cornerTheta(i, j, c), cornerRadius(j, c));
+                    thin = Math.min(thin, h);
+                    under = Math.min(under, z + h);
+                    over = Math.max(over, z + h);
                 }
             }
         }
         this.rotorLow = low;
         this.rotorHigh = high;
+        this.statorLow = under;
+        this.statorHigh = over;
         this.leastThickness = thin;
+        this.rotorEdges = List.copyOf(findEdges(flow::rotorZ, rotorLow, rotorHigh));
         this.grooveEdges = List.copyOf(findGrooveEdges());
-        this.grooveBands = grooved() ? List.copyOf(bands(true)) : List.of();
+        this.grooveBands = !grooveEdges.isEmpty() ? List.copyOf(bands(true)) : List.of();
         this.dam = findDam();
     }
 
@@ -162,23 +173,54 @@ final class FilmShape {
         return sum;
     }
 
-    /** Whether the rotor face has grooves at all. */
+    /** Whether a face has grooves at all. */
     boolean grooved() {
-        return rotorHigh - rotorLow > GROOVE_SHARE * leastThickness
-                && !grooveEdges().isEmpty();
+        return !grooveEdges().isEmpty();
     }
 
     /**
-     * Outlines of the grooves in one sector: where the height of the rotor face jumps between neighbouring cells, and,
-     * where the face is continuous but steep, the line at half height.
+     * Outlines of the grooves of both faces in one sector: where the height of a face jumps between neighbouring cells, and,
+     * where it is continuous but steep, the line at half height.
      */
     List<Edge> grooveEdges() {
         return grooveEdges;
     }
 
+    /** What the grooves lie in, as a name for them. */
+    String groovedFaces() {
+        boolean rotor = rotorHigh - rotorLow > GROOVE_SHARE * leastThickness;
+        boolean stator = statorHigh - statorLow > GROOVE_SHARE * leastThickness;
+        return rotor && stator ? "grooves, in both faces" : stator ? "grooves, in the stator" : "grooves, in the rotor";
+    }
+
+    /** Whether the rotor face has grooves. */
+    boolean rotorGrooved() {
+        return !rotorEdges.isEmpty();
+    }
+
+    /** As {@link #grooveEdges}, of the rotor face alone. */
+    List<Edge> rotorEdges() {
+        return rotorEdges;
+    }
+
     private List<Edge> findGrooveEdges() {
+        List<Edge> edges = new ArrayList<>(rotorEdges);
+        edges.addAll(findEdges(this::statorZ, statorLow, statorHigh));
+        return edges;
+    }
+
+    private double statorZ(int i, int j, double theta, double r) {
+        return flow.rotorZ(i, j, theta, r) + flow.thickness(i, j, theta, r);
+    }
+
+    /** Height of a face at a point of a cell (m). */
+    private interface FaceHeight {
+        double at(int i, int j, double theta, double r);
+    }
+
+    private List<Edge> findEdges(FaceHeight face, double low, double high) {
         List<Edge> edges = new ArrayList<>();
-        double range = rotorHigh - rotorLow;
+        double range = high - low;
         if (range <= GROOVE_SHARE * leastThickness) {
             return edges;
         }
@@ -186,50 +228,49 @@ final class FilmShape {
         int columns = grid.cellsTheta();
         for (int i = 0; i < columns; i++) {
             for (int j = 0; j < grid.cellsRadial(); j++) {
-                if (jumpAcrossLine(i, j) > step) {
+                if (jumpAcrossLine(face, i, j) > step) {
                     edges.add(new Edge(grid.theta(i, j), grid.radius(j), grid.theta(i, j + 1), grid.radius(j + 1)));
                 }
-                if (j > 0 && jumpAcrossRing(i, j) > step) {
+                if (j > 0 && jumpAcrossRing(face, i, j) > step) {
                     edges.add(new Edge(grid.theta(i, j), grid.radius(j), grid.theta(i + 1, j), grid.radius(j)));
                 }
-                steepEdge(i, j, step, edges);
+                steepEdge(face, 0.5 * (low + high), i, j, step, edges);
             }
         }
         return edges;
     }
 
-    /** Jump of the rotor face over grid line i, in row j, at the middle of the row; line 0 is the seam (m). */
-    private double jumpAcrossLine(int i, int j) {
+    /** Jump of a face over grid line i, in row j, at the middle of the row; line 0 is the seam (m). */
+    private double jumpAcrossLine(FaceHeight face, int i, int j) {
         double r = 0.5 * (grid.radius(j) + grid.radius(j + 1));
         int before = i == 0 ? grid.cellsTheta() - 1 : i - 1;
         double beforeTheta = grid.lineTheta(before + 1, j, r);
-        return Math.abs(flow.rotorZ(before, j, beforeTheta, r) - flow.rotorZ(i, j, grid.lineTheta(i, j, r), r));
+        return Math.abs(face.at(before, j, beforeTheta, r) - face.at(i, j, grid.lineTheta(i, j, r), r));
     }
 
-    /** Jump of the rotor face over ring j of nodes, at the middle of column i (m). */
-    private double jumpAcrossRing(int i, int j) {
+    /** Jump of a face over ring j of nodes, at the middle of column i (m). */
+    private double jumpAcrossRing(FaceHeight face, int i, int j) {
         double r = grid.radius(j);
         double theta = 0.5 * (grid.theta(i, j) + grid.theta(i + 1, j));
-        return Math.abs(flow.rotorZ(i, j - 1, theta, r) - flow.rotorZ(i, j, theta, r));
+        return Math.abs(face.at(i, j - 1, theta, r) - face.at(i, j, theta, r));
     }
 
-    private void steepEdge(int i, int j, double step, List<Edge> edges) {
+    private void steepEdge(FaceHeight face, double half, int i, int j, double step, List<Edge> edges) {
         double low = Double.POSITIVE_INFINITY;
         double high = Double.NEGATIVE_INFINITY;
         for (int c = 0; c < 4; c++) {
-            double z = cornerRotorZ(i, j, c);
+            double z = face.at(i, j, cornerTheta(i, j, c), cornerRadius(j, c));
             low = Math.min(low, z);
             high = Math.max(high, z);
         }
-        double half = 0.5 * (rotorLow + rotorHigh);
         if (high - low <= step || half <= low || half >= high) {
             return;
         }
         List<double[]> crossings = new ArrayList<>();
         for (int c = 0; c < 4; c++) {
             int d = (c + 1) % 4;
-            double za = cornerRotorZ(i, j, c) - half;
-            double zb = cornerRotorZ(i, j, d) - half;
+            double za = face.at(i, j, cornerTheta(i, j, c), cornerRadius(j, c)) - half;
+            double zb = face.at(i, j, cornerTheta(i, j, d), cornerRadius(j, d)) - half;
             if (za < 0 != zb < 0) {
                 double f = za / (za - zb);
                 double ta = cornerTheta(i, j, c);
@@ -365,41 +406,5 @@ final class FilmShape {
             }
         }
         return edges;
-    }
-
-    /**
-     * The pressure of one sector as a mesh in the plane z = 0, x and y in mm.
-     *
-     * @param range ends of the colour scale (Pa)
-     */
-    Mesh pressureMesh(PictureSettings.Range range) {
-        MeshBuilder mesh = new MeshBuilder();
-        double radial = (grid.outerRadius() - grid.innerRadius()) / 24;
-        for (int i = 0; i < grid.cellsTheta(); i++) {
-            for (int j = 0; j < grid.cellsRadial(); j++) {
-                double r0 = grid.radius(j);
-                double r1 = grid.radius(j + 1);
-                double span = Math.max(
-                        grid.theta(i + 1, j) - grid.theta(i, j), grid.theta(i + 1, j + 1) - grid.theta(i, j + 1));
-                int across = (int) Math.ceil(span / Math.toRadians(1.5));
-                int along = (int) Math.ceil((r1 - r0) / radial);
-                int first = -1;
-                for (int b = 0; b <= along; b++) {
-                    double r = r0 + (r1 - r0) * b / along;
-                    double from = grid.lineTheta(i, j, r);
-                    double to = grid.lineTheta(i + 1, j, r);
-                    for (int a = 0; a <= across; a++) {
-                        double theta = from + (to - from) * a / across;
-                        double value = (pressure(i, j, theta, r) - range.low()) / (range.high() - range.low());
-                        int n = mesh.vertex(1e3 * r * Math.cos(theta), 1e3 * r * Math.sin(theta), 0, 0, 0, 1, value);
-                        first = first < 0 ? n : first;
-                        if (a > 0 && b > 0) {
-                            mesh.quad(n - across - 2, n - across - 1, n, n - 1);
-                        }
-                    }
-                }
-            }
-        }
-        return mesh.build();
     }
 }

@@ -8,8 +8,8 @@ import java.awt.image.BufferedImage;
 import java.util.ArrayList;
 import java.util.EnumSet;
 import java.util.List;
+import java.util.Optional;
 import java.util.Set;
-import java.util.function.BiConsumer;
 import org.whither.film.Face;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
@@ -26,6 +26,9 @@ public final class Gap {
      * down its floor is hidden by the land in front.
      */
     private static final double ELEVATION = Math.toRadians(54);
+
+    /** The highest that the eye is put to see the floors of grooves that are drawn deeper than they are wide (rad). */
+    private static final double HIGHEST = Math.toRadians(70);
 
     /** How far the eye is turned from the middle of the part shown towards the open end, to look into the grooves (rad). */
     private static final double ASIDE = Math.toRadians(6);
@@ -48,6 +51,7 @@ public final class Gap {
     private final FilmShape shape;
     private final FilmGrid grid;
     private final PictureSettings settings;
+    private final Viewpoint view;
     private final List<ShownPath> paths;
     private final PictureSettings.Range range;
     private final double fastest;
@@ -59,6 +63,7 @@ public final class Gap {
         this.grid = shape.grid();
         this.gap = new GapScene(shape, settings.exaggeration(), paths);
         this.settings = settings.picture();
+        this.view = settings.camera().orElse(usualView(gap));
         this.paths = ShownPath.of(paths, gap);
         double[] speeds = ShownPath.speeds(this.paths, 0.005);
         this.slowest = speeds == null ? 0 : speeds[0];
@@ -104,20 +109,89 @@ public final class Gap {
 
     /** The view that a picture would have, for tests and for overlays. */
     static Camera camera(GapScene gap, PictureSettings settings) {
-        double unit = Ink.unit(settings);
-        Rectangle window = new Rectangle(0, 0, settings.width(), settings.height());
-        // The legend below is three lines of small letters, which do not shrink as far as the picture does.
-        double below = 62 * unit + 6.9 * Math.max(Ink.LEAST_SMALL, Ink.SMALL * unit);
-        // So are the lines above it, and the names over the far rim.
-        double above = Math.max(128 * unit, 64 * unit + 4.6 * Math.max(9.6, 13 * unit));
-        Rectangle2D room = new Rectangle2D.Double(
-                74 * unit, above, settings.width() - 128 * unit, settings.height() - above - below);
+        return camera(gap, settings, usualView(gap));
+    }
+
+    /** From where a film is looked at from where nothing else is asked for. */
+    private static Viewpoint usualView(GapScene gap) {
         double aside = gap.upstreamIsTo ? ASIDE : -ASIDE;
-        return new Viewpoint(Math.PI + aside, ELEVATION, FIELD_OF_VIEW).fit(gap.extent(), window, room);
+        return new Viewpoint(Math.PI + aside, gap.elevation(ELEVATION, HIGHEST), FIELD_OF_VIEW);
+    }
+
+    /**
+     * From where a look into the film is taken.
+     *
+     * @param flow the film and its motion
+     * @param paths the paths that would be drawn
+     * @param settings what the picture is to be like
+     */
+    public static Viewpoint viewpoint(FilmFlow flow, List<Path> paths, GapSettings settings) {
+        return settings.camera()
+                .orElseGet(() -> usualView(new GapScene(new FilmShape(flow), settings.exaggeration(), paths)));
+    }
+
+    /** The range of speeds that a look into the film would show (m/s); empty where it shows no path. */
+    public static Optional<PictureSettings.Range> speedRange(FilmFlow flow, List<Path> paths, GapSettings settings) {
+        Gap gap = new Gap(flow, paths, settings);
+        return gap.paths.isEmpty() ? Optional.empty() : Optional.of(gap.range);
+    }
+
+    static Camera camera(GapScene gap, PictureSettings settings, Viewpoint view) {
+        Rectangle window = new Rectangle(0, 0, settings.width(), settings.height());
+        BufferedImage blank = new BufferedImage(8, 8, BufferedImage.TYPE_INT_RGB);
+        try (Ink ink = new Ink(blank, settings)) {
+            double u = ink.unit;
+            double names = ink.height(ink.heading) + ink.height(ink.small);
+            Page page = page(ink, gap, settings);
+            double top = page.top + names + 22 * u;
+            // Under the front rim: what the rotor does, and the side of the bore; beside them the colour bar.
+            double foot = Math.max(2 * names + 26 * u, barHeight(ink));
+            double bottom = page.bottom - fullLegend(ink, page, gap).height() - foot;
+            Rectangle2D room = new Rectangle2D.Double(74 * u, top, settings.width() - 128 * u, bottom - top);
+            return view.fit(gap.extent(), window, room);
+        }
+    }
+
+    private static Page page(Ink ink, GapScene gap, PictureSettings settings) {
+        return new Page(ink, settings, Words.facts(gap.film()), exaggerationWords(gap));
+    }
+
+    /** How much room the colour bar takes with its words (pixels). */
+    private static double barHeight(Ink ink) {
+        return 30 * ink.unit + 1.2 * ink.height(ink.small) + 2 * ink.height(ink.heading);
+    }
+
+    /** A legend with everything that a look into the film may have to explain: the room that is kept for it. */
+    private static Legend fullLegend(Ink ink, Page page, GapScene gap) {
+        Set<Destination> all = EnumSet.of(Destination.INNER, Destination.OUTER);
+        return legend(ink, page, gap, all, true, true, 1e-3);
+    }
+
+    private static Legend legend(
+            Ink ink, Page page, GapScene gap, Set<Destination> seen, boolean ends, boolean goesOn, double every) {
+        Legend legend = new Legend(ink, page.right - page.left);
+        for (Destination destination : seen) {
+            legend.add(destination, destination.words(gap.film().conditions()));
+        }
+        if (ends) {
+            legend.addFilledHead("the path leaves the film");
+        }
+        if (goesOn) {
+            legend.addOpenHead("it goes on outside the part shown");
+        }
+        if (ends || goesOn) {
+            legend.add(
+                    (x, y) -> {
+                        Ink now = legend.ink();
+                        now.mark(Destination.HELD.marker(x, y, 7 * now.unit), 0xf4f4f2, now.unit);
+                    },
+                    "one marker each " + time(every) + "; tubes not to size");
+        }
+        return legend.addLine(GapScene.STATOR, "edge of the cut-away stator");
     }
 
     private BufferedImage draw() {
-        Camera camera = camera(gap, settings);
+        Camera camera = camera(gap, settings, view);
         List<Scene.Item> items = new ArrayList<>(gap.rings());
         items.addAll(gap.paths(paths, range, every));
         Scene scene = new Scene(items, LIGHT);
@@ -134,25 +208,20 @@ public final class Gap {
 
     private void page(Ink ink) {
         double u = ink.unit;
-        double margin = 26 * u;
-        double room = settings.width() - 2 * margin;
-        double titleBase = margin + ink.ascent(ink.title);
-        double factsBase = titleBase + 9 * u + ink.ascent(ink.body);
-        double captionBase = factsBase + 11 * u + ink.ascent(ink.body);
-        ink.write(ink.title, ink.text, ink.fitted(ink.title, settings.title(), room), margin, titleBase, Ink.Side.LEFT);
-        String facts = Words.facts(shape.flow().film());
-        ink.writeIn(room, ink.body, ink.faint, facts, margin, factsBase);
-        String drawn = exaggerationWords();
-        ink.writeIn(room, ink.heading, ink.text, drawn, margin, captionBase);
-
-        double cautionBase = settings.height() - 14 * u;
-        ink.caution(room, margin, cautionBase);
-        double barBase = cautionBase - ink.ascent(ink.small) - 12 * u - 2.1 * ink.ascent(ink.small) - 16 * u;
+        Page page = page(ink, gap, settings);
+        page.write(ink);
+        Set<Destination> seen = EnumSet.noneOf(Destination.class);
+        paths.forEach(path -> seen.add(path.destination()));
+        boolean ends = paths.stream().anyMatch(ShownPath::whole);
+        boolean goesOn = paths.stream().anyMatch(path -> !path.whole());
+        Legend legend = legend(ink, page, gap, seen, ends, goesOn, every);
+        double legendTop = page.bottom - legend.height();
+        legend.draw(ink, page.left, legendTop);
         if (!paths.isEmpty()) {
             double length = 0.33 * settings.width();
-            Rectangle2D bar = new Rectangle2D.Double(settings.width() - margin - length, barBase, length, 12 * u);
+            double y = legendTop - 12 * u - ink.ascent(ink.small) - 14 * u;
             ink.colourBar(
-                    bar,
+                    new Rectangle2D.Double(page.right - length, y, length, 12 * u),
                     ColourScale.SPEED,
                     range.low(),
                     range.high(),
@@ -160,89 +229,9 @@ public final class Gap {
                     fastest > range.high() + 1e-9,
                     "speed of the gas " + Words.frame(settings.speedFrame()) + ", m/s");
         }
-        legend(ink, margin, barBase + 12 * u - 2.15 * ink.height(ink.small), 0.62 * settings.width() - margin);
     }
 
-    /** An entry of the legend: its sign, drawn about a point, and its words. */
-    private record Entry(BiConsumer<Double, Double> sign, String words) {}
-
-    /** Three rows at the foot, column by column. */
-    private void legend(Ink ink, double left, double firstBase, double room) {
-        double u = ink.unit;
-        var conditions = shape.flow().film().conditions();
-        List<Entry> entries = new ArrayList<>();
-        Set<Destination> seen = EnumSet.noneOf(Destination.class);
-        paths.forEach(path -> seen.add(path.destination()));
-        for (Destination destination : seen) {
-            entries.add(new Entry(
-                    (x, y) -> ink.mark(destination.marker(x, y, 10 * u), destination.colour(), u),
-                    destination.words(conditions)));
-        }
-        boolean ends = paths.stream().anyMatch(ShownPath::whole);
-        boolean goesOn = paths.stream().anyMatch(path -> !path.whole());
-        if (ends) {
-            entries.add(new Entry((x, y) -> filledHead(ink, x, y), "the path leaves the film"));
-        }
-        if (goesOn) {
-            entries.add(new Entry((x, y) -> openHead(ink, x, y), "it goes on outside the part shown"));
-        }
-        if (!paths.isEmpty()) {
-            entries.add(new Entry(
-                    (x, y) -> ink.mark(Destination.HELD.marker(x, y, 7 * u), 0xf4f4f2, u),
-                    "one marker each " + time(every) + "; tubes not to size"));
-        }
-        entries.add(new Entry(
-                (x, y) -> {
-                    ink.colour(GapScene.STATOR);
-                    ink.stroke(2.2 * u);
-                    ink.line(x - 7 * u, y, x + 7 * u, y);
-                },
-                "edge of the cut-away stator"));
-        double pitch = 1.18 * ink.height(ink.small);
-        double sign = 18 * u;
-        int rows = 3;
-        double x = left;
-        for (int first = 0; first < entries.size(); first += rows) {
-            double wide = 0;
-            for (int n = first; n < Math.min(entries.size(), first + rows); n++) {
-                double y = firstBase + (n - first) * pitch;
-                Entry entry = entries.get(n);
-                double most = left + room - x - sign;
-                if (most < 3 * ink.small.getSize2D()) {
-                    continue;
-                }
-                entry.sign().accept(x + 7 * u, y - 0.35 * ink.small.getSize2D());
-                String words = ink.fitted(ink.small, entry.words(), most);
-                ink.write(ink.small, ink.text, words, x + sign, y, Ink.Side.LEFT);
-                wide = Math.max(wide, ink.width(ink.small, words));
-            }
-            x += sign + wide + 18 * u;
-        }
-    }
-
-    private static void filledHead(Ink ink, double x, double y) {
-        double u = ink.unit;
-        ink.arrow(
-                new Point2D[] {
-                    new Point2D.Double(x - 8 * u, y), new Point2D.Double(x, y), new Point2D.Double(x + 7 * u, y)
-                },
-                1.8 * u,
-                ColourScale.SPEED.colour(0.35));
-    }
-
-    private static void openHead(Ink ink, double x, double y) {
-        double u = ink.unit;
-        ink.colour(ColourScale.SPEED.colour(0.35));
-        ink.stroke(1.8 * u);
-        ink.line(x - 8 * u, y, x - 1 * u, y);
-        Path2D.Double head = new Path2D.Double();
-        head.moveTo(x, y - 4.5 * u);
-        head.lineTo(x + 7 * u, y);
-        head.lineTo(x, y + 4.5 * u);
-        ink.pen.draw(head);
-    }
-
-    private String exaggerationWords() {
+    private static String exaggerationWords(GapScene gap) {
         double factor = gap.exaggeration;
         if (factor == 1) {
             return "Drawn true to scale  ·  " + gap.part();

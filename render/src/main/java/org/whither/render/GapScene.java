@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
 import org.whither.film.Face;
+import org.whither.film.Film;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
 import org.whither.film.Frame;
@@ -184,6 +185,54 @@ final class GapScene {
         return flow.rotorZ(i, j, theta, r) + flow.thickness(i, j, theta, r);
     }
 
+    /**
+     * The elevation from which most of the narrowest groove's floor is seen over the land in front of it, looking straight
+     * across the groove, within two bounds (rad).
+     */
+    double elevation(double least, double most) {
+        double depth = height(shape.rotorHigh()) - height(shape.rotorLow());
+        double narrow = Double.POSITIVE_INFINITY;
+        for (FilmShape.Band band : shape.grooveBands()) {
+            narrow = Math.min(narrow, grooveWidth(0.5 * (band.from() + band.to())));
+        }
+        if (depth <= 0 || Double.isInfinite(narrow)) {
+            return least;
+        }
+        return Math.max(least, Math.min(most, Math.atan2(depth, SHADED * narrow)));
+    }
+
+    /** Share of a groove's floor that the land in front of it may hide. */
+    private static final double SHADED = 0.4;
+
+    /** Width of a groove across itself, about, at a radius: what a ray along the radius runs over its floor (mm). */
+    private double grooveWidth(double r) {
+        double half = 0.5 * (shape.rotorLow() + shape.rotorHigh());
+        int steps = 720;
+        int floor = 0;
+        int edges = 0;
+        boolean before = rotorAt(from, r) < half;
+        for (int n = 1; n <= steps; n++) {
+            boolean in = rotorAt(from + grid.pitch() * n / steps, r) < half;
+            floor += in ? 1 : 0;
+            edges += in != before ? 1 : 0;
+            before = in;
+        }
+        double along = 1e3 * r * grid.pitch() * floor / steps / Math.max(1, edges / 2);
+        // The edges lean: of a spiral at an angle to the circle the width across is the smaller part.
+        double lean = 0;
+        for (FilmShape.Edge edge : shape.rotorEdges()) {
+            if (edge.r0() != edge.r1()) {
+                lean = Math.max(lean, Math.abs(r * (edge.theta1() - edge.theta0()) / (edge.r1() - edge.r0())));
+            }
+        }
+        return floor == 0 ? Double.POSITIVE_INFINITY : along / Math.hypot(1, lean);
+    }
+
+    /** The film. */
+    Film film() {
+        return flow.film();
+    }
+
     /** Which part of the ring is shown, in words. */
     String part() {
         double sectors = (to - from) / grid.pitch();
@@ -311,7 +360,7 @@ final class GapScene {
         double r1 = grid.radius(j + 1);
         double span =
                 Math.max(grid.theta(i + 1, j) - grid.theta(i, j), grid.theta(i + 1, j + 1) - grid.theta(i, j + 1));
-        double fine = (grid.outerRadius() - grid.innerRadius()) / (shape.grooved() ? 44 : 24);
+        double fine = (grid.outerRadius() - grid.innerRadius()) / (shape.rotorGrooved() ? 44 : 24);
         int across = (int) Math.ceil(span * r1 / fine);
         int along = (int) Math.ceil((r1 - r0) / fine);
         double midTheta = between(i, j, 0.5 * (r0 + r1), 0.5);
@@ -609,7 +658,7 @@ final class GapScene {
             // A hair inside, so that a cut along a grid line takes the cells within.
             double look = theta - side * 1e-9;
             for (int j = 0; j < grid.cellsRadial(); j++) {
-                double[] r = crossings(j, look);
+                double[] r = Section.crossings(grid, j, look);
                 for (int n = 0; n + 1 < r.length; n++) {
                     double mid = 0.5 * (r[n] + r[n + 1]);
                     double turn = grid.intoSector(look, j, mid) * grid.pitch();
@@ -625,27 +674,6 @@ final class GapScene {
             }
         }
         return mesh;
-    }
-
-    /** Radii of row j, ends included and rising, at which the ray at an angle crosses grid lines. */
-    private double[] crossings(int j, double theta) {
-        List<Double> radii = new ArrayList<>();
-        double r0 = grid.radius(j);
-        double r1 = grid.radius(j + 1);
-        radii.add(r0);
-        radii.add(r1);
-        long first = Math.min(grid.intoSector(theta, j, r0), grid.intoSector(theta, j, r1)) - 1;
-        long last = Math.max(grid.intoSector(theta, j, r0), grid.intoSector(theta, j, r1)) + 1;
-        for (long n = first; n <= last; n++) {
-            for (int i = 0; i < grid.ni(); i++) {
-                double a = grid.theta(i, j) + n * grid.pitch() - theta;
-                double b = grid.theta(i, j + 1) + n * grid.pitch() - theta;
-                if (a < 0 != b < 0) {
-                    radii.add(r0 + a / (a - b) * (r1 - r0));
-                }
-            }
-        }
-        return radii.stream().mapToDouble(Double::doubleValue).sorted().toArray();
     }
 
     /** Thin rods along the edges of the stator face where the stator is cut away. */
@@ -735,7 +763,7 @@ final class GapScene {
         int reach = 1 + (int) Math.ceil(Math.abs(grid.theta(0, grid.nj() - 1) - grid.theta(0, 0)) / grid.pitch());
         for (int n = sector(from) - reach; n <= sector(to) + reach; n++) {
             double turn = n * grid.pitch();
-            for (FilmShape.Edge edge : shape.grooveEdges()) {
+            for (FilmShape.Edge edge : shape.rotorEdges()) {
                 segment(mesh, edge.theta0() + turn, edge.r0(), edge.theta1() + turn, edge.r1(), radius, false);
             }
         }

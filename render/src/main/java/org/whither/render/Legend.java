@@ -11,7 +11,7 @@ final class Legend {
     /** A sign, drawn about a point, and its words. */
     private record Entry(BiConsumer<Double, Double> sign, String words) {}
 
-    private final Ink ink;
+    private Ink ink;
     private final double room;
     private final List<Entry> entries = new ArrayList<>();
 
@@ -105,8 +105,9 @@ final class Legend {
         return entries.isEmpty() ? 0 : place(0, 0, false) * pitch();
     }
 
-    /** Draws it below a height. */
-    void draw(double left, double top) {
+    /** Draws it below a height, with an ink like the one it was measured with. */
+    void draw(Ink with, double left, double top) {
+        ink = with;
         place(left, top, true);
     }
 

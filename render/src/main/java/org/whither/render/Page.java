@@ -8,7 +8,6 @@ import java.util.List;
  * foot. Words that are too long for a line take more lines, and the scene what is left.
  */
 final class Page {
-    private final Ink ink;
     private final List<String> title;
     private final List<String> facts;
     private final List<String> drawn;
@@ -34,7 +33,6 @@ final class Page {
      * @param drawn what is drawn and to which scale, or empty
      */
     Page(Ink ink, PictureSettings settings, String facts, String drawn) {
-        this.ink = ink;
         double u = ink.unit;
         left = 26 * u;
         right = settings.width() - left;
@@ -57,14 +55,14 @@ final class Page {
     }
 
     /** Writes the head and the foot. */
-    void write() {
-        write(titleFont, ink.text, title, titleBase);
-        write(ink.body, ink.faint, facts, factsBase);
-        write(ink.heading, ink.text, drawn, drawnBase);
-        write(ink.small, ink.faint, caution, cautionBase);
+    void write(Ink ink) {
+        write(ink, titleFont, ink.text, title, titleBase);
+        write(ink, ink.body, ink.faint, facts, factsBase);
+        write(ink, ink.heading, ink.text, drawn, drawnBase);
+        write(ink, ink.small, ink.faint, caution, cautionBase);
     }
 
-    private void write(Font font, int colour, List<String> lines, double base) {
+    private void write(Ink ink, Font font, int colour, List<String> lines, double base) {
         for (int n = 0; n < lines.size(); n++) {
             ink.write(font, colour, lines.get(n), left, base + n * ink.height(font), Ink.Side.LEFT);
         }

@@ -63,9 +63,9 @@ public record PictureSettings(
         Objects.requireNonNull(speedFrame);
         Objects.requireNonNull(pressureRange);
         Objects.requireNonNull(speedRange);
-        if (width < LEAST_WIDTH || height < LEAST_HEIGHT || (double) width / height < 1.2 || width > 4L * height) {
+        if (width < LEAST_WIDTH || height < LEAST_HEIGHT || (double) width / height < 0.8 || width > 4L * height) {
             throw new IllegalArgumentException("picture of " + width + " × " + height + " pixels; expected at least "
-                    + LEAST_WIDTH + " × " + LEAST_HEIGHT + ", and between 1.2 and 4 times as wide as high");
+                    + LEAST_WIDTH + " × " + LEAST_HEIGHT + ", and between 0.8 and 4 times as wide as high");
         }
     }
 
@@ -80,6 +80,24 @@ public record PictureSettings(
                 Frame.ROTATING,
                 Optional.empty(),
                 Optional.empty());
+    }
+
+    /**
+     * Starts what draws pictures, which drawing does by itself: to fail early.
+     *
+     * @throws NoOpenGL where pictures cannot be drawn on this machine
+     */
+    public static void startDrawing() {
+        HeadlessGL.start();
+    }
+
+    /**
+     * Checks that the memory can hold the picture.
+     *
+     * @throws IllegalArgumentException where it cannot, in a sentence that says how to mend it
+     */
+    public void checkMemory() {
+        Canvas.checkSize(width, height);
     }
 
     /** The same at another size (pixels). */

@@ -1,61 +1,70 @@
 package org.whither.render;
 
-import java.awt.BasicStroke;
 import java.awt.Rectangle;
 import java.awt.Shape;
-import java.awt.geom.Area;
-import java.awt.geom.Line2D;
 import java.awt.geom.Path2D;
 import java.awt.geom.Point2D;
-import java.awt.geom.Rectangle2D;
 import java.awt.image.BufferedImage;
 import java.util.ArrayList;
+import java.util.EnumMap;
 import java.util.EnumSet;
+import java.util.LinkedHashMap;
 import java.util.List;
+import java.util.Map;
+import java.util.Optional;
 import java.util.Set;
+import org.whither.eddy.AgeMap;
+import org.whither.fate.DestinationMap;
 import org.whither.fate.FedPoint;
+import org.whither.film.Conditions;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
+import org.whither.film.Frame;
 import org.whither.trace.Path;
 import org.whither.trace.PathPoint;
 
 /**
- * The face seen along the shaft: on the left the whole ring with the film pressure in colour, grooves, feed and
- * footprints of paths; on the right one sector enlarged, with isobars; below it the feed unrolled, with a marker for each
- * point that says where its gas goes.
+ * The face seen along the shaft, with the pressure, the film thickness, the speed, the age or the destination of the gas
+ * in colour, and grooves, feed and footprints of paths: the whole ring with one sector enlarged and its feed unrolled, or
+ * the ring alone, or one sector unrolled.
  *
- * <p>Angles are those of the frame in which the film is steady; lengths in both views are true to scale.
+ * <p>Angles are those of the frame in which the film is steady; lengths are true to scale, of an unrolled sector at the
+ * middle radius.
  */
 public final class Plan {
-    /** Most isobars in the enlarged view. */
-    private static final int ISOBARS = 12;
-
     /** How far round a footprint is drawn at most: a longer one would run over its own beginning (rad). */
     private static final double FULL = Math.toRadians(330);
 
     /** Of lines over the pressure. */
-    private static final int DARK = 0x14181c;
+    static final int DARK = 0x14181c;
 
     private final FilmShape shape;
     private final FilmGrid grid;
+    private final PlanSettings plan;
     private final PictureSettings settings;
-    private final List<FedPoint> fed;
+    private final PlanData data;
     private final List<Path> paths;
+    private final FaceValues values;
     private final PictureSettings.Range found;
     private final PictureSettings.Range range;
 
-    private Plan(FilmFlow flow, List<FedPoint> fed, List<Path> paths, PictureSettings settings) {
+    private Plan(FilmFlow flow, PlanData data, PlanSettings plan) {
         this.shape = new FilmShape(flow);
         this.grid = shape.grid();
-        this.settings = settings;
-        this.fed = fed;
-        this.paths = paths;
-        this.found = shape.pressureRange();
-        this.range = settings.pressureRange().orElse(found);
+        this.plan = plan;
+        this.settings = plan.picture();
+        this.data = data;
+        this.paths = data.paths();
+        this.values = new FaceValues(shape, plan.quantity(), settings.speedFrame(), data.ages());
+        this.found = values.range();
+        this.range = plan.range().orElse(values.roundRange());
+        if (plan.quantity() == Quantity.DESTINATION && data.destinations().isEmpty()) {
+            throw new IllegalArgumentException("a plan of destinations without a map of them; expected one");
+        }
     }
 
     /**
-     * Draws a plan.
+     * Draws a plan of the pressure: the ring and one sector enlarged.
      *
      * @param flow the film and its motion
      * @param fed points of the feed with the ends of their tracers; may be empty
@@ -63,87 +72,136 @@ public final class Plan {
      * @param settings what the picture is to be like
      * @return the picture, opaque
      * @throws NoOpenGL where pictures cannot be drawn on this machine
-     * @throws IllegalArgumentException where the size is beyond what this machine draws
+     * @throws IllegalArgumentException where the size is beyond the memory
      */
     public static BufferedImage draw(FilmFlow flow, List<FedPoint> fed, List<Path> paths, PictureSettings settings) {
+        return draw(flow, PlanData.of(fed, paths), PlanSettings.standard(settings));
+    }
+
+    /**
+     * Draws a plan.
+     *
+     * @param flow the film and its motion
+     * @param data what was computed of it
+     * @param settings what the picture is to be like
+     * @return the picture, opaque
+     * @throws NoOpenGL where pictures cannot be drawn on this machine
+     * @throws IllegalArgumentException where the size is beyond the memory, or what is to be shown is missing
+     */
+    public static BufferedImage draw(FilmFlow flow, PlanData data, PlanSettings settings) {
         HeadlessGL.start();
-        return new Plan(flow, List.copyOf(fed), List.copyOf(paths), settings).draw();
+        return new Plan(flow, data, settings).draw();
+    }
+
+    /**
+     * The range of a quantity that a plan would show without a wanted one (SI).
+     *
+     * @param ages needed for the age
+     */
+    public static PictureSettings.Range range(FilmFlow flow, Quantity quantity, Frame frame, Optional<AgeMap> ages) {
+        return new FaceValues(new FilmShape(flow), quantity, frame, ages).roundRange();
     }
 
     /** The layout that a plan would have, for tests and for overlays. */
     static PlanLayout layout(FilmShape shape, PictureSettings settings, boolean withFeed, boolean withLegend) {
+        return layout(shape, PlanSettings.standard(settings), withFeed, withLegend);
+    }
+
+    static PlanLayout layout(FilmShape shape, PlanSettings plan, boolean withFeed, boolean withLegend) {
         BufferedImage page = new BufferedImage(8, 8, BufferedImage.TYPE_INT_RGB);
-        try (Ink ink = new Ink(page, settings)) {
-            return new PlanLayout(shape, settings, ink, withFeed, withLegend);
+        try (Ink ink = new Ink(page, plan.picture())) {
+            return new PlanLayout(shape, plan, ink, withFeed, withLegend);
         }
     }
 
     private BufferedImage draw() {
-        PlanLayout layout = layout(shape, settings, withFeed(), withFeed() || !paths.isEmpty());
+        boolean withLegend = withFeed() || !paths.isEmpty() || plan.quantity() == Quantity.DESTINATION;
+        PlanLayout layout = layout(shape, plan, withFeed(), withLegend);
         BufferedImage image;
         try (Canvas canvas = new Canvas(settings.width(), settings.height())) {
-            Scene scene = scene();
-            image = canvas.draw(
-                    Ink.paper(settings),
-                    List.of(new Canvas.View(scene, layout.ring), new Canvas.View(scene, layout.sector)));
+            List<Canvas.View> views = new ArrayList<>();
+            if (layout.ringWindow != null) {
+                views.add(new Canvas.View(scene(layout.ringChart, 0, grid.sectors() - 1), layout.ring));
+            }
+            if (layout.sectorWindow != null) {
+                int reach = reach(layout);
+                Chart chart = layout.sectorChart;
+                int first = chart.isUnrolled() ? -reach : 0;
+                int last = chart.isUnrolled() ? reach : grid.sectors() - 1;
+                views.add(new Canvas.View(scene(chart, first, last), layout.sector));
+            }
+            image = canvas.draw(Ink.paper(settings), views);
         }
         try (Ink ink = new Ink(image, settings)) {
-            page(ink, layout);
-            ring(ink, layout);
-            sector(ink, layout);
-            if (layout.feedWindow != null) {
-                feed(ink, layout);
+            layout.page.write(ink);
+            bar(ink, layout);
+            if (layout.ringWindow != null) {
+                ring(ink, layout);
             }
-            if (withFeed() || !paths.isEmpty()) {
-                legend(ink, layout);
+            if (layout.sectorWindow != null) {
+                sector(ink, layout);
+            }
+            new PlanNames(shape).draw(ink, layout);
+            if (layout.feedWindow != null) {
+                new FeedStrip(shape, settings, data.fed()).draw(ink, layout);
+            }
+            if (withLegend) {
+                Legend legend = new Legend(ink, layout.legendRoom());
+                fill(legend, layout);
+                legend.draw(ink, layout.legendLeft, layout.legendTop);
             }
         }
         return image;
     }
 
     private boolean withFeed() {
-        return shape.feed() != null && !fed.isEmpty();
+        return plan.part() == Part.BOTH && shape.feed() != null && !data.fed().isEmpty();
     }
 
-    /** The pressure over the whole ring: one mesh of a sector, placed as often as there are sectors. */
-    private Scene scene() {
-        Mesh mesh = shape.pressureMesh(range);
-        Scene.Material material = Scene.Material.scaled(ColourScale.PRESSURE, false);
+    /** One mesh of a sector, placed as often as sectors are shown. */
+    private Scene scene(Chart chart, int first, int last) {
         List<Scene.Item> items = new ArrayList<>();
-        for (int n = 0; n < grid.sectors(); n++) {
-            items.add(new Scene.Item(mesh, material, n * grid.pitch()));
+        Map<Mesh, Scene.Material> meshes = new LinkedHashMap<>();
+        if (plan.quantity() == Quantity.DESTINATION) {
+            Map<org.whither.fate.Destination, MeshBuilder> built = new EnumMap<>(org.whither.fate.Destination.class);
+            values.destinations(chart, data.destinations().orElseThrow(), built);
+            built.forEach((destination, mesh) -> meshes.put(
+                    mesh.build(),
+                    Scene.Material.plain(Destination.of(destination).colour(), 1)));
+        } else {
+            meshes.put(
+                    values.mesh(chart, range),
+                    Scene.Material.scaled(plan.quantity().scale(), false));
+        }
+        for (int n = first; n <= last; n++) {
+            int sector = n;
+            meshes.forEach((mesh, material) -> items.add(chart.item(mesh, material, sector, grid.pitch())));
         }
         return new Scene(items, Scene.Light.from(0, 0, 1));
     }
 
-    private void page(Ink ink, PlanLayout layout) {
-        double room = layout.rightEdge - layout.margin;
-        ink.write(
-                ink.title,
-                ink.text,
-                ink.fitted(ink.title, settings.title(), room),
-                layout.margin,
-                layout.titleBase,
-                Ink.Side.LEFT);
-        String facts = Words.facts(shape.flow().film());
-        ink.writeIn(room, ink.body, ink.faint, facts, layout.margin, layout.factsBase);
-        ink.caution(room, layout.margin, layout.cautionBase);
+    private void bar(Ink ink, PlanLayout layout) {
+        if (plan.quantity() == Quantity.DESTINATION) {
+            return;
+        }
+        double unit = plan.quantity().unit();
+        double hair = 1e-6 * (range.high() - range.low());
         ink.colourBar(
                 layout.pressureBar,
-                ColourScale.PRESSURE,
-                range.low() / 1e5,
-                range.high() / 1e5,
-                found.low() < range.low() - 1,
-                found.high() > range.high() + 1,
-                "film pressure, bar absolute");
+                plan.quantity().scale(),
+                range.low() * unit,
+                range.high() * unit,
+                found.low() < range.low() - hair,
+                found.high() > range.high() + hair,
+                plan.quantity().caption(settings.speedFrame()));
     }
 
     private void ring(Ink ink, PlanLayout layout) {
         Rectangle window = layout.ringWindow;
         Shape before = ink.pen.getClip();
         ink.pen.clip(window);
-        outlines(ink, layout.ring, Math.max(0.75, 0.95 * ink.unit), 0, grid.sectors() - 1, false);
-        footprints(ink, layout.ring, 1.5 * ink.unit);
+        outlines(ink, layout.ringChart, Math.max(0.75, 0.95 * ink.unit), 0, grid.sectors() - 1, false);
+        footprints(ink, layout.ringChart, 1.5 * ink.unit);
         ink.pen.setClip(before);
 
         var conditions = shape.flow().film().conditions();
@@ -151,17 +209,20 @@ public final class Plan {
         double x = window.x;
         double y = window.y + ink.ascent(ink.body);
         // The corner of the window that the ring leaves free.
-        String outerSide = ink.fitted(ink.heading, conditions.outerSide() + " side", 0.37 * window.width);
+        String outerSide =
+                ink.first(ink.heading, 0.37 * window.width, conditions.outerSide() + " side", conditions.outerSide());
         ink.write(ink.heading, ink.text, outerSide, x, y, Ink.Side.LEFT);
-        ink.write(
-                ink.small, ink.faint, "outside, " + Words.bar(conditions.pressureOuter()), x, y + line, Ink.Side.LEFT);
+        String outside = Words.bar(conditions.pressureOuter());
+        outside = ink.first(ink.small, 0.27 * window.width, "outside, " + outside, outside);
+        ink.write(ink.small, ink.faint, outside, x, y + line, Ink.Side.LEFT);
 
         double cx = window.getCenterX();
         double cy = window.getCenterY();
         double hole = 1e3 * grid.innerRadius() * layout.ringScale;
         double most = 1.5 * hole;
-        String inner = ink.fitted(ink.heading, conditions.innerSide() + " side", most);
-        String inside = "inside, " + Words.bar(conditions.pressureInner());
+        String inner = ink.first(ink.heading, most, conditions.innerSide() + " side", conditions.innerSide());
+        String inside = Words.bar(conditions.pressureInner());
+        inside = ink.first(ink.small, most, "inside, " + inside, inside);
         ink.write(ink.heading, ink.text, inner, cx, cy + 0.42 * hole, Ink.Side.MIDDLE);
         ink.write(ink.small, ink.faint, inside, cx, cy + 0.42 * hole + line, Ink.Side.MIDDLE);
 
@@ -169,18 +230,29 @@ public final class Plan {
         double words = cy - 0.18 * hole;
         if (rate != 0) {
             ink.arrow(rotationArrow(layout.ring, rate, 0.74e3 * grid.innerRadius()), 2.4 * ink.unit, ink.text);
-            ink.write(ink.heading, ink.text, "rotor turns, " + Words.speed(rate), cx, words, Ink.Side.MIDDLE);
+            ink.write(
+                    ink.heading,
+                    ink.text,
+                    ink.first(ink.heading, most, "rotor turns, " + Words.speed(rate), Words.speed(rate)),
+                    cx,
+                    words,
+                    Ink.Side.MIDDLE);
         } else {
             ink.write(ink.heading, ink.text, "rotor stands still", cx, words, Ink.Side.MIDDLE);
         }
         String seen = settings.seenFrom().words();
-        ink.write(ink.fitting(ink.small, seen, most), ink.faint, seen, cx, words + line, Ink.Side.MIDDLE);
+        List<String> lines = ink.lines(ink.small, seen, most, 2);
+        for (int n = 0; n < lines.size(); n++) {
+            ink.write(ink.small, ink.faint, lines.get(n), cx, words + (n + 1) * line, Ink.Side.MIDDLE);
+        }
 
         scaleBar(ink, window.x, window.getMaxY() - 8 * ink.unit, layout.ringScale, 0.2 * window.width);
         // Where the enlarged view lies.
-        ink.colour(ink.text, 0.55);
-        ink.stroke(Math.max(1, 1.1 * ink.unit));
-        ink.pen.draw(sectorFrame(layout));
+        if (layout.sectorWindow != null) {
+            ink.colour(ink.text, 0.55);
+            ink.stroke(Math.max(1, 1.1 * ink.unit));
+            ink.pen.draw(sectorFrame(layout));
+        }
     }
 
     private static void scaleBar(Ink ink, double x, double y, double scale, double room) {
@@ -244,12 +316,12 @@ public final class Plan {
      *
      * @param cased whether groove edges are strong lines with a light casing, so that isobars are not taken for them
      */
-    private void outlines(Ink ink, Camera camera, double width, int first, int last, boolean cased) {
+    private void outlines(Ink ink, Chart chart, double width, int first, int last, boolean cased) {
         Path2D.Double grooves = new Path2D.Double();
         Path2D.Double ports = new Path2D.Double();
         for (int n = first; n <= last; n++) {
-            add(grooves, camera, shape.grooveEdges(), n * grid.pitch());
-            add(ports, camera, shape.feedEdges(), n * grid.pitch());
+            chart.add(grooves, shape.grooveEdges(), n * grid.pitch());
+            chart.add(ports, shape.feedEdges(), n * grid.pitch());
         }
         if (cased) {
             grooveLine(ink, grooves);
@@ -264,18 +336,18 @@ public final class Plan {
         if (feed != null) {
             ink.pen.draw(ports);
             if (shape.feedEdges().isEmpty()) {
-                circle(ink, camera, feed.from());
-                circle(ink, camera, feed.to());
+                ink.pen.draw(chart.circle(feed.from()));
+                ink.pen.draw(chart.circle(feed.to()));
             }
         }
         ink.colour(ink.text);
         ink.stroke(1.4 * width);
-        circle(ink, camera, grid.innerRadius());
-        circle(ink, camera, grid.outerRadius());
+        ink.pen.draw(chart.circle(grid.innerRadius()));
+        ink.pen.draw(chart.circle(grid.outerRadius()));
     }
 
     /** Draws an edge of a groove in the enlarged view. */
-    private static void grooveLine(Ink ink, Shape line) {
+    static void grooveLine(Ink ink, Shape line) {
         ink.colour(0xffffff, 0.95);
         ink.stroke(4.4 * ink.unit);
         ink.pen.draw(line);
@@ -284,40 +356,9 @@ public final class Plan {
         ink.pen.draw(line);
     }
 
-    private static void add(Path2D.Double path, Camera camera, List<FilmShape.Edge> edges, double turn) {
-        for (FilmShape.Edge edge : edges) {
-            double span = edge.theta1() - edge.theta0();
-            int parts = Math.max(1, (int) Math.ceil(Math.abs(span) / Math.toRadians(1)));
-            Point2D a = at(camera, edge.theta0() + turn, edge.r0());
-            path.moveTo(a.getX(), a.getY());
-            for (int n = 1; n <= parts; n++) {
-                double f = (double) n / parts;
-                Point2D b = at(camera, edge.theta0() + f * span + turn, edge.r0() + f * (edge.r1() - edge.r0()));
-                path.lineTo(b.getX(), b.getY());
-            }
-        }
-    }
-
-    private static Point2D at(Camera camera, double theta, double r) {
-        return camera.project(1e3 * r * Math.cos(theta), 1e3 * r * Math.sin(theta), 0);
-    }
-
-    private static void circle(Ink ink, Camera camera, double radius) {
-        Path2D.Double path = new Path2D.Double();
-        for (int n = 0; n <= 720; n++) {
-            Point2D p = at(camera, Math.toRadians(0.5 * n), radius);
-            if (n == 0) {
-                path.moveTo(p.getX(), p.getY());
-            } else {
-                path.lineTo(p.getX(), p.getY());
-            }
-        }
-        ink.pen.draw(path);
-    }
-
-    private void footprints(Ink ink, Camera camera, double width) {
+    private void footprints(Ink ink, Chart chart, double width) {
         for (Path path : paths) {
-            Point2D[] points = footprint(path, camera);
+            Point2D[] points = footprint(path, chart, chart.shift(path, grid));
             if (points.length < 2) {
                 continue;
             }
@@ -332,14 +373,15 @@ public final class Plan {
             ink.colour(DARK, 0.85);
             ink.stroke(width + 1.4 * ink.unit);
             ink.pen.draw(foot);
-            ink.colour(Destination.of(path.end()).colour());
+            boolean onItsOwn = plan.quantity() == Quantity.DESTINATION;
+            ink.colour(onItsOwn ? 0xffffff : Destination.of(path.end()).colour());
             ink.stroke(width);
             ink.pen.draw(foot);
         }
         for (Path path : paths) {
             if (!path.points().isEmpty() && !goesOn(path)) {
                 PathPoint end = path.points().get(path.points().size() - 1);
-                Point2D p = at(camera, end.steadyTheta(), end.radius());
+                Point2D p = chart.at(end.steadyTheta() + chart.shift(path, grid), end.radius());
                 Destination destination = Destination.of(path.end());
                 ink.mark(destination.marker(p.getX(), p.getY(), 6.5 * width), destination.colour(), 1.2 * ink.unit);
             }
@@ -356,6 +398,10 @@ public final class Plan {
 
     /** The drawn points of a path; of one that runs round and round, those of its first time round. */
     static Point2D[] footprint(Path path, Camera camera) {
+        return footprint(path, Chart.ring(camera), 0);
+    }
+
+    private static Point2D[] footprint(Path path, Chart chart, double shift) {
         List<Point2D> result = new ArrayList<>();
         List<PathPoint> points = path.points();
         for (int n = 0; n < points.size(); n++) {
@@ -369,7 +415,7 @@ public final class Plan {
                 if (Math.abs(theta - points.get(0).steadyTheta()) > FULL) {
                     return result.toArray(new Point2D[0]);
                 }
-                result.add(at(camera, theta, a.radius() + f * (b.radius() - a.radius())));
+                result.add(chart.at(theta + shift, a.radius() + f * (b.radius() - a.radius())));
             }
         }
         return result.toArray(new Point2D[0]);
@@ -395,46 +441,59 @@ public final class Plan {
 
     private void sector(Ink ink, PlanLayout layout) {
         Rectangle window = layout.sectorWindow;
-        String heading = grid.sectors() > 1
-                ? "Enlarged: one of " + grid.sectors() + " equal sectors, isobars in bar(a)"
-                : "Enlarged part of the ring, isobars in bar(a)";
-        ink.write(
-                ink.heading,
-                ink.text,
-                ink.fitted(ink.heading, heading, window.width),
-                window.x,
-                window.y - 7 * ink.unit,
-                Ink.Side.LEFT);
+        Chart chart = layout.sectorChart;
+        boolean isobars = plan.quantity() == Quantity.PRESSURE;
+        String one = grid.sectors() > 1 ? "one of " + grid.sectors() + " equal sectors" : "part of the ring";
+        String which = (chart.isUnrolled() ? "Unrolled: " : "Enlarged: ") + one;
+        double headingRoom = chart.isUnrolled() ? 0.7 * window.width : window.width;
+        String heading = isobars
+                ? ink.first(ink.heading, headingRoom, which + ", isobars in bar(a)", which)
+                : ink.first(ink.heading, headingRoom, which, one);
+        ink.write(ink.heading, ink.text, heading, window.x, window.y - 7 * ink.unit, Ink.Side.LEFT);
         Shape before = ink.pen.getClip();
         ink.pen.clip(window);
-        double half = Math.asin(Math.min(1, 0.75 * window.width / layout.sectorScale / (1e3 * grid.innerRadius())));
-        int reach = Math.min(grid.sectors() / 2 + 1, 1 + spiralReach() + (int) Math.ceil(half / grid.pitch()));
-        List<Runnable> labels = isobars(ink, layout, reach);
-        outlines(ink, layout.sector, 1.25 * ink.unit, -reach, reach, true);
-        footprints(ink, layout.sector, 2.2 * ink.unit);
+        int reach = reach(layout);
+        List<Runnable> labels = isobars ? IsobarLines.draw(ink, shape, chart, window, range, reach) : List.of();
+        if (plan.quantity() == Quantity.DESTINATION) {
+            pattern(ink, layout, reach);
+        }
+        outlines(ink, chart, 1.25 * ink.unit, -reach, reach, true);
+        if (chart.isUnrolled()) {
+            sectorBorders(ink, layout);
+        }
+        footprints(ink, chart, 2.2 * ink.unit);
         labels.forEach(Runnable::run);
         ink.pen.setClip(before);
         ink.colour(ink.line);
         ink.stroke(Math.max(1, ink.unit));
         ink.pen.draw(window);
-        names(ink, layout);
         double rate = shape.flow().film().conditions().rotationRate();
+        double wordsY = window.y + 6 * ink.unit + ink.ascent(ink.small);
         if (rate != 0) {
             // At the top of the ring +θ runs to the left, seen from the stator.
             boolean left = rate > 0 == (settings.seenFrom() == ViewingSide.STATOR);
+            String words = left ? "← rotor turns" : "rotor turns →";
+            if (chart.isUnrolled()) {
+                ink.write(ink.heading, ink.text, words, window.getMaxX(), window.y - 7 * ink.unit, Ink.Side.RIGHT);
+            } else {
+                ink.write(ink.small, ink.text, words, window.x + 8 * ink.unit, wordsY, Ink.Side.LEFT);
+            }
+        }
+        if (layout.ringWindow == null) {
+            Conditions conditions = shape.flow().film().conditions();
+            String seen = settings.seenFrom().words() + ", " + conditions.outerSide() + " side up";
             ink.write(
                     ink.small,
                     ink.faint,
-                    left ? "← rotor turns" : "rotor turns →",
-                    window.x + 8 * ink.unit,
-                    window.y + 6 * ink.unit + ink.ascent(ink.small),
-                    Ink.Side.LEFT);
+                    ink.first(
+                            ink.small,
+                            0.6 * window.width,
+                            seen,
+                            settings.seenFrom().words()),
+                    window.getMaxX(),
+                    window.getMaxY() + ink.ascent(ink.small) + 6 * ink.unit,
+                    Ink.Side.RIGHT);
         }
-        scaleBarOver(ink, layout);
-    }
-
-    private void scaleBarOver(Ink ink, PlanLayout layout) {
-        Rectangle window = layout.sectorWindow;
         scaleBar(
                 ink,
                 window.x + 10 * ink.unit,
@@ -443,414 +502,99 @@ public final class Plan {
                 0.16 * window.width);
     }
 
+    /** The destinations' markers all over a view, so that they differ by more than colour. */
+    private void pattern(Ink ink, PlanLayout layout, int reach) {
+        DestinationMap map = data.destinations().orElseThrow();
+        double apart = 26 * ink.unit;
+        double size = 7 * ink.unit;
+        double dr = 1e-3 * apart / layout.sectorScale;
+        int rows = (int) Math.max(1, Math.rint((grid.outerRadius() - grid.innerRadius()) / dr));
+        for (int row = 0; row < rows; row++) {
+            double r = grid.innerRadius() + (row + 0.5) / rows * (grid.outerRadius() - grid.innerRadius());
+            int count = (int) Math.max(1, Math.rint((2 * reach + 1) * grid.pitch() * r / dr));
+            double start = layout.middle - (reach + 0.5) * grid.pitch();
+            for (int n = 0; n < count; n++) {
+                double theta = start + (n + (row % 2 == 0 ? 0.25 : 0.75)) / count * (2 * reach + 1) * grid.pitch();
+                Destination destination = Destination.of(map.at(theta, r));
+                Point2D p = layout.sectorChart.at(theta, r);
+                ink.colour(DARK, 0.75);
+                ink.stroke(1.1 * ink.unit);
+                ink.pen.draw(destination.marker(p.getX(), p.getY(), size));
+            }
+        }
+    }
+
+    /** Fine lines where one unrolled sector begins and ends. */
+    private void sectorBorders(Ink ink, PlanLayout layout) {
+        ink.colour(DARK, 0.6);
+        ink.dashes(ink.unit, 1.5 * ink.unit, 4 * ink.unit);
+        for (int end = -1; end <= 1; end += 2) {
+            Point2D a = layout.sectorChart.at(layout.middle + end * 0.5 * grid.pitch(), grid.innerRadius());
+            Point2D b = layout.sectorChart.at(layout.middle + end * 0.5 * grid.pitch(), grid.outerRadius());
+            ink.line(a.getX(), a.getY(), b.getX(), b.getY());
+        }
+    }
+
+    /** How many sectors to either side a view reaches. */
+    private int reach(PlanLayout layout) {
+        Rectangle window = layout.sectorWindow;
+        double wide = 0.75 * window.width / layout.sectorScale / (1e3 * grid.innerRadius());
+        double half = layout.sectorChart.isUnrolled() ? wide : Math.asin(Math.min(1, wide));
+        int most = layout.sectorChart.isUnrolled() ? Integer.MAX_VALUE : grid.sectors() / 2 + 1;
+        return Math.min(most, 1 + spiralReach() + (int) Math.ceil(half / grid.pitch()));
+    }
+
     /** How many sectors further a grid line leads between the two diameters. */
     private int spiralReach() {
         return (int) Math.ceil(Math.abs(grid.theta(0, grid.nj() - 1) - grid.theta(0, 0)) / grid.pitch());
     }
 
-    /** Draws the isobars and returns what writes their values, to be run when all other lines are drawn. */
-    private List<Runnable> isobars(Ink ink, PlanLayout layout, int reach) {
-        List<Rectangle2D> taken = new ArrayList<>();
-        List<Runnable> labels = new ArrayList<>();
-        double[] one = shape.nodePressures();
-        int rows = grid.nj();
-        // Long cells are divided, so that the lines follow the circles.
-        int fine = Math.max(1, (int) Math.ceil(grid.pitch() / grid.cellsTheta() / Math.toRadians(1.25)));
-        int per = grid.cellsTheta() * fine;
-        int columns = (2 * reach + 1) * per + 1;
-        double[] x = new double[columns * rows];
-        double[] y = new double[columns * rows];
-        double[] values = new double[columns * rows];
-        for (int c = 0; c < columns; c++) {
-            int i = c % per / fine;
-            double f = (double) (c % fine) / fine;
-            double turn = (c / per - reach) * grid.pitch();
-            for (int j = 0; j < rows; j++) {
-                double theta = grid.theta(i, j) + f * (grid.theta(i + 1, j) - grid.theta(i, j));
-                Point2D p = at(layout.sector, theta + turn, grid.radius(j));
-                x[c * rows + j] = p.getX();
-                y[c * rows + j] = p.getY();
-                double a = one[grid.node(i, j)];
-                values[c * rows + j] = (a + f * (one[grid.node(i + 1, j)] - a)) / 1e5;
-            }
-        }
-        double step = Ticks.step((range.high() - range.low()) / 1e5, ISOBARS);
-        for (double level : Ticks.between(range.low() / 1e5, range.high() / 1e5, ISOBARS)) {
-            int colour = ColourScale.PRESSURE.colour((level * 1e5 - range.low()) / (range.high() - range.low()));
-            boolean onDark = Colours.lightness(colour) < 58;
-            int contrast = onDark ? 0xffffff : 0x14181c;
-            for (double[] line : Isobars.lines(rows, x, y, values, level)) {
-                Path2D.Double path = new Path2D.Double();
-                path.moveTo(line[0], line[1]);
-                for (int n = 2; n < line.length; n += 2) {
-                    path.lineTo(line[n], line[n + 1]);
-                }
-                ink.colour(contrast, 0.75);
-                ink.stroke(0.7 * ink.unit);
-                ink.pen.draw(path);
-                String words = Ticks.number(level, Ticks.decimals(step));
-                labels.add(() -> label(ink, layout.sectorWindow, line, words, contrast, colour, taken));
-            }
-        }
-        return labels;
-    }
-
-    /** Writes a value on a line where it is straight, inside the window and clear of other values; else not at all. */
-    private static void label(
-            Ink ink, Rectangle window, double[] line, String words, int colour, int edge, List<Rectangle2D> taken) {
-        double wide = ink.width(ink.small, words);
-        double tall = ink.height(ink.small);
-        int points = line.length / 2;
-        double best = Double.POSITIVE_INFINITY;
-        double[] place = null;
-        for (int n = 0; n < points; n++) {
-            int a = n;
-            int b = n;
-            double px = line[2 * n];
-            double py = line[2 * n + 1];
-            double bend = 0;
-            while (b + 1 < points && Math.hypot(line[2 * b] - px, line[2 * b + 1] - py) < 0.7 * wide) {
-                b++;
-            }
-            while (a > 0 && Math.hypot(line[2 * a] - px, line[2 * a + 1] - py) < 0.7 * wide) {
-                a--;
-            }
-            double length = Math.hypot(line[2 * b] - line[2 * a], line[2 * b + 1] - line[2 * a + 1]);
-            if (length < 1.25 * wide) {
-                continue;
-            }
-            for (int m = a; m <= b; m++) {
-                double off = Math.abs((line[2 * m] - line[2 * a]) * (line[2 * b + 1] - line[2 * a + 1])
-                                - (line[2 * m + 1] - line[2 * a + 1]) * (line[2 * b] - line[2 * a]))
-                        / length;
-                bend = Math.max(bend, off);
-            }
-            if (bend > 0.3 * tall) {
-                continue;
-            }
-            double reachX = 0.5 * wide + 6 * ink.unit;
-            Rectangle2D box = new Rectangle2D.Double(px - reachX, py - tall, 2 * reachX, 2 * tall);
-            if (!window.contains(box) || taken.stream().anyMatch(box::intersects)) {
-                continue;
-            }
-            double cost = bend + 0.02 * Math.abs(px - window.getCenterX());
-            if (cost < best) {
-                best = cost;
-                double angle = Math.atan2(line[2 * b + 1] - line[2 * a + 1], line[2 * b] - line[2 * a]);
-                if (Math.abs(angle) > Math.PI / 2) {
-                    angle -= Math.signum(angle) * Math.PI;
-                }
-                place = new double[] {px, py, angle};
-            }
-        }
-        if (place == null) {
-            return;
-        }
-        taken.add(new Rectangle2D.Double(place[0] - wide, place[1] - tall, 2 * wide, 2 * tall));
-        double drop = 0.36 * ink.small.getSize2D();
-        ink.writeOver(
-                ink.small,
-                colour,
-                edge,
-                words,
-                place[0] - drop * Math.sin(place[2]),
-                place[1] + drop * Math.cos(place[2]),
-                place[2],
-                Ink.Side.MIDDLE);
-    }
-
-    /** The line that stands for something named, as a sample beside its name. */
-    private enum Sample {
-        NONE,
-        GROOVE,
-        FEED
-    }
-
-    private record Name(double wantedY, String words, String detail, Sample sample) {}
-
-    /** Names of diameters and bands beside the enlarged sector, each with a leader to its place at the window's edge. */
-    private void names(Ink ink, PlanLayout layout) {
-        var conditions = shape.flow().film().conditions();
-        List<Name> names = new ArrayList<>();
-        add(
-                names,
-                layout,
-                grid.outerRadius(),
-                "outer diameter",
-                Words.diameter(grid.outerRadius()) + ", " + conditions.outerSide(),
-                Sample.NONE);
-        for (FilmShape.Band band : shape.grooveBands()) {
-            add(names, layout, 0.5 * (band.from() + band.to()), "grooves", between(band), Sample.GROOVE);
-        }
-        FilmShape.Band feed = shape.feed();
-        if (feed != null) {
-            String face = shape.flow().film().supply().orElseThrow().face() == org.whither.film.Face.STATOR
-                    ? "feed, in the stator"
-                    : "feed, in the rotor";
-            add(names, layout, 0.5 * (feed.from() + feed.to()), face, between(feed), Sample.FEED);
-        }
-        for (FilmShape.Band band : shape.ungrooved()) {
-            add(names, layout, besideFeed(band, feed), name(shape, band), between(band), Sample.NONE);
-        }
-        add(
-                names,
-                layout,
-                grid.innerRadius(),
-                "inner diameter",
-                Words.diameter(grid.innerRadius()) + ", " + conditions.innerSide(),
-                Sample.NONE);
-        names.sort((a, b) -> Double.compare(a.wantedY(), b.wantedY()));
-        double pitch = ink.height(ink.body) + ink.height(ink.small) + 3 * ink.unit;
-        double[] y = spread(
-                names.stream().mapToDouble(Name::wantedY).toArray(),
-                pitch,
-                layout.sectorWindow.y + 0.3 * pitch,
-                layout.sectorWindow.getMaxY() - 0.2 * pitch);
-        double room = layout.rightEdge - layout.namesLeft;
-        double edge = layout.sectorWindow.getMaxX();
-        for (int n = 0; n < y.length; n++) {
-            Name name = names.get(n);
-            ink.colour(ink.faint);
-            ink.stroke(Math.max(1, ink.unit));
-            double from = edge - 8 * ink.unit;
-            Path2D.Double leader = new Path2D.Double();
-            leader.moveTo(edge, name.wantedY());
-            leader.lineTo(edge + 5 * ink.unit, name.wantedY());
-            leader.lineTo(layout.namesLeft - 9 * ink.unit, y[n]);
-            leader.lineTo(layout.namesLeft - 4 * ink.unit, y[n]);
-            ink.pen.draw(leader);
-            ink.mark(Destination.HELD.marker(from + 8 * ink.unit, name.wantedY(), 4 * ink.unit), ink.text, 1);
-            ink.write(
-                    ink.fitting(ink.body, name.words(), room),
-                    ink.text,
-                    name.words(),
-                    layout.namesLeft,
-                    y[n] + 0.25 * ink.body.getSize2D(),
-                    Ink.Side.LEFT);
-            sample(ink, name.sample(), layout.namesLeft + ink.width(ink.body, name.words()) + 9 * ink.unit, y[n]);
-            ink.write(
-                    ink.small,
-                    ink.faint,
-                    ink.fitted(ink.small, name.detail(), room),
-                    layout.namesLeft,
-                    y[n] + 0.25 * ink.body.getSize2D() + ink.height(ink.small),
-                    Ink.Side.LEFT);
-        }
-    }
-
-    /** A short piece of the line that stands for something, on the ground that it has in the enlarged view. */
-    private static void sample(Ink ink, Sample sample, double x, double y) {
-        double length = 24 * ink.unit;
-        if (sample == Sample.NONE) {
-            return;
-        }
-        ink.colour(ColourScale.PRESSURE.colour(0.6));
-        ink.pen.fill(new Rectangle2D.Double(x, y - 5 * ink.unit, length, 10 * ink.unit));
-        Line2D.Double line = new Line2D.Double(x + 3 * ink.unit, y, x + length - 3 * ink.unit, y);
-        if (sample == Sample.GROOVE) {
-            grooveLine(ink, line);
-        } else {
-            ink.colour(DARK, 0.85);
-            ink.dashes(1.25 * ink.unit, 4 * ink.unit, 2.4 * ink.unit);
-            ink.pen.draw(line);
-        }
-    }
-
     /** What a ring without grooves is called. */
     static String name(FilmShape shape, FilmShape.Band band) {
-        return band.equals(shape.dam()) ? "dam, without grooves" : "land, without grooves";
+        return PlanNames.name(shape, band);
     }
 
-    private static double besideFeed(FilmShape.Band band, FilmShape.Band feed) {
-        if (feed == null || feed.to() < band.from() || feed.from() > band.to()) {
-            return 0.5 * (band.from() + band.to());
+    private void fill(Legend legend, PlanLayout layout) {
+        Conditions conditions = shape.flow().film().conditions();
+        Set<Destination> seen = EnumSet.noneOf(Destination.class);
+        if (withFeed()) {
+            data.fed().forEach(point -> seen.add(Destination.of(point.end())));
         }
-        // Beside the feed, on the wider part.
-        return feed.from() - band.from() > band.to() - feed.to()
-                ? 0.5 * (band.from() + feed.from())
-                : 0.5 * (feed.to() + band.to());
-    }
-
-    private static String between(FilmShape.Band band) {
-        return "Ø " + Ticks.number(2e3 * band.from(), 1) + " – " + Ticks.number(2e3 * band.to(), 1) + " mm";
-    }
-
-    /** Finds where the circle of a radius meets the right edge of the enlarged view. */
-    private static void add(
-            List<Name> names, PlanLayout layout, double radius, String words, String detail, Sample sample) {
-        Rectangle window = layout.sectorWindow;
-        Point2D shaft = layout.sector.project(0, 0, 0);
-        double across = window.getMaxX() - shaft.getX();
-        double reach = 1e3 * radius * layout.sectorScale;
-        double y = reach > across ? shaft.getY() - Math.sqrt(reach * reach - across * across) : window.getMaxY();
-        y = Math.max(window.y + 2, Math.min(window.getMaxY() - 2, y));
-        names.add(new Name(y, words, detail, sample));
-    }
-
-    /** Moves wanted places, in rising order, apart to a least distance, within two ends, as little as need be. */
-    static double[] spread(double[] wanted, double pitch, double low, double high) {
-        double[] y = wanted.clone();
-        for (int round = 0; round < 200; round++) {
-            for (int n = 0; n + 1 < y.length; n++) {
-                double lack = pitch - (y[n + 1] - y[n]);
-                if (lack > 0) {
-                    y[n] -= 0.5 * lack;
-                    y[n + 1] += 0.5 * lack;
+        paths.forEach(path -> seen.add(Destination.of(path.end())));
+        boolean all = withFeed() || plan.quantity() == Quantity.DESTINATION;
+        if (plan.quantity() == Quantity.DESTINATION) {
+            DestinationMap map = data.destinations().orElseThrow();
+            for (int p = 0; p < map.phases(); p++) {
+                for (int q = 0; q < map.radii(); q++) {
+                    seen.add(Destination.of(map.destination(p, q)));
                 }
             }
-            if (y.length > 0) {
-                y[0] = Math.max(y[0], low);
-                y[y.length - 1] = Math.min(y[y.length - 1], high);
-            }
         }
-        return y;
-    }
-
-    /**
-     * Where a point of the feed lies in the unrolled view.
-     *
-     * @param layout the layout, with a feed
-     * @param theta angle in the frame in which the film is steady (rad)
-     * @param radius radius (m)
-     */
-    Point2D.Double unrolled(PlanLayout layout, double theta, double radius) {
-        FilmShape.Band feed = shape.feed();
-        Rectangle window = layout.feedWindow;
-        double r = Math.max(grid.innerRadius(), Math.min(grid.outerRadius(), radius));
-        int row = grid.row(r);
-        double within = theta - grid.intoSector(theta, row, r) * grid.pitch();
-        // The band of the sector is skewed where its borders follow a spiral: straightened about the feed's middle.
-        double middle = 0.5 * (feed.from() + feed.to());
-        double start = grid.lineTheta(0, grid.row(middle), middle);
-        double turns = (within - start) / grid.pitch();
-        double along = turns - Math.floor(turns);
-        boolean mirrored = settings.seenFrom() == ViewingSide.ROTOR;
-        // Up is outwards; seen from the stator +θ runs to the left at the top of the ring.
-        double f = mirrored ? along : 1 - along;
-        return new Point2D.Double(
-                window.x + f * window.width, window.y + (feed.to() - radius) / feed.width() * window.height);
-    }
-
-    private void feed(Ink ink, PlanLayout layout) {
-        Rectangle window = layout.feedWindow;
-        FilmShape.Band feed = shape.feed();
-        double along = grid.pitch() * 0.5 * (feed.from() + feed.to());
-        double stretch = (window.height / feed.width()) / (window.width / along);
-        String which = grid.sectors() > 1 ? "one sector" : "whole ring";
-        String heading = "Where the gas of the feed goes (" + which + ", unrolled)";
-        ink.writeIn(layout.rightEdge - window.x, ink.heading, ink.text, heading, window.x, window.y - 7 * ink.unit);
-        ink.colour(ink.dark() ? 0x1d2329 : 0xeff0ee);
-        ink.pen.fill(window);
-        Shape before = ink.pen.getClip();
-        double count = Math.max(1, fed.size());
-        double size = Math.sqrt(0.62 * window.width * window.height / count);
-        size = Math.max(4 * ink.unit, Math.min(11 * ink.unit, size));
-        Area room = new Area(window);
-        ink.pen.clip(room);
-        for (FedPoint point : fed) {
-            Destination destination = Destination.of(point.end());
-            Point2D p =
-                    unrolled(layout, point.release().theta(), point.release().radius());
-            ink.mark(
-                    destination.marker(p.getX(), p.getY(), size),
-                    destination.colour(),
-                    Math.min(0.9 * ink.unit, 0.08 * size));
-        }
-        ink.pen.setClip(before);
-        ink.colour(ink.line);
-        ink.pen.setStroke(new BasicStroke((float) Math.max(1, ink.unit)));
-        ink.pen.draw(window);
-
-        double x = layout.namesLeft - 14 * ink.unit;
-        String upper = Words.diameter(feed.to());
-        String lower = Words.diameter(feed.from());
-        ink.write(ink.small, ink.text, upper, x, window.y + ink.ascent(ink.small), Ink.Side.LEFT);
-        ink.write(
-                ink.small,
-                ink.faint,
-                "towards the outer",
-                x,
-                window.y + ink.ascent(ink.small) + ink.height(ink.small),
-                Ink.Side.LEFT);
-        ink.write(ink.small, ink.text, lower, x, window.getMaxY(), Ink.Side.LEFT);
-        ink.write(
-                ink.small, ink.faint, "towards the inner", x, window.getMaxY() - ink.height(ink.small), Ink.Side.LEFT);
-        double line = ink.height(ink.small);
-        if (window.height > 6.4 * line) {
-            double middle = 0.5 * (window.y + ink.ascent(ink.small) + window.getMaxY());
-            double beside = layout.rightEdge - x;
-            ink.writeIn(beside, ink.small, ink.text, "each point: same mass flow,", x, middle - 0.5 * line);
-            ink.writeIn(beside, ink.small, ink.text, "so dense = much gas", x, middle + 0.5 * line);
-        }
-        String stretched = stretch >= 1
-                ? "drawn " + Ticks.number(stretch, stretch < 10 ? 1 : 0) + " × too wide across the feed"
-                : "drawn " + Ticks.number(1 / stretch, 1 / stretch < 10 ? 1 : 0) + " × too long along the feed";
-        double length = Ticks.step(1e3 * along * 0.2, 1);
-        String alongWords = Ticks.plain(length) + " mm along";
-        double bar = length * window.width / (1e3 * along);
-        double taken = 20 * ink.unit + Math.max(bar, 0.5 * (bar + ink.width(ink.small, alongWords)));
-        ink.write(
-                ink.small,
-                ink.faint,
-                ink.fitted(ink.small, stretched, window.width - taken),
-                window.getMaxX(),
-                window.getMaxY() + ink.height(ink.small),
-                Ink.Side.RIGHT);
-        ink.scaleBar(
-                window.x + 10 * ink.unit, window.getMaxY() + ink.ascent(ink.small) + 13 * ink.unit, bar, alongWords);
-    }
-
-    private void legend(Ink ink, PlanLayout layout) {
-        var conditions = shape.flow().film().conditions();
-        Set<Destination> seen = EnumSet.noneOf(Destination.class);
-        fed.forEach(point -> seen.add(Destination.of(point.end())));
-        paths.forEach(path -> seen.add(Destination.of(path.end())));
-        List<Destination> entries = new ArrayList<>();
-        List<String> words = new ArrayList<>();
         for (Destination destination : Destination.values()) {
-            if (destination != Destination.UNKNOWN || seen.contains(destination)) {
-                entries.add(destination);
-                words.add(destination.words(conditions));
+            if (seen.contains(destination) || all && destination != Destination.UNKNOWN) {
+                legend.add(destination, destination.words(conditions));
             }
         }
-        boolean goesOn = paths.stream().anyMatch(Plan::goesOn);
-        if (goesOn) {
-            words.add("open arrow: goes on round");
+        if (paths.stream().anyMatch(Plan::goesOn)) {
+            legend.add(
+                    (x, y) -> {
+                        Ink ink = legend.ink();
+                        double u = ink.unit;
+                        Path2D.Double arrow = new Path2D.Double();
+                        arrow.moveTo(x - 7 * u, y);
+                        arrow.lineTo(x + 5 * u, y);
+                        openHead(
+                                arrow,
+                                new Point2D[] {new Point2D.Double(x - 7 * u, y), new Point2D.Double(x + 5 * u, y)},
+                                5 * u);
+                        ink.colour(ink.text);
+                        ink.stroke(1.5 * u);
+                        ink.pen.draw(arrow);
+                    },
+                    "goes on round");
         }
-        double size = 11 * ink.unit;
-        double before = size + 6 * ink.unit;
-        int perRow = (words.size() + 1) / 2;
-        double x = layout.sectorWindow.x;
-        double widest = 0;
-        for (int n = 0; n < words.size(); n++) {
-            // Column by column, two rows.
-            if (n % 2 == 0 && n > 0) {
-                x += before + widest + 22 * ink.unit;
-                widest = 0;
-            }
-            double y = layout.legendBase + (n % 2) * 1.25 * ink.height(ink.small);
-            double room = (layout.rightEdge - layout.sectorWindow.x) / perRow * 1.4;
-            String text = ink.fitted(ink.small, words.get(n), room);
-            if (n == entries.size()) {
-                Path2D.Double arrow = new Path2D.Double();
-                double middle = y - 0.36 * ink.small.getSize2D();
-                Point2D[] shaft = {new Point2D.Double(x, middle), new Point2D.Double(x + size, middle)};
-                arrow.moveTo(x, middle);
-                arrow.lineTo(x + size, middle);
-                openHead(arrow, shaft, 5 * ink.unit);
-                ink.colour(ink.text);
-                ink.stroke(1.5 * ink.unit);
-                ink.pen.draw(arrow);
-                ink.write(ink.small, ink.text, text, x + before, y, Ink.Side.LEFT);
-                continue;
-            }
-            Destination destination = entries.get(n);
-            ink.mark(
-                    destination.marker(x + size / 2, y - 0.36 * ink.small.getSize2D(), size),
-                    destination.colour(),
-                    ink.unit);
-            ink.write(ink.small, ink.text, text, x + before, y, Ink.Side.LEFT);
-            widest = Math.max(widest, ink.width(ink.small, text));
+        if (layout.ringWindow == null && shape.feed() != null) {
+            legend.add((x, y) -> {}, "lengths along are true at the middle radius");
         }
     }
 }

@@ -8,6 +8,7 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.EnumSet;
 import java.util.List;
+import java.util.Optional;
 import java.util.Set;
 import org.whither.film.Conditions;
 import org.whither.film.FilmFlow;
@@ -57,12 +58,12 @@ public final class Relief {
                                 ? new PictureSettings.Range(0, 1)
                                 : Gap.range(speedsFound[0], speedsFound[1]));
         this.scene = scene(shape, pressures, relief);
-        this.viewpoint = relief.camera().orElse(usualCamera(scene, paths));
+        this.viewpoint = relief.camera().orElse(usualCamera(scene.whole(), paths));
     }
 
     /** Where a relief is looked at from where nothing else is asked for. */
-    static Viewpoint usualCamera(ReliefScene scene, List<Path> paths) {
-        if (!scene.whole()) {
+    static Viewpoint usualCamera(boolean whole, List<Path> paths) {
+        if (!whole) {
             return ReliefSettings.SECTOR_CAMERA;
         }
         double x = 0;
@@ -112,6 +113,29 @@ public final class Relief {
             }
         }
         return best;
+    }
+
+    /** The pressure for one mm of height that a relief would have (bar/mm). */
+    public static double barPerMillimetre(FilmFlow flow, ReliefSettings settings) {
+        FilmShape shape = new FilmShape(flow);
+        PictureSettings.Range pressures = settings.picture().pressureRange().orElse(shape.pressureRange());
+        return settings.barPerMillimetre().orElse(usualScale(shape, pressures, settings.part()));
+    }
+
+    /** From where a relief would be looked at. */
+    public static Viewpoint camera(FilmFlow flow, List<Path> paths, ReliefSettings settings) {
+        return settings.camera()
+                .orElseGet(() -> usualCamera(
+                        settings.part() != Part.SECTOR
+                                || sectors(flow.film().grid())
+                                        == flow.film().grid().sectors(),
+                        paths));
+    }
+
+    /** The range of speeds that a relief would show (m/s); empty without paths. */
+    public static Optional<PictureSettings.Range> speedRange(List<Path> paths) {
+        double[] found = speeds(paths);
+        return found == null ? Optional.empty() : Optional.of(Gap.range(found[0], found[1]));
     }
 
     /** Lowest speed, speed below which nearly all of the drawn length lies, and highest; null without paths (m/s). */
@@ -169,8 +193,16 @@ public final class Relief {
         return camera.azimuth() + (scene.whole() ? 0 : scene.middle());
     }
 
+    /** The layout that a relief would have, for tests. */
+    static Layout layout(FilmFlow flow, List<Path> paths, ReliefSettings settings) {
+        BufferedImage blank = new BufferedImage(8, 8, BufferedImage.TYPE_INT_RGB);
+        try (Ink ink = new Ink(blank, settings.picture())) {
+            return new Relief(flow, paths, settings).new Layout(ink);
+        }
+    }
+
     /** What stands round the scene, and the room that is left. */
-    private final class Layout {
+    final class Layout {
         final Page page;
         final Legend legend;
         final double barTop;
@@ -188,11 +220,20 @@ public final class Relief {
             barTop = legendTop - 16 * u - ink.ascent(ink.small) - barHeight;
             double captions = 14 * u + 2.2 * ink.height(ink.heading) + ink.height(ink.small);
             double left = page.left + 64 * u + 20;
-            Rectangle2D room = new Rectangle2D.Double(
-                    left, page.top + 4 * u, page.right - left - 20 * u, barTop - captions - page.top - 4 * u);
+            // Names stand over the far rim of a part of the ring.
+            double top = page.top + 4 * u + (scene.whole() ? 0 : ink.height(ink.heading) + 10 * u);
+            Rectangle2D room = new Rectangle2D.Double(left, top, page.right - left - 20 * u, barTop - captions - top);
             camera = viewpoint
                     .turned(azimuth(scene, viewpoint))
                     .fit(scene.extent(), new Rectangle(0, 0, settings.width(), settings.height()), room);
+        }
+
+        ReliefScene scene() {
+            return scene;
+        }
+
+        PictureSettings.Range speeds() {
+            return speeds;
         }
     }
 
@@ -230,6 +271,9 @@ public final class Relief {
         if (!paths.isEmpty()) {
             legend.add((x, y) -> {}, "tubes not to size");
         }
+        if (paths.stream().anyMatch(scene::goesOn)) {
+            legend.add((x, y) -> {}, "a tube without a mark at its end goes on outside the part shown");
+        }
     }
 
     private BufferedImage draw() {
@@ -248,7 +292,7 @@ public final class Relief {
         }
         try (Ink ink = new Ink(image, settings)) {
             Layout there = new Layout(ink);
-            there.page.write();
+            there.page.write(ink);
             bars(ink, there);
             ends(ink, there.camera);
             names(ink, there);
@@ -279,7 +323,7 @@ public final class Relief {
                     speedsFound[2] > speeds.high() + 1e-9,
                     "speed of the gas " + Words.frame(settings.speedFrame()) + ", m/s");
         }
-        layout.legend.draw(layout.page.left, layout.page.bottom - layout.legend.height());
+        layout.legend.draw(ink, layout.page.left, layout.page.bottom - layout.legend.height());
     }
 
     private void ends(Ink ink, Camera camera) {
@@ -314,8 +358,9 @@ public final class Relief {
         if (scene.whole()) {
             double hole = 1e3 * grid.innerRadius();
             Point2D middle = camera.project(0, 0, scene.bottom());
-            double room = 1.3 * (camera.project(hole, 0, scene.bottom()).getX() - middle.getX());
-            room = Math.abs(room) > 40 * u ? Math.abs(room) : 1.2 * hole * u;
+            double aside = viewpoint.azimuth() + Math.PI / 2;
+            Point2D rim = camera.project(hole * Math.cos(aside), hole * Math.sin(aside), scene.bottom());
+            double room = 1.3 * Math.abs(rim.getX() - middle.getX());
             String fits = ink.first(ink.heading, room, inner, conditions.innerSide());
             ink.write(ink.heading, ink.text, fits, middle.getX(), middle.getY(), Ink.Side.MIDDLE);
             ink.write(
@@ -385,13 +430,15 @@ public final class Relief {
 
     /** Points along the rotation arrow, tail to tip, in the picture: in the bore, in the sense in which the rotor turns. */
     private Point2D[] rotationArrow(Camera camera, double rate) {
+        return rotationArrow(camera, rate, 0.72 * grid.innerRadius(), viewpoint.azimuth() + Math.PI, scene.bottom());
+    }
+
+    static Point2D[] rotationArrow(Camera camera, double rate, double radius, double up, double z) {
         Point2D[] points = new Point2D[49];
         double half = Math.toRadians(48) * Math.signum(rate);
-        double radius = 0.72 * grid.innerRadius();
-        double up = viewpoint.azimuth() + Math.PI;
         for (int n = 0; n < points.length; n++) {
             double theta = up - half + 2 * half * n / (points.length - 1);
-            points[n] = at(camera, theta, radius, scene.bottom());
+            points[n] = at(camera, theta, radius, z);
         }
         return points;
     }

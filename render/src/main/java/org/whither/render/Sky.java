@@ -24,7 +24,7 @@ final class Sky {
     Sky(FilmShape shape, GapScene gap) {
         this.grid = shape.grid();
         this.depth = gap.height(shape.rotorHigh()) - gap.height(shape.rotorLow());
-        boolean flat = !shape.grooved();
+        boolean flat = !shape.rotorGrooved();
         double span = grid.outerRadius() - grid.innerRadius();
         this.rows = flat ? 0 : 160;
         this.columns = flat ? 0 : (int) Math.ceil(grid.pitch() * grid.outerRadius() / (span / rows));

@@ -2,7 +2,8 @@
  * From the results of core to pixels in memory, by OpenGL without a display and without a GPU.
  *
  * <p>{@link org.whither.render.Plan} draws the face seen along the shaft, {@link org.whither.render.Gap} a look into the
- * film with its thickness drawn too large, {@link org.whither.render.Relief} the pressure as height. Each
+ * film with its thickness drawn too large, {@link org.whither.render.Relief} the pressure as height, {@link
+ * org.whither.render.Meridian} a section along the radius. Each
  * builds a {@link org.whither.render.Scene} (meshes, materials, a light) and a {@link org.whither.render.Camera}, which are
  * plain data ({@link org.whither.render.ReliefScene} and {@link org.whither.render.GapScene} for stills and animations); {@link org.whither.render.Canvas} is the only class that
  * speaks OpenGL, {@link org.whither.render.HeadlessGL} the only one that starts it, and

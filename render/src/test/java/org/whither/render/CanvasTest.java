@@ -45,6 +45,42 @@ class CanvasTest {
     }
 
     @Test
+    void tiles_makeTheSamePicture() {
+        SpiralFilm film = new SpiralFilm();
+        ReliefScene relief =
+                Relief.layout(film, List.of(), ReliefSettings.ring(SMALL)).scene();
+        Scene scene = new Scene(relief.surface(), Relief.light(-1));
+        Rectangle window = new Rectangle(20, 10, 300, 200);
+        Camera camera = ReliefSettings.RING_CAMERA.fit(relief.extent(), window, window);
+        BufferedImage whole;
+        BufferedImage tiled;
+        try (Canvas canvas = new Canvas(333, 222)) {
+            whole = canvas.draw(0x808080, List.of(new Canvas.View(scene, camera), square(0xd04020)));
+        }
+        try (Canvas canvas = new Canvas(333, 222, 100)) {
+            tiled = canvas.draw(0x808080, List.of(new Canvas.View(scene, camera), square(0xd04020)));
+        }
+        int different = 0;
+        for (int y = 0; y < 222; y++) {
+            for (int x = 0; x < 333; x++) {
+                different +=
+                        PlanTest.distance(whole.getRGB(x, y) & 0xffffff, tiled.getRGB(x, y) & 0xffffff) > 24 ? 1 : 0;
+            }
+        }
+        // Along slanted edges a sample may fall on the other side of a triangle.
+        assertTrue(different < 0.002 * 333 * 222, different + " pixels differ");
+    }
+
+    @Test
+    void picture_beyondTheMemory_isRefusedInASentence() {
+        IllegalArgumentException refusal = org.junit.jupiter.api.Assertions.assertThrows(
+                IllegalArgumentException.class,
+                () -> SMALL.sized(90_000, 60_000).checkMemory());
+        assertTrue(refusal.getMessage().contains("90000 × 60000 pixels needs"), refusal.getMessage());
+        assertTrue(refusal.getMessage().contains("choose a smaller size"), refusal.getMessage());
+    }
+
+    @Test
     void edges_areSmoothed() {
         try (Canvas canvas = new Canvas(64, 48)) {
             Canvas.View view = square(0xffffff);

@@ -23,6 +23,9 @@ class ColourTest {
         {1.255528, -0.076749, -0.178779, -0.078411, 0.930809, 0.147602, 0.004733, 0.691367, 0.303900}
     };
 
+    /** Normal colour vision. */
+    static final double[] NORMAL = DEFICIENCIES[0];
+
     private static double[] linear(int colour) {
         double[] result = new double[3];
         for (int c = 0; c < 3; c++) {

@@ -3,8 +3,11 @@ package org.whither.render;
 import java.awt.image.BufferedImage;
 import java.io.File;
 import java.io.IOException;
+import java.util.List;
+import java.util.Optional;
 import javax.imageio.ImageIO;
 import org.whither.film.Face;
+import org.whither.film.FilmFlow;
 import org.whither.film.Frame;
 
 /** Writes every kind of picture of the invented film into a folder, to be looked at. */
@@ -20,7 +23,7 @@ final class Gallery {
             others(folder);
             return;
         }
-        int[][] sizes = {{1280, 720}, {1920, 1080}, {800, 450}};
+        int[][] sizes = {{1280, 720}, {640, 360}, {7680, 4320}};
         for (int[] size : sizes) {
             for (PictureSettings.Background background : PictureSettings.Background.values()) {
                 PictureSettings settings = PictureSettings.standard("Invented spiral-groove face")
@@ -32,6 +35,28 @@ final class Gallery {
                             film, film.fed(44, 12), film.paths(Frame.ROTATING).subList(0, 4), settings);
                     say("plan" + end, start);
                     start = write(plan, new File(folder, "plan" + end));
+                }
+                for (Part part : Part.values()) {
+                    if (arguments.length < 2 || arguments[1].contains("thickness")) {
+                        PlanSettings how = new PlanSettings(settings, Quantity.THICKNESS, part, Optional.empty());
+                        BufferedImage plan = Plan.draw(film, PlanData.of(List.of(), List.of()), how);
+                        say("thickness" + end, start);
+                        start = write(plan, new File(folder, "thickness-" + part + end));
+                    }
+                }
+                if (arguments.length < 2 || arguments[1].contains("relief")) {
+                    BufferedImage ring = Relief.draw(film, film.paths(Frame.ROTATING), ReliefSettings.ring(settings));
+                    say("relief" + end, start);
+                    start = write(ring, new File(folder, "relief" + end));
+                    BufferedImage sector =
+                            Relief.draw(film, film.paths(Frame.ROTATING), ReliefSettings.sector(settings));
+                    start = write(sector, new File(folder, "relief-sector" + end));
+                }
+                if (arguments.length < 2 || arguments[1].contains("meridian")) {
+                    BufferedImage section =
+                            Meridian.draw(FilmFlow.of(film.film()), List.of(), MeridianSettings.averaged(settings));
+                    say("meridian" + end, start);
+                    start = write(section, new File(folder, "meridian" + end));
                 }
                 if (arguments.length < 2 || arguments[1].contains("gap")) {
                     BufferedImage gap =

@@ -21,13 +21,18 @@ import org.whither.trace.Release;
 class GapTest {
     private static final SpiralFilm FILM = new SpiralFilm();
     private static final PictureSettings SETTINGS = PictureSettings.standard("Invented face");
+    private static final PictureSettings LARGE = SETTINGS.sized(2560, 1440);
 
     @ParameterizedTest
     @ValueSource(doubles = {500, 1000, 2500})
     void grooveDepth_inThePicture_isTheExaggeratedOne(double exaggeration) {
         GapScene gap = new GapScene(new FilmShape(FILM), exaggeration);
-        Camera camera = Gap.camera(gap, SETTINGS);
-        BufferedImage image = Gap.draw(FILM, List.of(), new GapSettings(SETTINGS, exaggeration));
+        // Large, so that a pixel is little beside the depth; from low enough that depths are long in the picture.
+        Viewpoint view = new Viewpoint(
+                Math.PI + Math.toRadians(gap.upstreamIsTo ? 6 : -6), Math.toRadians(54), Math.toRadians(22));
+        Camera camera = Gap.camera(gap, LARGE, view);
+        BufferedImage image =
+                Gap.draw(FILM, List.of(), new GapSettings(LARGE, exaggeration, java.util.Optional.of(view)));
         // Two places on the upper rim of the cut at the open end, one on a land and one on the floor of the groove that
         // the cut crosses outside its inner end.
         double land = gap.from;
@@ -44,7 +49,7 @@ class GapTest {
         Point2D foot = place(camera, gap, groove, r, half - 0.5e-6);
         double perMicrometre = foot.getY() - up.getY();
         assertEquals(5, drawn / perMicrometre, 5 * 0.06, "groove of 5 µm, measured in the picture");
-        assertEquals(place(camera, gap, land, 0.066, SpiralFilm.DATUM).getY(), landTop, 1.6);
+        assertEquals(place(camera, gap, land, 0.066, SpiralFilm.DATUM).getY(), landTop, 2.4);
         // And the scale itself: 1 µm is drawn as exaggeration times 1 µm.
         assertEquals(1e-3 * exaggeration, gap.height(SpiralFilm.DATUM + 1e-6), 1e-9);
     }
@@ -68,6 +73,33 @@ class GapTest {
         }
         assertTrue(best > 12, "a rim near row " + near.getY() + "; largest change " + best);
         return row;
+    }
+
+    @ParameterizedTest
+    @ValueSource(doubles = {300, 1000})
+    void floors_ofTheGrooves_areSeen(double exaggeration) {
+        GapScene gap = new GapScene(new FilmShape(FILM), exaggeration);
+        double usual = seenFloors(gap, Gap.camera(gap, SETTINGS));
+        double low = seenFloors(gap, Gap.camera(gap, SETTINGS, new Viewpoint(Math.PI, Math.toRadians(40), 0.38)));
+        assertTrue(usual > 0.25, usual + " of the floors is seen");
+        assertTrue(usual > 1.1 * low, usual + " is more than from lower down, " + low);
+    }
+
+    private static double seenFloors(GapScene gap, Camera camera) {
+        int seen = 0;
+        int all = 0;
+        for (int a = 1; a < 60; a++) {
+            for (int b = 1; b < 20; b++) {
+                double theta = gap.openFrom + (gap.openTo - gap.openFrom) * a / 60;
+                double r = SpiralFilm.TIP + (SpiralFilm.OUTER - SpiralFilm.TIP) * b / 20;
+                double z = gap.rotorAt(theta, r);
+                if (z < SpiralFilm.DATUM - 0.5 * SpiralFilm.DEPTH) {
+                    all++;
+                    seen += gap.hidden(gap.place(theta, r, z), camera.eye()) ? 0 : 1;
+                }
+            }
+        }
+        return (double) seen / all;
     }
 
     @Test

@@ -277,7 +277,7 @@ class PlanTest {
         edgeIsClear(Gap.draw(film, paths, new GapSettings(settings, 1000)), settings);
     }
 
-    private static void edgeIsClear(BufferedImage image, PictureSettings settings) {
+    static void edgeIsClear(BufferedImage image, PictureSettings settings) {
         int rim = (int) Math.max(3, 8 * Ink.unit(settings));
         int paper = Ink.paper(settings);
         int inked = 0;

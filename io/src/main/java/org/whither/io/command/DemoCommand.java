@@ -1,7 +1,6 @@
 package org.whither.io.command;
 
 import java.io.IOException;
-import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.List;
@@ -9,9 +8,13 @@ import java.util.Optional;
 import java.util.concurrent.Callable;
 import org.whither.io.file.WholeFolder;
 import org.whither.io.hdf5.FieldWriter;
+import org.whither.io.picture.PictureDescription;
+import org.whither.io.picture.Stills;
+import org.whither.io.picture.View;
 import org.whither.io.report.ReportPicture;
 import org.whither.io.result.SplitResult;
 import org.whither.render.NoOpenGL;
+import org.whither.render.Quantity;
 import org.whither.samples.SampleSeals;
 import org.whither.samples.SolvedFilm;
 import picocli.CommandLine.Command;
@@ -28,13 +31,15 @@ import picocli.CommandLine.Spec;
         description = {
             "Computes the film of an invented spiral-groove seal, writes it as a field file, finds where its supply gas"
                     + " goes, draws it, and makes one page of it. Writes field.h5, split.json, report.html and report.json,"
-                    + " plan.png, relief.png and gap.png into the folder.",
+                    + " and the pictures plan.png, plan-thickness.png, plan-speed.png, plan-age.png, plan-destination.png,"
+                    + " relief.png, gap.png and meridian.png into the folder, each with its description as JSON.",
             "Without usable OpenGL it still gives the numbers, says which packages pictures need, and ends with status"
                     + " 4.%n"
         },
         sortOptions = false)
 final class DemoCommand implements Callable<Integer> {
     private static final Path DEFAULT_FOLDER = Path.of("demo-whither");
+    private static final int PATHS = 7;
 
     @Spec
     private CommandSpec spec;
@@ -69,8 +74,8 @@ final class DemoCommand implements Callable<Integer> {
             SplitCommand.writeNumbers(found[0], into);
             List<ReportPicture> pictures = new ArrayList<>();
             Optional<String> missing = draw(input, found[0], pictures);
-            for (ReportPicture picture : pictures) {
-                Files.write(into.resolve(picture.name() + ".png"), picture.png());
+            if (missing.isEmpty()) {
+                drawAll(input, found[0], into);
             }
             ReportCommand.write(input, found[0], tracing, talk, pictures, missing, into);
             sentence[0] = missing.orElse(null);
@@ -93,6 +98,31 @@ final class DemoCommand implements Callable<Integer> {
             return Optional.empty();
         } catch (NoOpenGL e) {
             return Optional.of(e.getMessage());
+        }
+    }
+
+    /** Every kind of picture with its description, the plan in all its quantities. */
+    private void drawAll(FieldInput input, SplitResult result, Path into) throws IOException {
+        try (Talk.Stretch stretch = talk.begin("Drawing more")) {
+            List<PictureDescription> pictures = new ArrayList<>();
+            for (Quantity quantity : Quantity.values()) {
+                pictures.add(PictureDescription.of(View.PLAN).showing(quantity));
+            }
+            for (View view : List.of(View.RELIEF, View.GAP, View.MERIDIAN)) {
+                pictures.add(PictureDescription.of(view));
+            }
+            pictures.replaceAll(p -> p.seen(p.background(), p.seenFrom(), tracing.frame()));
+            Stills.Subject subject = Pictures.subject(
+                    input.flow(),
+                    Pictures.few(result.split().fed()),
+                    Pictures.Wanted.of(pictures, PATHS, false),
+                    tracing);
+            double done = 0.4;
+            for (PictureDescription picture : pictures) {
+                stretch.accept(done);
+                Pictures.draw(input, subject, picture, input.title(), into);
+                done += 0.6 / pictures.size();
+            }
         }
     }
 }

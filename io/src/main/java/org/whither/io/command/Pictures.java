@@ -1,18 +1,33 @@
 package org.whither.io.command;
 
-import java.awt.image.BufferedImage;
 import java.io.IOException;
+import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.List;
-import javax.imageio.ImageIO;
+import java.util.Optional;
+import org.whither.eddy.AgeMap;
+import org.whither.eddy.Eddies;
+import org.whither.eddy.EddySettings;
+import org.whither.eddy.Zone;
 import org.whither.fate.BorderBalance;
+import org.whither.fate.DestinationMap;
 import org.whither.fate.FedPoint;
 import org.whither.fate.FilmMass;
 import org.whither.fate.ReleasePlan;
 import org.whither.fate.Split;
 import org.whither.film.FilmFlow;
 import org.whither.film.Frame;
+import org.whither.io.picture.PictureDescription;
+import org.whither.io.picture.PictureFacts;
+import org.whither.io.picture.PictureJson;
+import org.whither.io.picture.PngFile;
+import org.whither.io.picture.Stills;
+import org.whither.io.picture.View;
+import org.whither.render.Part;
+import org.whither.render.PictureSettings;
+import org.whither.render.PlanData;
+import org.whither.render.Quantity;
 import org.whither.trace.Direction;
 import org.whither.trace.ParallelTracing;
 import org.whither.trace.PathEnd;
@@ -90,10 +105,89 @@ final class Pictures {
         return paths;
     }
 
-    /** Writes a picture as PNG. */
-    static void write(BufferedImage image, Path file) throws IOException {
-        if (!ImageIO.write(image, "png", file.toFile())) {
-            throw new IOException(file + " cannot be written: this Java has no PNG writer");
+    /**
+     * What some pictures need to be computed.
+     *
+     * @param paths how many paths
+     * @param fed whether points of the feed are shown
+     * @param ages whether the age of the gas is shown
+     * @param destinations whether the destinations of the gas at mid film are shown
+     * @param zones whether zones of held gas are outlined
+     */
+    record Wanted(int paths, boolean fed, boolean ages, boolean destinations, boolean zones) {
+        static Wanted of(List<PictureDescription> pictures, int paths, boolean zones) {
+            boolean plans = pictures.stream().anyMatch(p -> p.view() == View.PLAN);
+            boolean only = pictures.stream().allMatch(p -> p.view() == View.MERIDIAN);
+            return new Wanted(
+                    only ? 0 : paths,
+                    plans && pictures.stream().anyMatch(p -> p.view() == View.PLAN && p.part() == Part.BOTH),
+                    pictures.stream().anyMatch(p -> p.view() == View.PLAN && p.show() == Quantity.AGE),
+                    pictures.stream().anyMatch(p -> p.view() == View.PLAN && p.show() == Quantity.DESTINATION),
+                    zones && pictures.stream().anyMatch(p -> p.view() == View.MERIDIAN));
         }
+    }
+
+    /** Fails at once where pictures cannot be drawn on this machine, before anything is computed for them. */
+    static void needed() {
+        PictureSettings.startDrawing();
+    }
+
+    /** A film with what pictures of it need. */
+    static Stills.Subject subject(FilmFlow flow, Wanted wanted, TracingOptions tracing) {
+        TraceSettings settings = settings(flow, tracing.frame(), tracing.tolerance());
+        List<FedPoint> fed = wanted.fed() ? fed(flow, settings, tracing.seed(), tracing.threads()) : List.of();
+        return subject(flow, fed, wanted, tracing);
+    }
+
+    /** As above, with points of the feed that are known already. */
+    static Stills.Subject subject(FilmFlow flow, List<FedPoint> fed, Wanted wanted, TracingOptions tracing) {
+        TraceSettings settings = settings(flow, tracing.frame(), tracing.tolerance());
+        double coarse = Math.max(MAP_TOLERANCE, tracing.tolerance());
+        TraceSettings quick = new TraceSettings(
+                settings.frame(), Direction.FORWARD, coarse, settings.timeLimit() / Split.PATIENCE * MAP_PATIENCE);
+        Optional<AgeMap> ages = wanted.ages()
+                ? Optional.of(AgeMap.of(flow, quick, AGE_PHASES, AGE_RADII, AGE_HEIGHTS, tracing.threads(), x -> {}))
+                : Optional.empty();
+        Optional<DestinationMap> destinations = wanted.destinations()
+                ? Optional.of(DestinationMap.of(flow, quick, END_PHASES, END_RADII, 0.5, tracing.threads(), x -> {}))
+                : Optional.empty();
+        List<Zone> zones = wanted.zones() && BorderBalance.of(flow).inflow() > 0
+                ? Eddies.of(
+                                flow,
+                                new EddySettings(
+                                        tracing.frame(),
+                                        coarse,
+                                        EddySettings.PATIENCE,
+                                        EddySettings.BUDGET,
+                                        tracing.seed(),
+                                        tracing.threads()),
+                                x -> {})
+                        .zones()
+                : List.of();
+        return new Stills.Subject(
+                flow,
+                new PlanData(fed, paths(flow, settings, tracing.seed(), wanted.paths()), ages, destinations),
+                zones);
+    }
+
+    /** Tolerance of the tracers behind a map, whose points are far coarser. */
+    private static final double MAP_TOLERANCE = 1e-5;
+
+    /** Times the mean residence that a tracer of a map is followed. */
+    private static final double MAP_PATIENCE = 40;
+
+    private static final int AGE_PHASES = 40;
+    private static final int AGE_RADII = 36;
+    private static final int AGE_HEIGHTS = 9;
+    private static final int END_PHASES = 96;
+    private static final int END_RADII = 72;
+
+    /** Draws a picture into a folder, as PNG with its facts and, beside it, its description. */
+    static void draw(FieldInput input, Stills.Subject subject, PictureDescription picture, String title, Path into)
+            throws IOException {
+        PictureDescription full = Stills.resolved(subject, picture, title);
+        PictureFacts facts = PictureFacts.of(title, input.file().getFileName().toString(), input.sha256());
+        PngFile.write(Stills.draw(subject, full, title), full, facts, into.resolve(full.name() + ".png"));
+        Files.writeString(into.resolve(full.name() + ".json"), PictureJson.text(full, facts));
     }
 }

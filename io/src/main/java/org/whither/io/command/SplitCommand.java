@@ -3,6 +3,7 @@ package org.whither.io.command;
 import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.List;
 import java.util.Optional;
 import java.util.concurrent.Callable;
 import org.whither.fate.BorderBalance;
@@ -10,11 +11,12 @@ import org.whither.fate.Split;
 import org.whither.fate.SplitSettings;
 import org.whither.io.file.RefusedInput;
 import org.whither.io.file.WholeFolder;
+import org.whither.io.picture.PictureDescription;
+import org.whither.io.picture.Stills;
+import org.whither.io.picture.View;
 import org.whither.io.result.ResultJson;
 import org.whither.io.result.SplitResult;
 import org.whither.render.NoOpenGL;
-import org.whither.render.PictureSettings;
-import org.whither.render.Plan;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Option;
@@ -28,7 +30,7 @@ import picocli.CommandLine.Option;
         description = {
             "Follows tracers from the feed, and from wherever else gas enters, to where they leave, and back from there;"
                     + " sets beside that the integrals over the borders. Every share has a 95 %% interval.",
-            "Writes split.json and plan.png, where each point of the feed sends its gas, into the folder. With --json and"
+            "Writes split.json and plan.png (with plan.json, its description), where each point of the feed sends its gas, into the folder. With --json and"
                     + " no --out it writes no file. Status 4 where the wanted width or closure was not reached, or no"
                     + " picture could be drawn.%n"
         },
@@ -107,14 +109,15 @@ final class SplitCommand implements Callable<Integer> {
     static Optional<String> drawPlan(FieldInput input, SplitResult result, Path into, TracingOptions tracing)
             throws IOException {
         try {
-            PictureSettings how = PictureSettings.standard(input.title()).speedsIn(tracing.frame());
-            var paths = Pictures.paths(
+            Pictures.needed();
+            PictureDescription plan = PictureDescription.of(View.PLAN);
+            plan = plan.seen(plan.background(), plan.seenFrom(), tracing.frame());
+            Stills.Subject subject = Pictures.subject(
                     input.flow(),
-                    Pictures.settings(input.flow(), tracing.frame(), tracing.tolerance()),
-                    tracing.seed(),
-                    8);
-            Pictures.write(
-                    Plan.draw(input.flow(), Pictures.few(result.split().fed()), paths, how), into.resolve("plan.png"));
+                    Pictures.few(result.split().fed()),
+                    Pictures.Wanted.of(List.of(plan), 8, false),
+                    tracing);
+            Pictures.draw(input, subject, plan, input.title(), into);
             return Optional.empty();
         } catch (NoOpenGL e) {
             return Optional.of(e.getMessage());

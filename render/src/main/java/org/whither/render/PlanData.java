@@ -1,0 +1,30 @@
+package org.whither.render;
+
+import java.util.List;
+import java.util.Optional;
+import org.whither.eddy.AgeMap;
+import org.whither.fate.DestinationMap;
+import org.whither.fate.FedPoint;
+import org.whither.trace.Path;
+
+/**
+ * What was computed of a film that a plan can show.
+ *
+ * @param fed points of the feed with the ends of their tracers; may be empty
+ * @param paths paths whose footprints are drawn; may be empty
+ * @param ages age of the gas; needed to show it
+ * @param destinations where the gas at mid film goes; needed to show it
+ */
+public record PlanData(
+        List<FedPoint> fed, List<Path> paths, Optional<AgeMap> ages, Optional<DestinationMap> destinations) {
+    /** Keeps its own copies. */
+    public PlanData {
+        fed = List.copyOf(fed);
+        paths = List.copyOf(paths);
+    }
+
+    /** Nothing but points of the feed and paths. */
+    public static PlanData of(List<FedPoint> fed, List<Path> paths) {
+        return new PlanData(fed, paths, Optional.empty(), Optional.empty());
+    }
+}
