@@ -405,18 +405,23 @@ build() {
 archive_classes() {
   find_java java || return 0
   archive=$archives-$major.jsa
-  rm -f "$archives"-*.jsa
-  "$java_home/bin/java" --enable-native-access=ALL-UNNAMED -Xlog:disable "-XX:ArchiveClassesAtExit=$archive.new" \
-    -jar "$jar" split "$root/samples/fields/spiral-24x32.h5" --json --quiet --width 0.5 >/dev/null 2>&1 &&
-    mv "$archive.new" "$archive" 2>/dev/null
-  rm -f "$archive.new"
+  rm -f "$archives"-*
+  if list_classes help --help &&
+    list_classes split split "$root/samples/fields/spiral-24x32.h5" --json --quiet --width 0.5 &&
+    awk '!seen[$0]++' "$archive.help" "$archive.split" >"$archive.list" &&
+    "$java_home/bin/java" -Xlog:disable -Xshare:dump "-XX:SharedClassListFile=$archive.list" \
+      "-XX:SharedArchiveFile=$archive.new" -cp "$jar" >/dev/null 2>&1; then
+    mv "$archive.new" "$archive"
+  fi
+  rm -f "$archive".*
 }
 
-# Puts what only tests use from npm beside the build; without it those tests report themselves skipped.
-add_node_tools() {
-  [ ! -d "$target/node/node_modules/gltf-validator" ] || return 0
-  command -v npm >/dev/null || return 0
-  npm install --silent --no-save --prefix "$target/node" "$node_tools" >/dev/null 2>&1 </dev/null || true
+# Runs the program with the arguments after the first and lists the classes that it uses in a file named by the first.
+list_classes() {
+  list=$archive.$1
+  shift
+  "$java_home/bin/java" --enable-native-access=ALL-UNNAMED -Xlog:disable "-XX:DumpLoadedClassList=$list" \
+    -jar "$jar" "$@" >/dev/null 2>&1 && [ -f "$list" ]
 }
 
 run_tests() {
