@@ -7,7 +7,8 @@
 #
 # Needed: a JDK, version 17 or later, and Maven, 3.6.3 or later. Wanted: Mesa's software OpenGL and a font; without
 # them the program gives its numbers but no pictures. On Debian and Ubuntu, packages are installed with apt-get by
-# root, or through sudo; through sudo without a terminal only where it asks for no password.
+# root, or through sudo; through sudo without a terminal only where it asks for no password. Animations as MP4 want
+# ffmpeg besides, which is large and is installed for the tests alone: apt-get install ffmpeg.
 #
 # Exit status: 0 done, 1 the build or a test failed, 2 wrong usage, 3 something needed is missing.
 #
@@ -19,7 +20,7 @@ jvm_folder=/usr/lib/jvm
 gl_packages='libegl1 libegl-mesa0 libgl1 libgl1-mesa-dri libgles2 libxrender1'
 # Java2D draws text with them; the headless Java of newer systems does not bring libharfbuzz0b itself.
 text_packages='libfreetype6 libharfbuzz0b fontconfig fonts-dejavu-core'
-test_packages='python3-h5py hdf5-tools'
+test_packages='python3-h5py hdf5-tools ffmpeg'
 # The Khronos validator of glTF files, from npm.
 node_tools='gltf-validator@2.0.0-dev.3.10'
 # The same where there is no dpkg to ask: sonames as the dynamic linker knows them.
@@ -206,6 +207,7 @@ look() {
     if [ "$task" = test ]; then
       command -v h5dump >/dev/null || test_missing="$test_missing h5dump"
       python3 -c 'import h5py' >/dev/null 2>&1 || test_missing="$test_missing h5py"
+      command -v ffmpeg >/dev/null || test_missing="$test_missing ffmpeg"
     fi
   fi
 }
@@ -347,7 +349,7 @@ prepare() {
     say "there will be numbers but no pictures, as these are not installed:$gl_missing$text_missing. To mend it, type"
     say_command
   elif [ -n "$test_missing" ]; then
-    say "tests against the HDF5 C library cannot run, as these are not installed:$test_missing. To mend it, type"
+    say "tests against the HDF5 C library or of video cannot run, as these are not installed:$test_missing. To mend it, type"
     say_command
   fi
   if [ -n "${JAVA_HOME:-}" ] && [ "${JAVA_HOME%/}" != "$java_home" ]; then

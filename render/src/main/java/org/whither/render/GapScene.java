@@ -39,6 +39,8 @@ final class GapScene {
     private static final double UNDER = 0.7;
 
     private final FilmShape shape;
+    /** Whether a part of the ring is shown, near enough for fine shades. */
+    private final boolean part;
 
     private final FilmFlow flow;
     private final FilmGrid grid;
@@ -81,6 +83,7 @@ final class GapScene {
      */
     GapScene(FilmShape shape, double exaggeration, List<Path> paths) {
         this.shape = shape;
+        this.part = true;
         this.flow = shape.flow();
         this.grid = shape.grid();
         this.exaggeration = exaggeration;
@@ -90,11 +93,11 @@ final class GapScene {
         // Of a narrow face more of the ring, so that the picture does not grow flat and paths have room.
         double wish = Math.min(Math.toRadians(120), WISH * Math.max(1, 0.26 / (span / mean)));
         double whole = Math.max(1, Math.rint(wish / pitch)) * pitch;
-        boolean part = whole > 1.4 * wish;
-        double width = part ? wish : whole;
+        boolean cut = whole > 1.4 * wish;
+        double width = cut ? wish : whole;
         this.upstreamIsTo = upstreamIsTo(paths);
         double start;
-        if (part && !paths.isEmpty() && !paths.get(0).points().isEmpty()) {
+        if (cut && !paths.isEmpty() && !paths.get(0).points().isEmpty()) {
             double first = paths.get(0).points().get(0).steadyTheta();
             start = upstreamIsTo ? first - (1 - STANDING) * width + 0.01 : first - STANDING * width - 0.01;
         } else {
@@ -106,6 +109,48 @@ final class GapScene {
         this.openFrom = upstreamIsTo ? from : from + STANDING * width;
         this.openTo = upstreamIsTo ? to - STANDING * width : to;
         this.datum = shape.rotorHigh();
+        this.statorHigh = statorHigh();
+        double face = 1e3 * span;
+        this.bottom = Math.min(height(shape.rotorLow()) - 0.16 * face, -0.36 * face);
+        this.notch = 0.14 * face;
+        this.top = height(statorHigh) + 0.22 * face;
+        this.sky = new Sky(shape, this);
+    }
+
+    private GapScene(FilmShape shape, double exaggeration, double standFrom, double standTo) {
+        this.shape = shape;
+        this.part = false;
+        this.flow = shape.flow();
+        this.grid = shape.grid();
+        this.exaggeration = exaggeration;
+        this.upstreamIsTo = true;
+        this.middle = 0;
+        this.to = standTo;
+        this.from = standTo - 2 * Math.PI;
+        this.openFrom = from;
+        this.openTo = standFrom;
+        this.datum = shape.rotorHigh();
+        this.statorHigh = statorHigh();
+        double face = 1e3 * (grid.outerRadius() - grid.innerRadius());
+        this.bottom = Math.min(height(shape.rotorLow()) - 0.16 * face, -0.36 * face);
+        this.notch = 0.14 * face;
+        this.top = height(statorHigh) + 0.22 * face;
+        this.sky = new Sky(shape, this);
+    }
+
+    /**
+     * The whole ring, x along θ = 0.
+     *
+     * @param shape the film's shape
+     * @param exaggeration factor on lengths across the film
+     * @param standFrom first angle over which the stator is left standing (rad)
+     * @param standTo last such angle, at most 2π on (rad)
+     */
+    static GapScene ring(FilmShape shape, double exaggeration, double standFrom, double standTo) {
+        return new GapScene(shape, exaggeration, standFrom, standTo);
+    }
+
+    private double statorHigh() {
         double high = Double.NEGATIVE_INFINITY;
         for (int i = 0; i < grid.cellsTheta(); i++) {
             for (int j = 0; j < grid.cellsRadial(); j++) {
@@ -114,12 +159,7 @@ final class GapScene {
                 }
             }
         }
-        this.statorHigh = high;
-        double face = 1e3 * span;
-        this.bottom = Math.min(height(shape.rotorLow()) - 0.16 * face, -0.36 * face);
-        this.notch = 0.14 * face;
-        this.top = height(high) + 0.22 * face;
-        this.sky = new Sky(shape, this);
+        return high;
     }
 
     /** Whether most paths run towards falling angles; where there are none, whether the gas lags behind a rotor that turns so. */
@@ -292,6 +332,90 @@ final class GapScene {
         return items;
     }
 
+    private boolean fedFromAbove() {
+        return flow.film().supply().isEmpty() || flow.film().supply().get().face() == Face.STATOR;
+    }
+
+    /** The rotor of one sector, which turned by whole sectors makes the ring. */
+    List<Scene.Item> rotorSector() {
+        List<Scene.Item> items = new ArrayList<>();
+        double pitch = grid.pitch();
+        boolean recess = !fedFromAbove();
+        add(items, ring(false, 0, pitch, recess, false), Scene.Material.solid(ROTOR, 0.12));
+        add(items, sides(false, 0, pitch, recess), Scene.Material.solid(ROTOR_CUT, 0.05));
+        add(items, ring(false, 0, pitch, recess, true), Scene.Material.solid(FEED, 0.1));
+        MeshBuilder edges = new MeshBuilder();
+        double radius = 0.0032 * 1e3 * (grid.outerRadius() - grid.innerRadius());
+        for (FilmShape.Edge edge : shape.rotorEdges()) {
+            rotorLine(edges, edge.theta0(), edge.r0(), edge.theta1(), edge.r1(), radius);
+        }
+        add(items, edges, Scene.Material.plain(GROOVE_EDGE, 1));
+        return items;
+    }
+
+    /** The stator of one sector with its side towards the film alone, for an eye inside the film. */
+    List<Scene.Item> statorSector() {
+        List<Scene.Item> items = new ArrayList<>();
+        double pitch = grid.pitch();
+        boolean recess = fedFromAbove();
+        add(items, ring(true, 0, pitch, recess, false), Scene.Material.solid(STATOR, 0.15));
+        add(items, ring(true, 0, pitch, recess, true), Scene.Material.solid(FEED, 0.1));
+        List<Scene.Item> shadowless = new ArrayList<>();
+        items.forEach(item -> shadowless.add(item.shadowless()));
+        return shadowless;
+    }
+
+    /** What is left standing of the stator. */
+    List<Scene.Item> standingStator() {
+        List<Scene.Item> items = new ArrayList<>();
+        boolean recess = fedFromAbove();
+        double low = upstreamIsTo ? openTo : from;
+        double high = upstreamIsTo ? to : openFrom;
+        add(items, ring(true, low, high, recess, false), Scene.Material.solid(STATOR, 0.15));
+        add(items, cuts(true, low, high, recess), Scene.Material.solid(STATOR_CUT, 0.05));
+        add(items, ring(true, low, high, recess, true), Scene.Material.solid(FEED, 0.1));
+        if (recess) {
+            add(items, feedCuts(low, high), Scene.Material.plain(FEED, 1));
+        }
+        return items;
+    }
+
+    /** Dashed lines along the borders of the feed where the stator is cut away. */
+    List<Scene.Item> feedBorders() {
+        List<Scene.Item> items = new ArrayList<>();
+        if (fedFromAbove()) {
+            add(items, feedLines(), Scene.Material.plain(FEED, 1));
+        }
+        return items;
+    }
+
+    /** Thin rods across the stator face at equal angles round the whole ring, by which its motion is seen. */
+    Scene.Item statorMarks(int count) {
+        MeshBuilder mesh = new MeshBuilder();
+        double radius = 0.0022 * 1e3 * (grid.outerRadius() - grid.innerRadius());
+        for (int n = 0; n < count; n++) {
+            double theta = 2 * Math.PI * n / count;
+            for (int m = 0; m < ARC; m++) {
+                double a = grid.innerRadius() + (grid.outerRadius() - grid.innerRadius()) * m / ARC;
+                double b = grid.innerRadius() + (grid.outerRadius() - grid.innerRadius()) * (m + 1) / ARC;
+                if (!fed(theta, 0.5 * (a + b))) {
+                    Tubes.bar(
+                            mesh,
+                            at(theta, a, height(statorAt(theta, a))),
+                            at(theta, b, height(statorAt(theta, b))),
+                            radius);
+                }
+            }
+        }
+        return new Scene.Item(mesh.build(), Scene.Material.plain(0x56606b, 1), 0);
+    }
+
+    private boolean fed(double theta, double r) {
+        int j = grid.row(r);
+        double within = theta - grid.intoSector(theta, j, r) * grid.pitch();
+        return fedFromAbove() && flow.film().feeds(grid.cell(grid.column(within, j, r), j));
+    }
+
     private static void add(List<Scene.Item> items, MeshBuilder mesh, Scene.Material material) {
         if (!mesh.isEmpty()) {
             items.add(new Scene.Item(mesh.build(), material, 0));
@@ -360,7 +484,7 @@ final class GapScene {
         double r1 = grid.radius(j + 1);
         double span =
                 Math.max(grid.theta(i + 1, j) - grid.theta(i, j), grid.theta(i + 1, j + 1) - grid.theta(i, j + 1));
-        double fine = (grid.outerRadius() - grid.innerRadius()) / (shape.rotorGrooved() ? 44 : 24);
+        double fine = (grid.outerRadius() - grid.innerRadius()) / (shape.rotorGrooved() && part ? 44 : 24);
         int across = (int) Math.ceil(span * r1 / fine);
         int along = (int) Math.ceil((r1 - r0) / fine);
         double midTheta = between(i, j, 0.5 * (r0 + r1), 0.5);
@@ -638,8 +762,8 @@ final class GapScene {
         }
     }
 
-    /** The sides of a ring at the two diameters, its far face, and the plane faces where it is cut at two angles. */
-    private MeshBuilder cuts(boolean stator, double low, double high, boolean recess) {
+    /** The sides of a ring at the two diameters, and its far face. */
+    private MeshBuilder sides(boolean stator, double low, double high, boolean recess) {
         MeshBuilder mesh = new MeshBuilder();
         cells(low, high, (i, j, turn) -> {
             if (j == 0) {
@@ -649,6 +773,12 @@ final class GapScene {
                 side(mesh, stator, i, j, j + 1, turn, low, high, recess);
             }
         });
+        return mesh;
+    }
+
+    /** The sides of a ring at the two diameters, its far face, and the plane faces where it is cut at two angles. */
+    private MeshBuilder cuts(boolean stator, double low, double high, boolean recess) {
+        MeshBuilder mesh = sides(stator, low, high, recess);
         for (int end = 0; end < 2; end++) {
             double theta = end == 0 ? low : high;
             double side = end == 0 ? -1 : 1;
@@ -793,10 +923,24 @@ final class GapScene {
                 Tubes.bar(mesh, at(ta, ra, z), at(tb, rb, z), radius);
                 continue;
             }
-            double[] z = lowestAndHighest(0.5 * (ta + tb), 0.5 * (ra + rb));
-            Tubes.bar(mesh, at(ta, ra, z[1]), at(tb, rb, z[1]), radius);
-            Tubes.bar(mesh, at(ta, ra, z[0]), at(tb, rb, z[0]), 0.6 * radius);
+            rotorBar(mesh, ta, ra, tb, rb, radius);
         }
+    }
+
+    /** A thin straight line on the rotor, wherever it is. */
+    private void rotorLine(MeshBuilder mesh, double t0, double r0, double t1, double r1, double radius) {
+        int parts = 1 + (int) (Math.abs(t1 - t0) / Math.toRadians(1));
+        for (int n = 0; n < parts; n++) {
+            double a = (double) n / parts;
+            double b = (double) (n + 1) / parts;
+            rotorBar(mesh, t0 + a * (t1 - t0), r0 + a * (r1 - r0), t0 + b * (t1 - t0), r0 + b * (r1 - r0), radius);
+        }
+    }
+
+    private void rotorBar(MeshBuilder mesh, double ta, double ra, double tb, double rb, double radius) {
+        double[] z = lowestAndHighest(0.5 * (ta + tb), 0.5 * (ra + rb));
+        Tubes.bar(mesh, at(ta, ra, z[1]), at(tb, rb, z[1]), radius);
+        Tubes.bar(mesh, at(ta, ra, z[0]), at(tb, rb, z[0]), 0.6 * radius);
     }
 
     /** The lowest and the highest of the rotor face round a point: foot and upper edge of a wall there (mm). */
@@ -921,7 +1065,7 @@ final class GapScene {
     }
 
     /** Points with sharp corners, where a path passes over a groove's edge, rounded off a little, for a tube. */
-    private static double[] rounded(double[] points) {
+    static double[] rounded(double[] points) {
         double[] line = points;
         for (int round = 0; round < 3; round++) {
             double[] next = line.clone();

@@ -4,6 +4,9 @@ package org.whither.render;
 final class Tubes {
     private static final int ROUND = 12;
 
+    /** Triangles of an open tube between one of its points and the next. */
+    static final int TRIANGLES_A_STEP = 2 * ROUND;
+
     private Tubes() {}
 
     /**

@@ -43,6 +43,7 @@ import picocli.CommandLine.Spec;
             SplitCommand.class,
             PathsCommand.class,
             DrawCommand.class,
+            RideCommand.class,
             ReportCommand.class,
             SampleCommand.class
         })

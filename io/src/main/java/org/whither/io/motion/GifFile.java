@@ -97,9 +97,14 @@ public final class GifFile implements FrameFile {
         this.stream = opened;
     }
 
+    /** One sentence with the innermost reason, which the operating system gave. */
     static IOException failure(Path file, IOException cause) {
+        Throwable reason = cause;
+        while (reason.getCause() instanceof IOException inner) {
+            reason = inner;
+        }
         return new IOException(
-                file.getFileName() + " cannot be written: " + cause.getMessage()
+                file.getFileName() + " cannot be written: " + reason.getMessage()
                         + "; free space on the disk or name another folder",
                 cause);
     }

@@ -106,7 +106,7 @@ final class Palette {
                 if (left) {
                     continue;
                 }
-                int bin = (c >> 19 & 31) << 10 | (c >> 11 & 31) << 5 | c >> 3 & 31;
+                int bin = (c >> 19 & 31) << 10 | (c >> 11 & 31) << 5 | (c >> 3 & 31);
                 if (bins[bin] == null) {
                     bins[bin] = new double[4];
                 }
@@ -245,7 +245,7 @@ final class Palette {
         byte[][] channels = new byte[3][256];
         for (int n = 0; n < colours.length; n++) {
             for (int c = 0; c < 3; c++) {
-                channels[c][n] = (byte) (colours[n] >> 16 - 8 * c);
+                channels[c][n] = (byte) (colours[n] >> (16 - 8 * c));
             }
         }
         return new IndexColorModel(8, 256, channels[0], channels[1], channels[2], UNCHANGED);
@@ -283,7 +283,7 @@ final class Palette {
     }
 
     private byte[] mixture(int c) {
-        int key = (c >> 18 & 63) << 12 | (c >> 10 & 63) << 6 | c >> 2 & 63;
+        int key = (c >> 18 & 63) << 12 | (c >> 10 & 63) << 6 | (c >> 2 & 63);
         byte[] mixture = mixtures[key];
         if (mixture == null) {
             // The middle of the colours that share the key.

@@ -67,7 +67,7 @@ class VideoFileTest {
                 image.setRGB(
                         n % width,
                         n / width,
-                        (bytes[p] & 0xff) << 16 | (bytes[p + 1] & 0xff) << 8 | bytes[p + 2] & 0xff);
+                        (bytes[p] & 0xff) << 16 | (bytes[p + 1] & 0xff) << 8 | (bytes[p + 2] & 0xff));
             }
             frames.add(image);
         }
