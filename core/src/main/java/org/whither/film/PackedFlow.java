@@ -82,6 +82,9 @@ public final class PackedFlow {
     /** How many numbers {@link #load} gives. */
     public static final int NUMBERS = 45;
 
+    /** Lanes side by side in what is loaded: number n of a lane is at {@code n * LANES + lane}. */
+    public static final int LANES = 16;
+
     /** What {@link #loadMeasure} gives: the height of the rotor face at the corners (m) … */
     public static final int ROTOR_00 = 0;
 
@@ -108,6 +111,10 @@ public final class PackedFlow {
     private final double pressureSquareOverDensitySquare;
     private final double[] radius;
     private final double[] sigma;
+    /** (j, i): whether the cell is fed, at the end of its row false. */
+    private final boolean[] fed;
+
+    private final boolean fedThroughRotor;
 
     /** What of a flow is to be packed. */
     interface Source {
@@ -154,6 +161,8 @@ public final class PackedFlow {
         levels = new float[size(film, LEVEL)];
         pressures = Double.isNaN(ratio) ? new float[size(film, 1)] : null;
         cells = new float[(nj - 1) * ni * CELL];
+        fedThroughRotor = film.supply().isPresent() && film.supply().get().face() == Face.ROTOR;
+        fed = new boolean[(nj - 1) * ni];
         // All levels of a node together: their profiles across the film are formed once.
         IntStream.range(0, nj).parallel().forEach(j -> {
             for (int i = 0; i < ni; i++) {
@@ -174,7 +183,7 @@ public final class PackedFlow {
 
     /** Memory that it takes a node of the face, of nk levels, with the pressures or where they follow from the density. */
     static long bytesPerNode(int nk, boolean pressures) {
-        return Float.BYTES * (nk * (LEVEL + (pressures ? 1L : 0)) + CELL);
+        return Float.BYTES * (nk * (LEVEL + (pressures ? 1L : 0)) + CELL) + 1;
     }
 
     private int size(Film film, int block) {
@@ -216,6 +225,7 @@ public final class PackedFlow {
         if (i == ni - 1) {
             return;
         }
+        fed[j * ni + i] = film.feeds(grid.cell(i, j));
         RingFaces faces = film.faces();
         int[] corners = faces.at() == Location.CELL
                 ? new int[] {grid.cell(i, j), grid.cell(i, j), grid.cell(i, j), grid.cell(i, j)}
@@ -234,6 +244,16 @@ public final class PackedFlow {
         return nk - 1;
     }
 
+    /** Whether layer k of cell (i, j) touches the rotor face, and that is sealed there. */
+    public boolean sealedBelow(int i, int j, int k) {
+        return k == 0 && !(fedThroughRotor && fed[j * ni + i]);
+    }
+
+    /** Whether layer k of cell (i, j) touches the stator face, and that is sealed there. */
+    public boolean sealedAbove(int i, int j, int k) {
+        return k == nk - 2 && (fedThroughRotor || !fed[j * ni + i]);
+    }
+
     /** Bytes that it takes up. */
     public long bytes() {
         return 4L * (levels.length + cells.length + (pressures == null ? 0 : pressures.length));
@@ -245,84 +265,82 @@ public final class PackedFlow {
      * @param i column of cells
      * @param j row of cells
      * @param k layer
-     * @param into NUMBERS × stride; number n goes to {@code n * stride + lane}
-     * @param stride lanes side by side
+     * @param into NUMBERS × LANES
      * @param lane the lane to write
      */
-    public void load(int i, int j, int k, double[] into, int stride, int lane) {
+    public void load(int i, int j, int k, double[] into, int lane) {
         float[] from = levels;
         int at = ((j * nk + k) * ni + i) * LEVEL;
-        int to = lane;
         // The level below: face i, face j, spread, corner; then face i + 1.
-        into[to] = from[at];
-        into[to += stride] = from[at + 1];
-        into[to += stride] = from[at + 2];
-        into[to += stride] = from[at + 3];
-        into[to += stride] = from[at + 4];
-        into[to += stride] = from[at + 5];
-        into[to += stride] = from[at + 6];
-        into[to += stride] = from[at + 7];
-        into[to += stride] = from[at + 11];
+        into[lane] = from[at];
+        into[LANES + lane] = from[at + 1];
+        into[2 * LANES + lane] = from[at + 2];
+        into[3 * LANES + lane] = from[at + 3];
+        into[4 * LANES + lane] = from[at + 4];
+        into[5 * LANES + lane] = from[at + 5];
+        into[6 * LANES + lane] = from[at + 6];
+        into[7 * LANES + lane] = from[at + 7];
+        into[8 * LANES + lane] = from[at + 11];
         // The level above.
         int above = at + ni * LEVEL;
-        into[to += stride] = from[above];
-        into[to += stride] = from[above + 1];
-        into[to += stride] = from[above + 2];
-        into[to += stride] = from[above + 3];
-        into[to += stride] = from[above + 4];
-        into[to += stride] = from[above + 5];
-        into[to += stride] = from[above + 6];
-        into[to += stride] = from[above + 7];
-        into[to += stride] = from[above + 11];
+        into[9 * LANES + lane] = from[above];
+        into[10 * LANES + lane] = from[above + 1];
+        into[11 * LANES + lane] = from[above + 2];
+        into[12 * LANES + lane] = from[above + 3];
+        into[13 * LANES + lane] = from[above + 4];
+        into[14 * LANES + lane] = from[above + 5];
+        into[15 * LANES + lane] = from[above + 6];
+        into[16 * LANES + lane] = from[above + 7];
+        into[17 * LANES + lane] = from[above + 11];
         // Ring j + 1.
         int outer = at + nk * ni * LEVEL;
-        into[to += stride] = from[outer + 2];
-        into[to += stride] = from[outer + 3];
-        into[to += stride] = from[outer + 5];
-        into[to += stride] = from[outer + 11];
+        into[18 * LANES + lane] = from[outer + 2];
+        into[19 * LANES + lane] = from[outer + 3];
+        into[20 * LANES + lane] = from[outer + 5];
+        into[21 * LANES + lane] = from[outer + 11];
         outer += ni * LEVEL;
-        into[to += stride] = from[outer + 2];
-        into[to += stride] = from[outer + 3];
-        into[to += stride] = from[outer + 5];
-        into[to += stride] = from[outer + 11];
+        into[22 * LANES + lane] = from[outer + 2];
+        into[23 * LANES + lane] = from[outer + 3];
+        into[24 * LANES + lane] = from[outer + 5];
+        into[25 * LANES + lane] = from[outer + 11];
         // The cell; its right face is the next one's left.
         from = cells;
         at = (j * ni + i) * CELL;
-        into[to += stride] = from[at];
-        into[to += stride] = from[at + 1];
-        into[to += stride] = from[at + 2];
-        into[to += stride] = from[at + 3];
-        into[to += stride] = from[at + CELL];
-        into[to += stride] = from[at + CELL + 1];
-        into[to += stride] = from[at + CELL + 2];
-        into[to += stride] = from[at + CELL + 3];
-        into[to += stride] = from[at + 4];
-        into[to += stride] = from[at + 5];
-        into[to += stride] = from[at + 6];
-        into[to += stride] = from[at + 7];
-        into[to += stride] = from[at + 8];
-        into[to += stride] = from[at + 9];
-        into[to += stride] = from[at + 10];
-        into[to += stride] = radius[j];
-        into[to += stride] = radius[j + 1] - radius[j];
-        into[to += stride] = sigma[k];
-        into[to + stride] = sigma[k + 1] - sigma[k];
+        into[26 * LANES + lane] = from[at];
+        into[27 * LANES + lane] = from[at + 1];
+        into[28 * LANES + lane] = from[at + 2];
+        into[29 * LANES + lane] = from[at + 3];
+        into[30 * LANES + lane] = from[at + CELL];
+        into[31 * LANES + lane] = from[at + CELL + 1];
+        into[32 * LANES + lane] = from[at + CELL + 2];
+        into[33 * LANES + lane] = from[at + CELL + 3];
+        into[34 * LANES + lane] = from[at + 4];
+        into[35 * LANES + lane] = from[at + 5];
+        into[36 * LANES + lane] = from[at + 6];
+        into[37 * LANES + lane] = from[at + 7];
+        into[38 * LANES + lane] = from[at + 8];
+        into[39 * LANES + lane] = from[at + 9];
+        into[40 * LANES + lane] = from[at + 10];
+        into[41 * LANES + lane] = radius[j];
+        into[42 * LANES + lane] = radius[j + 1] - radius[j];
+        into[43 * LANES + lane] = sigma[k];
+        into[44 * LANES + lane] = sigma[k + 1] - sigma[k];
     }
 
     /**
      * Writes what more is needed to measure a path in a piece; arguments as in {@link #load}.
      *
-     * @param into MEASURE_NUMBERS × stride
+     * @param into MEASURE_NUMBERS × LANES
      */
-    public void loadMeasure(int i, int j, int k, double[] into, int stride, int lane) {
+    public void loadMeasure(int i, int j, int k, double[] into, int lane) {
         int at = (j * ni + i) * CELL + 11;
         for (int n = 0; n < 4; n++) {
-            into[n * stride + lane] = cells[at + n];
+            into[n * LANES + lane] = cells[at + n];
         }
         int corner = (j * nk + k) * ni + i;
         for (int n = 0; n < 8; n++) {
             int node = corner + ((n >> 2) + (n & 1) * ni + ((n >> 1) & 1) * nk * ni);
-            into[(PRESSURE_000 + n) * stride + lane] =
+            into[(PRESSURE_000 + n) * LANES + lane] =
                     pressures == null ? levels[node * LEVEL + 5] * pressureSquareOverDensitySquare : pressures[node];
         }
     }

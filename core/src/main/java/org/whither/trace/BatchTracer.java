@@ -2,7 +2,6 @@ package org.whither.trace;
 
 import java.util.List;
 import java.util.function.IntSupplier;
-import org.whither.film.Face;
 import org.whither.film.Film;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
@@ -20,7 +19,7 @@ import org.whither.film.PackedFlow;
  * <p>An instance belongs to one thread.
  */
 final class BatchTracer {
-    private static final int LANES = Lanes.LANES;
+    private static final int LANES = PackedFlow.LANES;
     private static final double SEALED_EDGE = 1e-9;
     private static final int MOST_PIECES = 3_000_000;
     private static final int MOST_HALVINGS = 60;
@@ -30,14 +29,12 @@ final class BatchTracer {
     private final PackedFlow packed;
     private final FilmGrid grid;
     private final TraceSettings settings;
-    private final BatchStep step;
+    private final BatchSteps steppers;
     private final int sign;
     private final double steadyTurn;
     private final double stationaryTurn;
     private final double steadyFrameSpeed;
     private final double pitch;
-    private final boolean openRotor;
-    private final boolean openStator;
     private final double perExtent;
     private final double perThickness;
 
@@ -56,10 +53,12 @@ final class BatchTracer {
     private final double[] highestSquare = new double[LANES];
     private final double[] lastZ = new double[LANES];
     private final boolean[] measured = new boolean[LANES];
+    private final boolean[] entered = new boolean[LANES];
     private final double[] point = new double[4];
     private int active;
     private long steps;
     private long rejectedSteps;
+    private long told;
     private int ended;
 
     private List<Release> releases;
@@ -67,21 +66,19 @@ final class BatchTracer {
     private PathEnd[] ends;
     private PathMeasure[] measures;
 
-    BatchTracer(FilmFlow flow, PackedFlow packed, TraceSettings settings, BatchStep step) {
+    BatchTracer(FilmFlow flow, PackedFlow packed, TraceSettings settings, BatchSteps steppers) {
         Film film = flow.film();
         this.flow = flow;
         this.packed = packed;
         this.grid = film.grid();
         this.settings = settings;
-        this.step = step;
+        this.steppers = steppers;
         this.sign = settings.direction().sign();
         double frameSpeed = settings.frame().angularSpeed(film.conditions().rotationRate());
         this.steadyFrameSpeed = film.steadyFrameSpeed();
         this.steadyTurn = steadyFrameSpeed - frameSpeed;
         this.stationaryTurn = frameSpeed;
         this.pitch = grid.pitch();
-        this.openRotor = film.supply().isPresent() && film.supply().get().face() == Face.ROTOR;
-        this.openStator = film.supply().isPresent() && film.supply().get().face() == Face.STATOR;
         this.perExtent = 1 / (settings.tolerance() * (grid.outerRadius() - grid.innerRadius()));
         this.perThickness = 1 / settings.tolerance();
     }
@@ -153,7 +150,9 @@ final class BatchTracer {
         while (active < LANES && fill(active, next)) {
             active++;
         }
+        BatchStep step = steppers.best();
         for (int iteration = 1; active > 0; iteration++) {
+            load();
             step.attempt(lanes, active, sign, perExtent, perThickness);
             int now = active;
             for (int lane = 0; lane < now; lane++) {
@@ -178,6 +177,9 @@ final class BatchTracer {
                 }
                 progress.accept(ended);
                 ended = 0;
+                steppers.worked(steps + rejectedSteps - told);
+                told = steps + rejectedSteps;
+                step = steppers.best();
             }
         }
     }
@@ -238,27 +240,36 @@ final class BatchTracer {
         return true;
     }
 
-    /** Loads the motion of the piece that a lane has entered. */
+    /** Notes that a lane has entered a piece, whose motion is to be loaded before its next step. */
     private void enter(int lane) {
-        int layer = k[lane];
-        packed.load(i[lane], j[lane], layer, lanes.raw, LANES, lane);
-        if (measures != null) {
-            packed.loadMeasure(i[lane], j[lane], layer, lanes.rawMeasure, LANES, lane);
-        }
-        double low = -BatchStep.EDGE;
-        double high = 1 + BatchStep.EDGE;
-        if (layer == 0 && !(openRotor && feeds(lane))) {
-            low = Double.NEGATIVE_INFINITY;
-        }
-        if (layer == flow.layers() - 1 && !(openStator && feeds(lane))) {
-            high = Double.POSITIVE_INFINITY;
-        }
-        put(Lanes.BOUND, lane, low);
-        put(Lanes.BOUND + 1, lane, high);
+        entered[lane] = true;
     }
 
-    private boolean feeds(int lane) {
-        return flow.film().feeds(grid.cell(i[lane], j[lane]));
+    /**
+     * Loads the motion of the pieces just entered: one after another, so that the processor waits for the memory of several
+     * at once.
+     */
+    private void load() {
+        for (int lane = 0; lane < active; lane++) {
+            if (entered[lane]) {
+                entered[lane] = false;
+                load(lane);
+            }
+        }
+    }
+
+    private void load(int lane) {
+        int layer = k[lane];
+        int column = i[lane];
+        int row = j[lane];
+        packed.load(column, row, layer, lanes.raw, lane);
+        if (measures != null) {
+            packed.loadMeasure(column, row, layer, lanes.rawMeasure, lane);
+        }
+        boolean below = packed.sealedBelow(column, row, layer);
+        boolean above = packed.sealedAbove(column, row, layer);
+        put(Lanes.BOUND, lane, below ? Double.NEGATIVE_INFINITY : -BatchStep.EDGE);
+        put(Lanes.BOUND + 1, lane, above ? Double.POSITIVE_INFINITY : 1 + BatchStep.EDGE);
     }
 
     private void move(int from, int to) {
@@ -298,10 +309,10 @@ final class BatchTracer {
     private boolean goOn(int lane) {
         double tried = number(Lanes.STEP, lane);
         double error = number(Lanes.ERROR, lane);
+        if (Double.isNaN(number(Lanes.FASTEST, lane))) {
+            return fail(lane, "the velocity is not a number");
+        }
         if (!(number(Lanes.CHECK, lane) < Double.POSITIVE_INFINITY)) {
-            if (Double.isNaN(number(Lanes.FASTEST, lane))) {
-                return fail(lane, "the velocity is not a number");
-            }
             error = Double.POSITIVE_INFINITY;
         }
         boolean through = error <= 1 && throughSealedFace(lane);

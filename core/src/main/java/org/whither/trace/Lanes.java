@@ -9,7 +9,7 @@ import org.whither.film.PackedFlow;
  */
 final class Lanes {
     /** Lanes side by side. */
-    static final int LANES = 16;
+    static final int LANES = PackedFlow.LANES;
 
     // What the motion in a piece is made of, in {@code motion}; see BatchStep.compose.
     /** Flow density through the face a = 0, a cubic in c. */
@@ -69,7 +69,13 @@ final class Lanes {
     /** Largest of the first rates (1/s), 1 number. */
     static final int FASTEST = 51;
 
-    static final int STATE_NUMBERS = 52;
+    /** Difference of the two orders. */
+    static final int OFF = 52;
+
+    /** The path towards the border that is passed first, less that border: a polynomial; 5 numbers. */
+    static final int CHOSEN = 55;
+
+    static final int STATE_NUMBERS = 60;
 
     /** As {@link PackedFlow#load} gives it. */
     final double[] raw = new double[PackedFlow.NUMBERS * LANES];

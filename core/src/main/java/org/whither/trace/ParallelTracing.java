@@ -105,7 +105,7 @@ public final class ParallelTracing {
         Runnable work = () -> {
             Claims claims = new Claims(next, ends.length, workers);
             if (packed.isPresent()) {
-                BatchTracer tracer = new BatchTracer(flow, packed.get(), settings, new BatchStep());
+                BatchTracer tracer = new BatchTracer(flow, packed.get(), settings, BatchSteps.shared());
                 tracer.follow(releases, claims, ends, measures, ended);
                 steps.addAndGet(tracer.steps());
                 rejected.addAndGet(tracer.rejectedSteps());

@@ -173,7 +173,7 @@ public final class PathSampler {
         private void follow(List<Release> releases, BatchTracer.StepWatcher watcher) {
             TraceSettings how = settings.tracing(direction);
             if (packed.isPresent()) {
-                BatchTracer tracer = new BatchTracer(flow, packed.get(), how, new BatchStep());
+                BatchTracer tracer = new BatchTracer(flow, packed.get(), how, BatchSteps.shared());
                 tracer.watch(watcher);
                 int[] next = {0};
                 tracer.follow(releases, () -> next[0] < releases.size() ? next[0]++ : -1, ends, null, done -> {});

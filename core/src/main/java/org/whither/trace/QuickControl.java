@@ -12,6 +12,9 @@ final class QuickControl {
     private static final double SMALLEST = 0.2;
     private static final double LARGEST = 10;
     private static final double LEAST_ERROR = 1e-10;
+    /** An error so small that the next step may be as much longer as any, whatever the last was. */
+    private static final double TINY = 1e-8;
+
     private static final double LEAST_LAST = 1e-4;
     private static final double LOG_LEAST_LAST = log2(LEAST_LAST);
 
@@ -35,6 +38,10 @@ final class QuickControl {
 
     /** Factor on the step after one of error at most 1. */
     double afterAccepted(int lane, double error) {
+        if (error <= TINY && !rejected[lane]) {
+            logLast[lane] = LOG_LEAST_LAST;
+            return LARGEST;
+        }
         double log = log2(error > LEAST_ERROR ? error : LEAST_ERROR);
         double factor = exp2(LOG_SAFETY - INTEGRAL * log + PROPORTIONAL * logLast[lane]);
         double most = rejected[lane] ? 1 : LARGEST;

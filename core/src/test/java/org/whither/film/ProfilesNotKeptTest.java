@@ -30,14 +30,14 @@ class ProfilesNotKeptTest {
             assertArrayEquals(a, b);
             assertEquals(kept.radialFlowBelow(i, j, sigma), anew.radialFlowBelow(i, j, sigma));
         }
-        double[] load = new double[PackedFlow.NUMBERS];
-        double[] again = new double[PackedFlow.NUMBERS];
+        double[] load = new double[PackedFlow.NUMBERS * PackedFlow.LANES];
+        double[] again = new double[PackedFlow.NUMBERS * PackedFlow.LANES];
         for (int n = 0; n < 300; n++) {
             int i = random.nextInt(grid.cellsTheta());
             int j = random.nextInt(grid.cellsRadial());
             int k = random.nextInt(kept.layers());
-            kept.packed().orElseThrow().load(i, j, k, load, 1, 0);
-            anew.packed().orElseThrow().load(i, j, k, again, 1, 0);
+            kept.packed().orElseThrow().load(i, j, k, load, 0);
+            anew.packed().orElseThrow().load(i, j, k, again, 0);
             assertArrayEquals(load, again);
         }
     }

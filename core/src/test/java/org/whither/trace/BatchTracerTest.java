@@ -1,8 +1,10 @@
 package org.whither.trace;
 
+import static org.junit.jupiter.api.Assertions.assertArrayEquals;
 import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertInstanceOf;
 import static org.junit.jupiter.api.Assertions.assertTrue;
+import static org.junit.jupiter.api.Assumptions.assumeTrue;
 
 import java.util.ArrayList;
 import java.util.Arrays;
@@ -246,6 +248,64 @@ class BatchTracerTest {
         assertEquals(0.952579, (double) Arrays.stream(times).filter(t -> t < 2).count() / count, 1.5 / count);
         // The slowest thousandth, near the faces, takes much of the mean: 1 − ∫ of the tail beyond the last release.
         assertEquals(1, Arrays.stream(times).average().orElseThrow(), 0.02);
+    }
+
+    /** Lane by lane and on vectors: the same bits, whatever the tolerance makes of the steps. */
+    @Test
+    void follow_onVectors_givesTheSameBits() {
+        BatchStep vectors = BatchSteps.onVectors();
+        assumeTrue(vectors != null, "the virtual machine was started without jdk.incubator.vector");
+        for (FilmFlow flow : List.of(
+                new ConservingFlow(WAVY.full(6, Frame.ROTATING)),
+                new ConservingFlow(COARSE.lubrication()),
+                new ConservingFlow(WavyCase.mirrored(COARSE.full(3, Frame.STATIONARY))))) {
+            List<Release> releases = anywhere(flow.film().grid(), 333, 13);
+            for (Direction direction : Direction.values()) {
+                for (double tolerance : new double[] {1e-2, 1e-6, 1e-9}) {
+                    TraceSettings settings = new TraceSettings(Frame.STATIONARY, direction, tolerance, 0.02);
+                    PathEnd[] ends = new PathEnd[releases.size()];
+                    PathMeasure[] measures = new PathMeasure[ends.length];
+                    long steps = follow(flow, settings, releases, new BatchStep(), ends, measures);
+                    PathEnd[] others = new PathEnd[ends.length];
+                    PathMeasure[] otherMeasures = new PathMeasure[ends.length];
+                    assertEquals(steps, follow(flow, settings, releases, vectors, others, otherMeasures));
+                    assertArrayEquals(ends, others);
+                    assertArrayEquals(measures, otherMeasures);
+                }
+            }
+        }
+    }
+
+    private static long follow(
+            FilmFlow flow,
+            TraceSettings settings,
+            List<Release> releases,
+            BatchStep step,
+            PathEnd[] ends,
+            PathMeasure[] measures) {
+        BatchTracer tracer = new BatchTracer(flow, flow.packed().orElseThrow(), settings, BatchSteps.only(step));
+        int[] next = {0};
+        tracer.follow(releases, () -> next[0] < ends.length ? next[0]++ : -1, ends, measures, n -> {});
+        return tracer.steps() + 1_000_000_000L * tracer.rejectedSteps();
+    }
+
+    /** The powers of the control of the step, to the accuracy that it promises. */
+    @Test
+    void control_ofTheBatch_isThatOfTheSinglePath() {
+        StepControl exact = new StepControl();
+        QuickControl quick = new QuickControl(1);
+        quick.begin(0);
+        for (double error = 1e-12; error < 1e6; error *= 3.7) {
+            if (error <= 1) {
+                double factor = exact.afterAccepted(error);
+                assertEquals(factor, quick.afterAccepted(0, error), 0.01 * factor);
+            } else {
+                double factor = exact.afterRejected(error);
+                assertEquals(factor, quick.afterRejected(0, error), 0.01 * factor);
+            }
+        }
+        assertEquals(exact.afterAccepted(1e-8), quick.afterAccepted(0, 1e-8), 0);
+        assertEquals(0.2, quick.afterRejected(0, Double.NaN), 0);
     }
 
     /** An interpolation that is not packed goes to the single-path tracer. */

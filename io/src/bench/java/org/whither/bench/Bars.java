@@ -24,7 +24,7 @@ import org.whither.trace.TraceSettings;
 
 /** Runs the benchmarks and prints how they stand to the bars. Its arguments name the groups to run; none means all. */
 public final class Bars {
-    private static final List<String> GROUPS = List.of("tracing", "opening", "split", "large");
+    private static final List<String> GROUPS = List.of("tracing", "precision", "opening", "split", "large");
 
     /** Tracers whose steps are counted. */
     private static final int COUNTED = 4000;
@@ -47,6 +47,9 @@ public final class Bars {
         if (wanted.isEmpty() || wanted.contains("tracing")) {
             bars.tracing();
         }
+        if (wanted.isEmpty() || wanted.contains("precision")) {
+            bars.table.addAll(Precision.table());
+        }
         if (wanted.isEmpty() || wanted.contains("opening")) {
             bars.opening();
         }
@@ -59,8 +62,9 @@ public final class Bars {
         System.out.println();
         System.out.printf(
                 Locale.ROOT,
-                "Java %s, %d processors%n",
+                "Java %s, %s Vector API, %d processors%n",
                 Runtime.version(),
+                ModuleLayer.boot().findModule("jdk.incubator.vector").isPresent() ? "with" : "without",
                 Runtime.getRuntime().availableProcessors());
         bars.table.forEach(System.out::println);
     }

@@ -31,7 +31,10 @@ final class LibraryTracing {
 
     /** Times at which the tracers end, by Apache Commons Math (s); not a number for one that cannot be integrated. */
     static double[] commonsMath(FilmFlow flow, TraceSettings settings, List<Release> releases) {
-        LocatedFlow located = new LocatedFlow(flow);
+        return commonsMath(new LocatedFlow(flow), flow, settings, releases);
+    }
+
+    static double[] commonsMath(LocatedFlow located, FilmFlow flow, TraceSettings settings, List<Release> releases) {
         double[] scale = LocatedFlow.errorScale(flow.film(), settings.tolerance());
         var equations = new FirstOrderDifferentialEquations() {
             @Override

@@ -15,6 +15,7 @@ final class LocatedFlow {
     private int i;
     private int j;
     private int k;
+    private long evaluations;
 
     LocatedFlow(FilmFlow flow) {
         this.flow = flow;
@@ -36,8 +37,14 @@ final class LocatedFlow {
         return new double[] {tolerance * extent / middle, tolerance * extent, tolerance};
     }
 
+    /** How often the rates were asked for. */
+    long evaluations() {
+        return evaluations;
+    }
+
     /** Rates at a state; points beyond the film are given the rates of the nearest point in it. */
     void rates(double[] state, double[] dydt) {
+        evaluations++;
         double r = Math.max(grid.innerRadius(), Math.min(grid.outerRadius(), state[1]));
         double sigma = Math.max(0, Math.min(1, state[2]));
         while (j > 0 && r < grid.radius(j)) {

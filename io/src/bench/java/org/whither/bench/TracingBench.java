@@ -40,9 +40,9 @@ public class TracingBench {
         settings = Work.settings(flow.film(), Work.TOLERANCE);
         releases = Work.releases(flow, Work.TRACERS);
         fewer = releases.subList(0, FEWER);
-        // Warms up, in less time than a round of all tracers.
+        // Warms up, long enough for the program to change over to vectors.
         for (int n = 0; n < 8; n++) {
-            ParallelTracing.measure(flow, settings, releases.subList(0, 500), 1, done -> {});
+            ParallelTracing.follow(flow, settings, releases.subList(0, 2000), 1, done -> {});
             LibraryTracing.commonsMath(flow, settings, fewer);
             LibraryTracing.hipparchus(flow, settings, fewer);
         }
@@ -50,14 +50,14 @@ public class TracingBench {
 
     /** The program's tracer on one thread. */
     @Benchmark
-    public ParallelTracing.Measured oneThread() {
-        return ParallelTracing.measure(flow, settings, releases, 1, done -> {});
+    public ParallelTracing.Outcome oneThread() {
+        return ParallelTracing.follow(flow, settings, releases, 1, done -> {});
     }
 
     /** The program's tracer on two threads. */
     @Benchmark
-    public ParallelTracing.Measured twoThreads() {
-        return ParallelTracing.measure(flow, settings, releases, 2, done -> {});
+    public ParallelTracing.Outcome twoThreads() {
+        return ParallelTracing.follow(flow, settings, releases, 2, done -> {});
     }
 
     /** Apache Commons Math on one thread, fewer tracers. */

@@ -5,6 +5,7 @@ import static org.junit.jupiter.api.Assertions.assertFalse;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import java.io.IOException;
+import java.io.RandomAccessFile;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.time.Instant;
@@ -76,6 +77,29 @@ class LaunchTest {
                         + machine.house.toRealPath().resolve("io/target/whither.jar")
                         + "><split><two  words><*><>",
                 outcome.output());
+    }
+
+    /** The Vector API announces itself, so it is for fields whose tracing is long, where the Java at hand has it. */
+    @Test
+    void whither_largeField_getsTheVectorApi() throws IOException {
+        equip();
+        Path small = Files.writeString(folder.resolve("small.h5"), "small");
+        Path large = folder.resolve("large field.h5");
+        try (RandomAccessFile file = new RandomAccessFile(large.toFile(), "rw")) {
+            file.setLength(80L << 20);
+        }
+        String vectors = "<--add-modules><jdk.incubator.vector>";
+        assertFalse(machine.sh("io/whither", "split", large.toString()).output().contains(vectors));
+        Files.writeString(machine.jdk("17.0.15").resolve("bin/java"), """
+                #!/bin/sh
+                case $1 in --list-modules) echo jdk.incubator.vector@17.0.15; exit 0 ;; esac
+                printf '<%s>' "$@"; exit 7
+                """);
+        Outcome outcome = machine.sh("io/whither", "split", large.toString());
+        assertEquals(7, outcome.status(), outcome.errors());
+        assertTrue(outcome.output().contains(vectors), outcome.output());
+        assertTrue(outcome.output().endsWith("<split><" + large + ">"), outcome.output());
+        assertFalse(machine.sh("io/whither", "split", small.toString()).output().contains(vectors));
     }
 
     @Test
