@@ -2,6 +2,7 @@ package org.whither.io.command;
 
 import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.io.IOException;
+import java.nio.file.FileSystemException;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.time.ZonedDateTime;
@@ -174,7 +175,16 @@ final class ReportCommand implements Callable<Integer> {
                 noPictures ? Optional.of("none were asked for.") : missing,
                 Optional.empty());
         List<ReportPicture> drawn = pictures;
-        WholeFolder.add(target, into -> write(a.numbers(), drawn, page, into));
+        try {
+            WholeFolder.add(target, into -> write(a.numbers(), drawn, page, into));
+        } catch (FileSystemException e) {
+            throw e; // it names the file
+        } catch (IOException e) {
+            throw new IOException(
+                    target + " cannot be written: " + e.getMessage() + "; make room there or name another folder with"
+                            + " --out",
+                    e);
+        }
         return missing;
     }
 

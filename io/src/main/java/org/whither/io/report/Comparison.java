@@ -7,6 +7,7 @@ import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
+import org.whither.fate.Split;
 import org.whither.io.result.EngineerUnits;
 
 /**
@@ -183,6 +184,8 @@ public final class Comparison {
         if (x < SMALLEST_SHARE && y < SMALLEST_SHARE) {
             return;
         }
+        boolean inA = enters(a, from);
+        boolean inB = enters(b, from);
         boolean sure = low(first) > high(second, b, from) || low(second) > high(first, a, from);
         String gas = from.equals("supply") ? "supply gas" : "gas from " + side(from);
         String goes = to.equals("held") ? "is held in the film" : "goes to " + side(to);
@@ -193,6 +196,18 @@ public final class Comparison {
                 "f2",
                 sure);
         String values = String.format(Locale.ROOT, "%.1f kg of 100 in A, %.1f in B", 100 * x, 100 * y);
+        if (inA != inB) {
+            node.put(
+                    "words",
+                    String.format(
+                            Locale.ROOT,
+                            "%s enters the film in %s only: of every 100 kg of it there, %.1f kg %s.",
+                            capital(gas),
+                            inA ? "A" : "B",
+                            100 * (inA ? x : y),
+                            goes.replace("is ", "are ").replace("goes ", "go ")));
+            return;
+        }
         if (!sure) {
             node.put(
                     "words",
@@ -217,14 +232,21 @@ public final class Comparison {
                         values));
     }
 
+    private static boolean enters(JsonNode numbers, String from) {
+        JsonNode balance = numbers.at("/split/balance");
+        double all = balance.get("supply_in").asDouble()
+                + balance.get("inner_in").asDouble()
+                + balance.get("outer_in").asDouble();
+        return balance.get(from + "_in").asDouble() > Split.NEGLIGIBLE * all;
+    }
+
     private static double low(Optional<JsonNode> row) {
         return row.map(found -> found.get("share_low").asDouble()).orElse(0.0);
     }
 
     /** Upper end of a share: of a pair without a row, 0 where there is no such gas, else what the sampling may miss. */
     private static double high(Optional<JsonNode> row, JsonNode numbers, String from) {
-        String key = from.equals("supply") ? "supply_in" : from + "_in";
-        double none = numbers.at("/split/balance/" + key).asDouble() > 0
+        double none = enters(numbers, from)
                 ? numbers.at("/certainty/sampling_percent").asDouble() / 100
                 : 0;
         return row.map(found -> found.get("share_high").asDouble()).orElse(none);

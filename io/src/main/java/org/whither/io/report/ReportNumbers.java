@@ -12,6 +12,7 @@ import org.whither.eddy.Eddies;
 import org.whither.eddy.Zone;
 import org.whither.fate.BorderBalance;
 import org.whither.fate.Destination;
+import org.whither.fate.Split;
 import org.whither.fate.SplitRow;
 import org.whither.film.Conditions;
 import org.whither.film.Film;
@@ -119,8 +120,9 @@ public final class ReportNumbers {
     // ---- flows -----------------------------------------------------------------------------------------------------
 
     private void flows(ArrayNode flows) {
+        double negligible = Split.NEGLIGIBLE * balance.inflow();
         flow(flows, "supply", "Supply consumption", balance.supplyIn(), false);
-        if (balance.supplyOut() > 0) {
+        if (balance.supplyOut() > negligible) {
             flow(flows, "back_into_feed", "Back into the feed", balance.supplyOut(), false);
         }
         for (PathEnd.Border side : DIAMETERS) {
@@ -142,7 +144,7 @@ public final class ReportNumbers {
         }
         for (PathEnd.Border side : DIAMETERS) {
             double entering = side == PathEnd.Border.INNER ? balance.innerIn() : balance.outerIn();
-            if (entering > 0) {
+            if (entering > negligible) {
                 flow(flows, "enters_" + name(side), "Drawn in from " + place(side), entering, false);
             }
         }

@@ -44,7 +44,7 @@ final class Answer {
         }
         if (!result.feedLetsGasIn()) {
             double back = split.balance().supplyOut();
-            return back > 0
+            return back > Split.NEGLIGIBLE * split.balance().inflow()
                     ? String.format(
                             Locale.ROOT,
                             "No supply gas enters the film: %s g/h of its gas leave through the feed.",

@@ -397,6 +397,11 @@ class ReportPageTest {
                         .startsWith(String.format(
                                 Locale.ROOT, "Supply consumption: %.0f %% less in B: ", 100 * (a - b) / a)),
                 supply.get("words").asText());
+        assertTrue(
+                both.at("/comparison/differences")
+                        .toString()
+                        .contains("Gas from the process enters the film in B only: of every"),
+                both.at("/comparison/differences").toString());
         assertTrue(page(both, false).contains("What differs from A to B"));
     }
 

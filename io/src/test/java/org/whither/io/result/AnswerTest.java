@@ -150,6 +150,8 @@ class AnswerTest {
                 "No supply gas enters the film. Process gas REACHES the atmosphere: 36.00 g/h, 100.0 % of the leakage to it"
                         + " (36.00 g/h enter the film).",
                 answer);
+        // What rounding leaves is no flow.
+        assertTrue(answer(new BorderBalance(0, 1e-20, 0, 1e-5, 1e-5, 0)).startsWith("No supply gas enters the film. "));
         BorderBalance backwards = new BorderBalance(0, 2e-6, 0, 0.8e-5, 1e-5, 0);
         assertTrue(answer(backwards)
                 .startsWith("No supply gas enters the film: 7.200 g/h of its gas leave through the feed."));
