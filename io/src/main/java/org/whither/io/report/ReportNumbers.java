@@ -150,7 +150,9 @@ public final class ReportNumbers {
         }
     }
 
-    private void flow(ArrayNode flows, String key, String words, double massFlow, boolean part) {
+    private void flow(ArrayNode flows, String key, String words, double found, boolean part) {
+        // What rounding leaves is no flow.
+        double massFlow = found > Split.NEGLIGIBLE * balance.inflow() ? found : 0;
         ObjectNode node = flows.addObject();
         node.put("name", key);
         node.put("words", words);
@@ -288,7 +290,11 @@ public final class ReportNumbers {
         if (!result.isResult()) {
             return "none";
         }
-        return result.closes() && result.complete() && result.split().widthReached() ? "sure" : "fair";
+        return result.closes()
+                        && result.split().lostShare() == 0
+                        && result.split().widthReached()
+                ? "sure"
+                : "fair";
     }
 
     private String flowsCertainty() {
