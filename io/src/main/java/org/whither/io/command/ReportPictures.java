@@ -17,6 +17,8 @@ import org.whither.io.result.FieldSummary;
 import org.whither.io.result.SplitResult;
 import org.whither.render.Gap;
 import org.whither.render.GapSettings;
+import org.whither.render.Meridian;
+import org.whither.render.MeridianSettings;
 import org.whither.render.PictureSettings;
 import org.whither.render.Plan;
 import org.whither.render.Relief;
@@ -61,6 +63,7 @@ final class ReportPictures {
         all.add(pictures.relief());
         progress.accept(0.7);
         all.add(pictures.gap());
+        all.add(pictures.meridian());
         progress.accept(1);
         return all;
     }
@@ -145,6 +148,18 @@ final class ReportPictures {
                         "Seen from over the bore, its thickness %.0f times too large. Follow a tube to its arrow: where"
                                 + " markers crowd, gas is slow; where it dips, it runs in a groove.",
                         GapSettings.USUAL));
+    }
+
+    private ReportPicture meridian() throws IOException {
+        return picture(
+                "meridian",
+                "The section",
+                Meridian.draw(flow, List.of(), MeridianSettings.averaged(settings)),
+                "The film of " + input.title()
+                        + " cut along the radius, averaged round the ring, its thickness drawn far too"
+                        + " large, with the motion of the gas in that plane.",
+                "The film cut along the radius, averaged round the ring, its thickness drawn far too large. Look at which"
+                        + " way gas runs at each height, and whether it turns back anywhere.");
     }
 
     private ReportPicture picture(String name, String title, BufferedImage image, String alternative, String caption)

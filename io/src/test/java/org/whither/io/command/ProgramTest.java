@@ -58,7 +58,7 @@ class ProgramTest {
         assertTrue(names(out)
                 .containsAll(List.of(".whither-results", "field.h5", "report.html", "report.json", "split.json")));
         assertTrue(run.out().contains("The page for the plant: " + out.resolve("report.html")), run.out());
-        assertEquals(3, Jsoup.parse(out.resolve("report.html")).select("img").size());
+        assertEquals(4, Jsoup.parse(out.resolve("report.html")).select("img").size());
         assertEquals(1280, ImageIO.read(out.resolve("plan.png").toFile()).getWidth());
         assertEquals(720, ImageIO.read(out.resolve("gap.png").toFile()).getHeight());
         assertTrue(run.out().contains("Of every 100 kg of supply gas"), run.out());
