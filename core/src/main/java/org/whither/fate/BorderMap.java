@@ -11,9 +11,11 @@ import org.whither.trace.PathEnd;
  * @param massFlow mass flow of the whole ring that is mapped (kg/s)
  * @param patches patches it was divided into
  * @param mapTracers tracers followed to divide it
- * @param checks random checks of its settled patches; they also give the times and turns
- * @param wrongChecks how many of them found another fate than that of their patch, which was then divided
- * @param unsettled share of the flow in patches of more than one fate, or whose tracers could not be integrated
+ * @param mixed share of the flow in patches of more than one fate, or of none known
+ * @param samples tracers followed from random points of those patches, which tell their fates
+ * @param unsettled share of the flow whose fate is left open by the map and its samples: the widest interval
+ * @param checks random points followed to check the settled patches; they also give the times and turns
+ * @param wrongChecks how many of them found another fate than that of their patch
  * @param missedBound upper bound of the share of the flow in settled patches that has another fate; with the chance of
  *     the 95 % interval
  * @param steps integration steps kept
@@ -25,9 +27,11 @@ public record BorderMap(
         double massFlow,
         long patches,
         long mapTracers,
+        double mixed,
+        int samples,
+        double unsettled,
         int checks,
         int wrongChecks,
-        double unsettled,
         double missedBound,
         long steps,
         boolean reached) {}

@@ -19,34 +19,16 @@ import org.whither.trace.TraceSettings;
 /**
  * Maps one border into the destinations of the gas that enters over it, or the origins of the gas that leaves.
  *
- * <p>A {@link PatchMap} of the border, in which equal areas are equal mass flows, is refined until little flow is
- * unsettled. Then random points are followed, one in each of many equal parts of the area. They check the settled
- * patches, and since each stands for the same mass flow they also give times and turns without bias. Where the checks
- * find too many wrong patches, the map is mended and checked once more with fresh points. The two rounds have the chances
- * {@code CONFIDENCE}, which together make 95 %.
+ * <p>Points of the unit square, whose equal areas are equal mass flows (see {@link ReleasePlan}), are followed until a
+ * {@link MapSurvey} of the square tells the shares as sharply as wanted. Its checks each stand for the same mass flow, so
+ * they also give times and turns without bias.
  */
 final class BorderTracing {
-    /** Chances of the bounds of the first and the second round of checks: 1 − 0.04 − 0.01 = 0.95. */
-    private static final double[] CONFIDENCE = {0.96, 0.99};
-    /** Normal deviates of those chances, one-sided. */
-    private static final double[] DEVIATE = {1.750686, 2.326348};
-
-    /** The part of the wanted width that what is unsettled may take up, at least and at most. */
-    private static final double LEAST_PART = 0.25;
-
-    private static final double MOST_PART = 0.65;
-    private static final double LAST_PART = 0.02;
-    private static final int FEWEST_CHECKS = 1024;
-    private static final int CHECKS_AT_ONCE = 256;
-    /** Parts of the budget up to which the map may be made, mended, and its first mesh made. */
-    private static final double MAP_PART = 0.6;
-
-    private static final double MENDING_PART = 0.9;
+    /** Part of what may be spent that the first mesh may take. */
     private static final double MESH_PART = 0.2;
+
     private static final int SCOUTS = 32;
     private static final int COARSEST = 4;
-    private static final int EDGE_SCOUTS = 64;
-    private static final double EDGE_REACH = 0.01;
     private static final int FATES = Destination.values().length;
 
     private final FilmFlow flow;
@@ -56,7 +38,6 @@ final class BorderTracing {
     private final SplitSettings settings;
     private final TraceSettings how;
     private final SplittableRandom random;
-    private final DoubleConsumer progress;
     private final double shift;
     private final double edge;
 
@@ -65,13 +46,7 @@ final class BorderTracing {
     private long steps;
     private PathEnd.Failed failure;
 
-    private PatchMap map;
-    private int checks;
-    private int wrong;
-    private double missedBound = 1;
-    private boolean reached;
-    private double[] estimate;
-
+    private final MapSurvey survey;
     private final List<Release> releases = new ArrayList<>();
     private final List<PathEnd> ends = new ArrayList<>();
     private final List<PathMeasure> measures = new ArrayList<>();
@@ -93,43 +68,26 @@ final class BorderTracing {
         this.settings = settings;
         this.how = new TraceSettings(settings.frame(), direction, settings.tolerance(), timeLimit);
         this.random = random;
-        this.progress = progress;
         this.shift = random.nextDouble();
         // Gas on a face never leaves: the outermost corners are taken a little inside.
-        this.edge = settings.width() / 50;
+        this.edge = settings.width() / 5;
         Arrays.fill(shortest, Double.POSITIVE_INFINITY);
-        run();
-    }
-
-    private void run() {
-        map = new PatchMap(this::fates, FATES, mesh(), random.split());
-        scoutEdges();
-        double width = settings.width();
-        refine(MOST_PART * width, MAP_PART);
-        double target = cheapestPart() * width;
-        refine(target, MAP_PART);
-        for (int round = 0; round < CONFIDENCE.length; round++) {
-            check(checksFor(width, round), CONFIDENCE[round]);
-            // What the checks found wrong is mended; the bound stays that of the map as it was. A finer map makes up
-            // for a somewhat larger bound, a second round for a much larger one.
-            double left = width - 2 * missedBound;
-            boolean last = round == CONFIDENCE.length - 1;
-            refine(left >= 0.5 * target ? left : last ? Math.max(left, LAST_PART * width) : target, MENDING_PART);
-            reached = unsettled() + 2 * missedBound <= width;
-            if (reached || !mayGoOn(1)) {
-                break;
-            }
-        }
-        estimate = map.estimate();
-        reached = Arrays.stream(Destination.values())
-                .allMatch(fate -> interval(fate).width() <= width);
+        survey = new MapSurvey(
+                new Explorer(),
+                FATES,
+                Destination.LOST.ordinal(),
+                settings.width(),
+                mesh(),
+                edge,
+                random.split(),
+                progress);
         progress.accept(1);
     }
 
     /** Patches along a side of the first mesh: fewer where a few scouts tell that it would cost too much. */
     private int mesh() {
-        double[][] points = stratified(SCOUTS, random);
-        fates(points[0], points[1]);
+        double[][] points = MapSurvey.stratified(SCOUTS, random);
+        explore(points[0], points[1]);
         int mesh = PatchMap.MESH;
         while (mesh > COARSEST && 3.0 * mesh * mesh * steps / SCOUTS > MESH_PART * mostSteps()) {
             mesh /= 2;
@@ -137,84 +95,46 @@ final class BorderTracing {
         return mesh;
     }
 
-    /**
-     * Puts more points near both ends of v into the first mesh: beside the edge of a feed, or a face, there are narrow
-     * pockets of gas that is held or goes another way.
-     */
-    private void scoutEdges() {
-        double[] u = new double[2 * EDGE_SCOUTS];
-        double[] v = new double[u.length];
-        for (int n = 0; n < u.length; n++) {
-            u[n] = (n / 2 + random.nextDouble()) / EDGE_SCOUTS;
-            double near = edge * Math.pow(EDGE_REACH / edge, random.nextDouble());
-            v[n] = n % 2 == 0 ? near : 1 - near;
-        }
-        if (edge < EDGE_REACH && mayGoOn(MAP_PART)) {
-            map.place(u, v, fates(u, v));
-        }
-    }
-
     /** Gas followed back only confirms what the gas followed forward told: it may cost half as much. */
     private long mostSteps() {
         return settings.mostSteps() / (direction == Direction.FORWARD ? 1 : 2);
     }
 
-    /**
-     * The part of the wanted width to leave to what is unsettled so that map and checks together cost least. The map
-     * costs c/U tracers for an unsettled part U, c being known from the tracers it took so far; the checks cost z²/B for a
-     * bound B of what was missed, which counts below and above the share: U + 2B is the width.
-     */
-    private double cheapestPart() {
-        double ofMap = Math.sqrt(Math.max(0, map.points() - map.firstPoints()) * map.mixed());
-        double ofChecks = Math.sqrt(2) * DEVIATE[0];
-        return Math.max(LEAST_PART, Math.min(MOST_PART, ofMap / (ofMap + ofChecks)));
-    }
-
-    /**
-     * Checks of a round: so many that Wilson's bound leaves the wanted width where none is wrong, z²/(N + z²); in the second
-     * round also where one is, for there the first has shown that some gas is easily missed.
-     */
-    private int checksFor(double width, int round) {
-        double bound = 0.5 * Math.max(width - unsettled(), LEAST_PART * width);
-        double square = DEVIATE[round] * DEVIATE[round];
-        int number = (int) Math.min(settings.mostTracers(), Math.ceil(square * (1 / bound - 1)));
-        while (round > 0
-                && number < settings.mostTracers()
-                && Interval.upperBound(1, number, CONFIDENCE[round]) > bound) {
-            number += 1 + number / 16;
+    /** Follows points of the square for the survey. */
+    private final class Explorer implements MapSurvey.Explorer {
+        @Override
+        public int[] explore(double[] u, double[] v) {
+            return BorderTracing.this.explore(u, v);
         }
-        return Math.max(FEWEST_CHECKS, number);
+
+        @Override
+        public int[] check(double[] u, double[] v) {
+            return BorderTracing.this.check(u, v);
+        }
+
+        @Override
+        public int affordable(double part) {
+            double left = part * settings.mostTracers() - tracers;
+            double leftBySteps = (part * mostSteps() - steps) * tracers / Math.max(1, steps);
+            return (int) Math.max(0, Math.min(left, leftBySteps));
+        }
     }
 
-    private boolean mayGoOn(double part) {
-        return tracers < part * settings.mostTracers() && steps < part * mostSteps();
-    }
+    // ---- tracers ----------------------------------------------------------------------------------------
 
-    private void refine(double target, double part) {
-        double start = Math.max(map.mixed(), 2 * target);
-        map.refine(target, () -> {
-            progress.accept(0.5
-                    * Math.min(
-                            1, Math.max(0, Math.log(start / map.mixed()) / Math.log(start / Math.max(1e-9, target)))));
-            return mayGoOn(part);
-        });
-    }
-
-    // ---- tracers of the map ----------------------------------------------------------------------------------------
-
-    private int[] fates(double[] u, double[] v) {
+    private int[] explore(double[] u, double[] v) {
         List<Release> batch = new ArrayList<>(u.length);
         for (int n = 0; n < u.length; n++) {
-            batch.add(release(u[n], Math.max(edge, Math.min(1 - edge, v[n])), 0));
+            batch.add(release(u[n], Math.max(edge, Math.min(1 - edge, v[n]))));
         }
         ParallelTracing.Outcome outcome = ParallelTracing.follow(flow, how, batch, settings.threads(), n -> {});
         steps += outcome.steps();
         return note(outcome.ends());
     }
 
-    private Release release(double u, double v, double massFlow) {
+    private Release release(double u, double v) {
         double turned = u + shift;
-        return plan.at(turned - Math.floor(turned), v, massFlow);
+        return plan.at(turned - Math.floor(turned), v, 0);
     }
 
     private int[] note(List<PathEnd> found) {
@@ -231,67 +151,18 @@ final class BorderTracing {
         return fates;
     }
 
-    // ---- random checks ---------------------------------------------------------------------------------------------
-
-    private void check(int wanted, double confidence) {
-        double[][] points = stratified(wanted, random);
-        int all = points[0].length;
-        double each = plan.massFlow() / all;
-        int wrongNow = 0;
-        int done = 0;
-        List<double[]> us = new ArrayList<>();
-        List<double[]> vs = new ArrayList<>();
-        List<int[]> fates = new ArrayList<>();
-        while (done < all && mayGoOn(1)) {
-            int count = Math.min(CHECKS_AT_ONCE, all - done);
-            double[] u = Arrays.copyOfRange(points[0], done, done + count);
-            double[] v = Arrays.copyOfRange(points[1], done, done + count);
-            List<Release> batch = new ArrayList<>(count);
-            for (int n = 0; n < count; n++) {
-                batch.add(release(u[n], v[n], each));
-            }
-            ParallelTracing.Measured measured = ParallelTracing.measure(flow, how, batch, settings.threads(), n -> {});
-            steps += measured.outcome().steps();
-            stepsOfChecks += measured.outcome().steps();
-            us.add(u);
-            vs.add(v);
-            fates.add(note(measured.outcome().ends()));
-            releases.addAll(batch);
-            ends.addAll(measured.outcome().ends());
-            measures.addAll(measured.measures());
-            done += count;
-            progress.accept(0.5 + 0.5 * done / all);
+    private int[] check(double[] u, double[] v) {
+        List<Release> batch = new ArrayList<>(u.length);
+        for (int n = 0; n < u.length; n++) {
+            batch.add(release(u[n], v[n]));
         }
-        // Only now: a check must not mend the map that the next one checks.
-        for (int n = 0; n < us.size(); n++) {
-            wrongNow += map.countWrong(us.get(n), vs.get(n), fates.get(n));
-        }
-        for (int n = 0; n < us.size(); n++) {
-            map.place(us.get(n), vs.get(n), fates.get(n));
-        }
-        checks += done;
-        wrong += wrongNow;
-        missedBound = Math.min(missedBound, Interval.upperBound(wrongNow, done, confidence));
-    }
-
-    /** At least so many points, one at random in each of as many equal rectangles of the unit square, in random order. */
-    static double[][] stratified(int wanted, SplittableRandom random) {
-        // Finer along v, along which times differ most: across the film.
-        int rows = (int) Math.ceil(Math.sqrt(4.0 * wanted));
-        int columns = (wanted + rows - 1) / rows;
-        int count = rows * columns;
-        int[] order = new int[count];
-        for (int n = 0; n < count; n++) {
-            int other = random.nextInt(n + 1);
-            order[n] = order[other];
-            order[other] = n;
-        }
-        double[][] points = new double[2][count];
-        for (int n = 0; n < count; n++) {
-            points[0][n] = (order[n] / rows + random.nextDouble()) / columns;
-            points[1][n] = (order[n] % rows + random.nextDouble()) / rows;
-        }
-        return points;
+        ParallelTracing.Measured measured = ParallelTracing.measure(flow, how, batch, settings.threads(), n -> {});
+        steps += measured.outcome().steps();
+        stepsOfChecks += measured.outcome().steps();
+        releases.addAll(batch);
+        ends.addAll(measured.outcome().ends());
+        measures.addAll(measured.measures());
+        return note(measured.outcome().ends());
     }
 
     // ---- what was found --------------------------------------------------------------------------------------------
@@ -317,20 +188,20 @@ final class BorderTracing {
     }
 
     boolean reached() {
-        return reached;
+        return survey.reached();
     }
 
-    /** Share of the flow whose fate is not settled. */
+    /** Share of the flow whose fate is left open in the map. */
     double unsettled() {
-        return map.mixed() + map.settled(Destination.LOST.ordinal());
+        return survey.unsettled();
     }
 
     double estimate(Destination fate) {
-        return estimate[fate.ordinal()];
+        return survey.estimate(fate.ordinal());
     }
 
     Interval interval(Destination fate) {
-        return Interval.ofMap(estimate(fate), map.settled(fate.ordinal()), unsettled(), missedBound);
+        return survey.interval(fate.ordinal());
     }
 
     BorderMap facts() {
@@ -338,14 +209,16 @@ final class BorderTracing {
                 border,
                 direction,
                 plan.massFlow(),
-                map.patches(),
-                tracers - checks,
-                checks,
-                wrong,
-                unsettled(),
-                missedBound,
+                survey.patches(),
+                tracers - survey.samples() - survey.checks(),
+                survey.mixed(),
+                survey.samples(),
+                survey.unsettled(),
+                survey.checks(),
+                survey.wrongChecks(),
+                survey.missedBound(),
                 steps,
-                reached);
+                survey.reached());
     }
 
     Optional<PathEnd.Failed> failure() {
@@ -356,7 +229,9 @@ final class BorderTracing {
     List<FedPoint> points(int most) {
         List<FedPoint> points = new ArrayList<>();
         for (int n = 0; n < Math.min(most, ends.size()); n++) {
-            points.add(new FedPoint(releases.get(n), ends.get(n)));
+            Release at = releases.get(n);
+            points.add(new FedPoint(
+                    new Release(at.theta(), at.radius(), at.sigma(), plan.massFlow() / ends.size()), ends.get(n)));
         }
         return points;
     }

@@ -1,5 +1,6 @@
 package org.whither.fate;
 
+import org.apache.commons.math3.distribution.BetaDistribution;
 import org.apache.commons.math3.stat.interval.WilsonScoreInterval;
 
 /**
@@ -10,19 +11,30 @@ import org.apache.commons.math3.stat.interval.WilsonScoreInterval;
  * @param high its upper bound
  */
 public record Interval(double share, double low, double high) {
+    /** An interval, cut to 0 … 1, and a share within it. */
+    static Interval within(double share, double low, double high) {
+        double from = Math.max(0, Math.min(1, low));
+        double to = Math.max(from, Math.min(1, high));
+        return new Interval(Math.max(from, Math.min(to, share)), from, to);
+    }
+
     /**
-     * The interval of a share from a map: from its settled part, less what may have been missed there, to its settled
-     * part with all that is unsettled, and what may have been missed elsewhere.
+     * The two-sided interval of a share from independent trials that holds at least with the given chance, after C. J.
+     * Clopper and E. S. Pearson, Biometrika 26 (1934) 404–413; by quantiles of the beta distribution.
      *
-     * @param share estimate
-     * @param settled settled part of this fate
-     * @param unsettled part whose fate is not settled
-     * @param missed upper bound of the settled part that has another fate than its patch
+     * @param hits trials that count
+     * @param trials all trials, at least 1
+     * @param confidence chance that the interval holds
      */
-    static Interval ofMap(double share, double settled, double unsettled, double missed) {
-        double low = Math.max(0, settled - missed);
-        double high = Math.min(1, settled + unsettled + missed);
-        return new Interval(Math.max(low, Math.min(high, share)), low, high);
+    static Interval exact(int hits, int trials, double confidence) {
+        double tail = 0.5 * (1 - confidence);
+        double low = hits == 0
+                ? 0
+                : new BetaDistribution(null, hits, trials - hits + 1.0).inverseCumulativeProbability(tail);
+        double high = hits == trials
+                ? 1
+                : new BetaDistribution(null, hits + 1.0, trials - hits).inverseCumulativeProbability(1 - tail);
+        return new Interval((double) hits / trials, low, high);
     }
 
     /**

@@ -7,7 +7,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.PriorityQueue;
 import java.util.SplittableRandom;
-import java.util.function.BooleanSupplier;
+import java.util.function.IntSupplier;
 
 /**
  * A map of the unit square, whose opposite sides u = 0 and u = 1 are one line, into fates. The square is divided into
@@ -41,11 +41,16 @@ final class PatchMap {
 
     private static final int BITS = 26;
     private static final int SIDE = 1 << BITS;
-    private static final int MOST_AT_ONCE = 256;
     /** Smaller patches make do with their corners: all together hold little area, and the checks cover them too. */
     private static final long LEAST_WITH_INSIDE = 1L << (2 * BITS - 13);
 
+    /** Points that halving a patch asks for: two corners, and one inside each half. */
+    private static final int MOST_POINTS_OF_HALVING = 4;
+
     private static final int UNKNOWN = -1;
+
+    /** Stands for the fate of a mixed patch. */
+    static final int MIXED = -2;
 
     private final FateFinder finder;
     private final SplittableRandom random;
@@ -157,6 +162,11 @@ final class PatchMap {
         return mesh * (mesh + 1) + 2 * mesh * mesh;
     }
 
+    /** Number of mixed patches. */
+    int mixedPatches() {
+        return mixed.size();
+    }
+
     /** Number of patches. */
     long patches() {
         return (patches + roots.length) / 2;
@@ -192,15 +202,46 @@ final class PatchMap {
     // ---- making it -------------------------------------------------------------------------------------------------
 
     /**
+     * Cuts the patches at both ends of v into ever thinner slices towards the end, settled or not.
+     *
+     * @param thickness how thick the last slices may be, as a part of v
+     */
+    void sliceEnds(double thickness) {
+        double slice = 1.0 / mesh;
+        for (int cuts = 0; slice > thickness; cuts++, slice /= 2) {
+            for (int n = 0; n < roots.length; n++) {
+                if (n % mesh == 0 || n % mesh == mesh - 1) {
+                    Patch patch = roots[n];
+                    for (int cut = 0; cut < cuts; cut++) {
+                        patch = n % mesh == 0 ? patch.low : patch.high;
+                    }
+                    if (patch.isMixed) {
+                        mixed.remove(patch);
+                        mixedArea -= patch.area();
+                    } else {
+                        settledArea[patch.fate] -= patch.area();
+                    }
+                    halve(patch, false);
+                }
+            }
+            completeFresh();
+        }
+    }
+
+    /**
      * Halves mixed patches until their area is as small as wanted.
      *
      * @param target wanted area
-     * @param mayGoOn asked before each round; false ends it short of the target
+     * @param affordable asked before each round how many points may be asked for in it; none ends it short of the target
      * @return whether the target was reached
      */
-    boolean refine(double target, BooleanSupplier mayGoOn) {
+    boolean refine(double target, IntSupplier affordable) {
         while (mixed() > target) {
-            if (mixed.isEmpty() || mixed.peek().area() < 4 || !mayGoOn.getAsBoolean()) {
+            if (mixed.isEmpty() || mixed.peek().area() < 4) {
+                return false;
+            }
+            int most = affordable.getAsInt() / MOST_POINTS_OF_HALVING;
+            if (most == 0) {
                 return false;
             }
             // As many as would bring the area down to the target if one half of each were settled.
@@ -209,7 +250,7 @@ final class PatchMap {
             double chosen = 0;
             List<Patch> batch = new ArrayList<>();
             while (!mixed.isEmpty()
-                    && batch.size() < MOST_AT_ONCE
+                    && batch.size() < most
                     && chosen < needed
                     && mixed.peek().area() >= Math.max(4, smallest)) {
                 Patch patch = mixed.poll();
@@ -225,25 +266,55 @@ final class PatchMap {
         return true;
     }
 
-    /**
-     * Checks the settled patches with points of known fates that were not found for the map, and leaves it as it is.
-     *
-     * @param u first coordinates, 0 … 1
-     * @param v second coordinates, 0 … 1
-     * @param fates their fates
-     * @return how many lie in a settled patch of another fate
-     */
-    int countWrong(double[] u, double[] v, int[] fates) {
-        int wrong = 0;
-        for (int n = 0; n < u.length; n++) {
-            Patch leaf = leafAt(u[n] * SIDE, v[n] * SIDE);
-            wrong += !leaf.isMixed && leaf.fate != fates[n] ? 1 : 0;
-        }
-        return wrong;
+    /** The fate of the patch that holds a point, or {@link #MIXED}. */
+    int settledFate(double u, double v) {
+        Patch leaf = leafAt(u * SIDE, v * SIDE);
+        return leaf.isMixed ? MIXED : leaf.fate;
     }
 
     /**
-     * Puts such points into the map. A settled patch of another fate becomes a mixed one.
+     * Points in the mixed patches, one at random in each of as many equal parts of their area, which is cut along the order
+     * of the patches.
+     *
+     * @param count how many
+     * @param random source of the points
+     * @return first and second coordinates, 0 … 1; none where no patch is mixed
+     */
+    double[][] drawMixed(int count, SplittableRandom random) {
+        List<Patch> leaves = new ArrayList<>(mixed.size());
+        for (Patch root : roots) {
+            collectMixed(root, leaves);
+        }
+        double[][] drawn = new double[2][leaves.isEmpty() ? 0 : count];
+        double each = (double) mixedArea / count;
+        double before = 0;
+        int at = 0;
+        for (int n = 0; n < drawn[0].length; n++) {
+            double place = (n + random.nextDouble()) * each;
+            while (at < leaves.size() - 1 && place >= before + leaves.get(at).area()) {
+                before += leaves.get(at++).area();
+            }
+            Patch patch = leaves.get(at);
+            double along = Math.min(1, (place - before) / patch.area());
+            double across = random.nextDouble();
+            boolean longer = patch.du > patch.dv;
+            drawn[0][n] = (patch.u + patch.du * (longer ? along : across)) / SIDE;
+            drawn[1][n] = (patch.v + patch.dv * (longer ? across : along)) / SIDE;
+        }
+        return drawn;
+    }
+
+    private static void collectMixed(Patch patch, List<Patch> leaves) {
+        if (patch.low != null) {
+            collectMixed(patch.low, leaves);
+            collectMixed(patch.high, leaves);
+        } else if (patch.isMixed) {
+            leaves.add(patch);
+        }
+    }
+
+    /**
+     * Puts points of known fates that were not found for the map into it. A settled patch of another fate becomes a mixed one.
      *
      * @param u first coordinates, 0 … 1
      * @param v second coordinates, 0 … 1
@@ -281,6 +352,10 @@ final class PatchMap {
 
     /** Halves a patch across the direction in which more of its corners differ; else not as it was halved last. */
     private void halve(Patch patch) {
+        halve(patch, widestAcrossU(patch));
+    }
+
+    private boolean widestAcrossU(Patch patch) {
         int f00 = cornerFate(patch.u, patch.v);
         int f10 = cornerFate(patch.u + patch.du, patch.v);
         int f01 = cornerFate(patch.u, patch.v + patch.dv);
@@ -288,9 +363,10 @@ final class PatchMap {
         int alongU = (f00 != f10 ? 1 : 0) + (f01 != f11 ? 1 : 0);
         int alongV = (f00 != f01 ? 1 : 0) + (f10 != f11 ? 1 : 0);
         boolean acrossU = alongU != alongV ? alongU > alongV : !patch.lastCutAcrossU;
-        if (acrossU ? patch.du < 2 : patch.dv < 2) {
-            acrossU = !acrossU;
-        }
+        return (acrossU ? patch.du < 2 : patch.dv < 2) ? !acrossU : acrossU;
+    }
+
+    private void halve(Patch patch, boolean acrossU) {
         int du = acrossU ? patch.du / 2 : patch.du;
         int dv = acrossU ? patch.dv : patch.dv / 2;
         patch.low = new Patch(patch.u, patch.v, du, dv, patches++);

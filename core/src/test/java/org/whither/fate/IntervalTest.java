@@ -41,14 +41,28 @@ class IntervalTest {
         }
     }
 
+    /**
+     * R. G. Newcombe, Stat. Med. 17 (1998) 857–872, table I, method 5: 81 of 263, 15 of 148, 0 of 20 and 1 of 29 (from
+     * memory, and as beta quantiles).
+     */
     @Test
-    void ofMap_bounds_holdWhatIsUnsettledAndMissed() {
-        Interval interval = Interval.ofMap(0.41, 0.40, 0.02, 0.005);
-        assertEquals(0.395, interval.low(), 1e-15);
-        assertEquals(0.425, interval.high(), 1e-15);
-        assertEquals(0.41, interval.share(), 0);
-        Interval none = Interval.ofMap(0, 0, 0.02, 0.005);
-        assertEquals(0, none.low(), 0);
-        assertEquals(0.025, none.high(), 1e-15);
+    void exact_publishedCases_isClopperAndPearsons() {
+        double[][] cases = {
+            {81, 263, 0.2527, 0.3676}, {15, 148, 0.0578, 0.1617}, {0, 20, 0, 0.1684}, {1, 29, 0.0009, 0.1776}
+        };
+        for (double[] one : cases) {
+            Interval interval = Interval.exact((int) one[0], (int) one[1], 0.95);
+            assertEquals(one[2], interval.low(), 5e-5);
+            assertEquals(one[3], interval.high(), 5e-5);
+            Interval other = Interval.exact((int) (one[1] - one[0]), (int) one[1], 0.95);
+            assertEquals(1 - one[3], other.low(), 5e-5);
+        }
+    }
+
+    @Test
+    void within_bounds_areCutToShares() {
+        assertEquals(new Interval(0.4, 0.39, 0.41), Interval.within(0.4, 0.39, 0.41));
+        assertEquals(new Interval(0, 0, 0.01), Interval.within(-0.001, -0.02, 0.01));
+        assertEquals(new Interval(1, 0.99, 1), Interval.within(1.2, 0.99, 1.01));
     }
 }

@@ -30,7 +30,7 @@ class PatchMapTest {
     void refine_disc_intervalHoldsItsArea() {
         PatchMap map = map(PatchMapTest::disc);
         for (double target : new double[] {0.1, 0.03, 0.01, 0.003, 0.001, 0.0003}) {
-            assertTrue(map.refine(target, () -> true));
+            assertTrue(map.refine(target, () -> 1000));
             assertTrue(map.mixed() <= target);
             assertEquals(1, map.settled(0) + map.settled(1) + map.settled(2) + map.mixed(), 0, "areas add up exactly");
             double area = Math.PI * 0.09;
@@ -45,16 +45,16 @@ class PatchMapTest {
     void refine_halfTheArea_costsTwiceThePoints() {
         PatchMap disc = map(PatchMapTest::disc);
         PatchMap line = map((u, v) -> v < 0.371 ? 1 : 0);
-        disc.refine(0.01, () -> true);
-        line.refine(0.01, () -> true);
+        disc.refine(0.01, () -> 1000);
+        line.refine(0.01, () -> 1000);
         int before = disc.points();
         for (double target = 0.005; target > 1e-4; target /= 2) {
-            disc.refine(target, () -> true);
+            disc.refine(target, () -> 1000);
             assertTrue(disc.points() < 2.3 * before, disc.points() + " after " + before);
             assertTrue(disc.points() > 1.3 * before, disc.points() + " after " + before);
             before = disc.points();
             int lineBefore = line.points();
-            line.refine(target, () -> true);
+            line.refine(target, () -> 1000);
             assertTrue(line.points() <= lineBefore + 3 * PatchMap.MESH);
         }
         assertTrue(line.points() < 1500, line.points() + " points");
@@ -69,12 +69,12 @@ class PatchMapTest {
         double[] u = {0.2, 0.511, 0.7};
         double[] v = {0.2, 0.521, 0.9};
         int[] fates = {0, 1, 0};
-        assertEquals(1, map.countWrong(u, v, fates));
+        assertEquals(0, map.settledFate(u[1], v[1]));
         assertEquals(0, map.mixed(), 0);
         map.place(u, v, fates);
         assertEquals(1.0 / 256, map.mixed(), 0);
-        assertEquals(0, map.countWrong(u, v, fates));
-        assertTrue(map.refine(1e-6, () -> true));
+        assertEquals(PatchMap.MIXED, map.settledFate(u[1], v[1]));
+        assertTrue(map.refine(1e-6, () -> 1000));
         assertEquals(4 * size * size, map.settled(1), 2e-6);
     }
 
@@ -82,7 +82,7 @@ class PatchMapTest {
     @Test
     void refine_scatteredFates_endsWithTheBudget() {
         PatchMap map = map((u, v) -> ((long) (u * 1e7) * 31 + (long) (v * 1e7)) % 2);
-        assertFalse(map.refine(0.01, () -> map.points() < 20_000));
+        assertFalse(map.refine(0.01, () -> map.points() < 20_000 ? 1000 : 0));
         assertTrue(map.points() < 22_000);
         assertTrue(map.mixed() > 0.5);
         assertEquals(0.5, map.estimate()[0], 0.05);
@@ -92,8 +92,8 @@ class PatchMapTest {
     void refine_sameSeed_sameMap() {
         PatchMap one = map(PatchMapTest::disc);
         PatchMap two = map(PatchMapTest::disc);
-        one.refine(0.001, () -> true);
-        two.refine(0.001, () -> true);
+        one.refine(0.001, () -> 1000);
+        two.refine(0.001, () -> 1000);
         assertEquals(one.points(), two.points());
         assertEquals(one.settled(1), two.settled(1), 0);
         assertEquals(one.estimate()[1], two.estimate()[1], 0);

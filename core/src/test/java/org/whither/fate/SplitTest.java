@@ -41,7 +41,14 @@ class SplitTest {
             assertEquals(0, split.balance().outerIn(), 0);
             assertEquals(0, split.lostShare(), 0);
             assertTrue(split.widthReached());
-            assertEquals(2, split.table().size());
+            // Beside these two, some gas at the dividing line may be held.
+            for (SplitRow row : split.table()) {
+                assertTrue(
+                        row.to() == Destination.INNER
+                                || row.to() == Destination.OUTER
+                                || row.share().share() < 1e-4,
+                        row.toString());
+            }
             // Danckwerts, Chem. Eng. Sci. 2 (1953): mean residence over all gas = film mass / mass flow. The tail of
             // slow gas is heavy: its variance grows with the logarithm of the time, so that some 4000 tracers tell the
             // mean with a standard deviation of 1.3 %.
@@ -81,7 +88,7 @@ class SplitTest {
             assertEquals(
                     split.tracers(),
                     split.maps().stream()
-                                    .mapToLong(map -> map.mapTracers() + map.checks())
+                                    .mapToLong(map -> map.mapTracers() + map.samples() + map.checks())
                                     .sum()
                             + split.uncertainty().integration().tracers());
             assertEquals(0, split.uncertainty().integration().changedEnds(), 0.01);

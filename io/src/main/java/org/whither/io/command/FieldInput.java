@@ -39,7 +39,7 @@ record FieldInput(Path file, String sha256, FilmFlow flow) {
             Film film = FieldReader.read(file);
             stretch.accept(0.4);
             Memory.require(film, file);
-            FilmFlow flow = interpolation.of(film, file);
+            FilmFlow flow = interpolation.of(film);
             stretch.accept(0.9);
             return new FieldInput(file, joined(checksum), flow);
         }

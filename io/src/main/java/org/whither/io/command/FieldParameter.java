@@ -17,7 +17,7 @@ final class FieldParameter {
             paramLabel = "KIND",
             defaultValue = "conserving",
             description = "Between the computed values: conserving keeps the mass of every part of every cell; nodal is"
-                    + " plain interpolation of a full field, for comparison (default: ${DEFAULT-VALUE}).")
+                    + " plain interpolation between the nodes, for comparison (default: ${DEFAULT-VALUE}).")
     private Interpolation interpolation;
 
     Interpolation interpolation() {

@@ -1,12 +1,11 @@
 package org.whither.io.command;
 
-import java.nio.file.Path;
 import org.whither.film.ConservingFlow;
 import org.whither.film.Film;
 import org.whither.film.FilmFlow;
 import org.whither.film.FullField;
 import org.whither.film.NodalFlow;
-import org.whither.io.file.RefusedInput;
+import org.whither.film.NodalThinFilm;
 
 /** How the motion of the gas is found between the values of a field. */
 enum Interpolation {
@@ -15,18 +14,11 @@ enum Interpolation {
     /** Between the nodes, as they are. */
     NODAL;
 
-    /** The motion of the gas in the film of a file; refused where its field does not have what this needs. */
-    FilmFlow of(Film film, Path file) {
+    /** The motion of the gas in a film. */
+    FilmFlow of(Film film) {
         if (this == CONSERVING) {
             return new ConservingFlow(film);
         }
-        if (!(film.field() instanceof FullField)) {
-            throw RefusedInput.of(
-                    file,
-                    "/field has no velocities",
-                    "those of a full field, which --interpolation nodal needs",
-                    "leave the option out for this file");
-        }
-        return new NodalFlow(film);
+        return film.field() instanceof FullField ? new NodalFlow(film) : new NodalThinFilm(film);
     }
 }

@@ -30,7 +30,7 @@ final class Answer {
                     "No answer can be given: of the gas that enters the film of this field, %.1f %% is missing or too much"
                             + " where it leaves, above the %.0f %% that a result may have.",
                     100 * Math.abs(result.closure()),
-                    100 * SplitResult.NO_RESULT);
+                    100 * ClosureVerdict.NO_RESULT_ABOVE);
         }
         Answer answer = new Answer(result);
         return answer.supply() + " " + answer.crossings();

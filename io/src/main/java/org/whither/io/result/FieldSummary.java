@@ -20,9 +20,6 @@ import org.whither.film.Validity;
 
 /** What a field file holds, how its border flows close, and how far its film keeps to what is assumed of it. */
 public final class FieldSummary {
-    /** Closure beyond which a field is doubtful, as a share of the inflow. */
-    public static final double DOUBTFUL_CLOSURE = 0.005;
-
     private static final double DOUBTFUL_CORRECTION = 0.01;
 
     private final FilmFlow flow;
@@ -73,7 +70,11 @@ public final class FieldSummary {
 
     /** Whether the border flows of the field, before any correction, close well enough to act on. */
     public boolean closes() {
-        return Math.abs(closure()) <= DOUBTFUL_CLOSURE;
+        return verdict() == ClosureVerdict.CLOSES;
+    }
+
+    private ClosureVerdict verdict() {
+        return ClosureVerdict.of(closure());
     }
 
     /** How the border flows close by the field itself, before any correction, as a share of the inflow. */
@@ -86,13 +87,21 @@ public final class FieldSummary {
         List<String> said = new ArrayList<>();
         if (!(balance.inflow() > 0)) {
             said.add("No gas enters the film over any border: there is nothing to follow.");
-        } else if (!closes()) {
+        } else if (verdict() == ClosureVerdict.NO_RESULT) {
             said.add(String.format(
                     Locale.ROOT,
-                    "The border flows do not close: %.2f %% of the inflow is missing or too much, above %.1f %%; the field"
-                            + " may not be converged, or a part of its border is not in the file.",
+                    "NOT SOUND: %.2f %% of the inflow is missing or too much in the border flows of the field, above %.0f %%."
+                            + " The field is not converged, or a part of its border is not in the file; a split of it is no"
+                            + " result.",
                     100 * closure(),
-                    100 * DOUBTFUL_CLOSURE));
+                    100 * ClosureVerdict.NO_RESULT_ABOVE));
+        } else if (verdict() == ClosureVerdict.DOUBTFUL) {
+            said.add(String.format(
+                    Locale.ROOT,
+                    "The border flows of the field do not close: %.3f %% of the inflow is missing or too much, above %.1f %%;"
+                            + " the field may not be converged, or a part of its border is not in the file.",
+                    100 * closure(),
+                    100 * ClosureVerdict.DOUBTFUL_ABOVE));
         }
         if (film.supply().isEmpty()) {
             said.add("The file names no feed (/supply): there is no supply gas to account for.");
@@ -281,6 +290,7 @@ public final class FieldSummary {
         root.put("rotation_rate", film.conditions().rotationRate());
         root.put("interpolation", flow.interpolation());
         root.put("field_closure", closure());
+        root.put("closure_verdict", verdict().word());
         flow.correction().ifPresent(correction -> {
             root.put("flow_correction", correction.share());
             root.put("largest_flow_correction", correction.largestShare());

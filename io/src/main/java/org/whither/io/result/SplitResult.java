@@ -36,9 +36,6 @@ import org.whither.trace.PathEnd;
 public record SplitResult(
         FilmFlow flow, SplitSettings settings, Split split, String file, String sha256, double seconds) {
 
-    /** Closure beyond which a result is no result. */
-    static final double NO_RESULT = 0.02;
-
     private static final int COLUMNS = 120;
 
     /** How far the border flows close, as a share of the inflow, before the flows are balanced for tracing. */
@@ -48,12 +45,12 @@ public record SplitResult(
 
     /** Whether the border flows close within the wanted width. */
     public boolean closes() {
-        return Math.abs(closure()) <= Math.min(settings.width(), NO_RESULT);
+        return Math.abs(closure()) <= Math.min(settings.width(), ClosureVerdict.NO_RESULT_ABOVE);
     }
 
     /** Whether the border flows close well enough for this to be called a result at all. */
     public boolean isResult() {
-        return Math.abs(closure()) <= NO_RESULT;
+        return ClosureVerdict.of(closure()) != ClosureVerdict.NO_RESULT;
     }
 
     /** Whether the feed that the file names lets gas in; true where it names none. */
@@ -79,23 +76,31 @@ public record SplitResult(
                             + " %.0f %%. The field is not converged, or a part of its border is not in the file; the numbers"
                             + " below only help to find out which.",
                     100 * closure,
-                    100 * NO_RESULT));
-        } else if (Math.abs(closure) > Math.min(settings.width(), FieldSummary.DOUBTFUL_CLOSURE)) {
+                    100 * ClosureVerdict.NO_RESULT_ABOVE));
+        } else if (Math.abs(closure) > Math.min(settings.width(), ClosureVerdict.DOUBTFUL_ABOVE)) {
             said.add(String.format(
                     Locale.ROOT,
                     "The border flows of the field do not close: %.3f %% of the inflow is missing or too much, above %s, and"
                             + " no share below is surer than that.",
                     100 * closure,
-                    settings.width() < FieldSummary.DOUBTFUL_CLOSURE
+                    settings.width() < ClosureVerdict.DOUBTFUL_ABOVE
                             ? "the wanted width of " + settings.width()
-                            : String.format(Locale.ROOT, "%.1f %%", 100 * FieldSummary.DOUBTFUL_CLOSURE)));
+                            : String.format(Locale.ROOT, "%.1f %%", 100 * ClosureVerdict.DOUBTFUL_ABOVE)));
         }
         if (!feedLetsGasIn()) {
             said.add(
                     "No gas enters through the feed (/supply): the table has no supply gas. Check the supply pressure, the"
                             + " feed's place and its mass_flux; what is below is of the other gas.");
         }
-        if (!split.widthReached()) {
+        if (!split.widthReached() && split.lostShare() > 0) {
+            said.add(String.format(
+                    Locale.ROOT,
+                    "The wanted width of %s was not reached, since tracers of %.2f %% of the gas could not be followed to an"
+                            + " end; the widest interval is %.4f, with what is not known of them.",
+                    settings.width(),
+                    100 * split.lostShare(),
+                    split.uncertainty().sampling()));
+        } else if (!split.widthReached()) {
             said.add(String.format(
                     Locale.ROOT,
                     "The wanted width of %s was not reached within %d tracers and %d million steps an origin; the widest"
@@ -296,6 +301,8 @@ public record SplitResult(
             node.put("mass_flow", map.massFlow());
             node.put("patches", map.patches());
             node.put("map_tracers", map.mapTracers());
+            node.put("mixed_share", map.mixed());
+            node.put("samples", map.samples());
             node.put("checks", map.checks());
             node.put("wrong_checks", map.wrongChecks());
             node.put("unsettled_share", map.unsettled());
@@ -419,10 +426,11 @@ public record SplitResult(
                 seconds);
         line(
                 s,
-                "%-34s %8s %8s %13s %8s %7s %14s",
+                "%-34s %8s %8s %8s %13s %8s %7s %14s",
                 "maps",
                 "tracers",
                 "patches",
+                "samples",
                 "not settled",
                 "checks",
                 "wrong",
@@ -430,10 +438,11 @@ public record SplitResult(
         for (BorderMap map : split.maps()) {
             line(
                     s,
-                    "%-34s %8d %8d %11.3f %% %8d %7d %12.3f %%",
+                    "%-34s %8d %8d %8d %11.3f %% %8d %7d %12.3f %%",
                     "  " + name(map.direction()) + " from " + place(map.border()),
                     map.mapTracers(),
                     map.patches(),
+                    map.samples(),
                     100 * map.unsettled(),
                     map.checks(),
                     map.wrongChecks(),

@@ -12,12 +12,20 @@ import java.io.StringWriter;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.stream.Stream;
 import javax.imageio.ImageIO;
 import org.jsoup.Jsoup;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
+import org.whither.fate.BorderBalance;
+import org.whither.film.Film;
+import org.whither.film.FilmFlow;
+import org.whither.film.LubricationField;
+import org.whither.film.MassFlows;
+import org.whither.io.hdf5.FieldReader;
+import org.whither.io.hdf5.FieldWriter;
 
 /** The program from its command line, in this process. */
 class ProgramTest {
@@ -151,7 +159,7 @@ class ProgramTest {
     }
 
     @Test
-    void check_fullField_byEitherInterpolation() throws IOException {
+    void check_bothFields_byEitherInterpolation() throws IOException {
         String full =
                 Path.of("src", "test", "resources", "fields", "full-plain.h5").toString();
         JsonNode conserving = json(run("check", full, "--json", "--quiet").out());
@@ -162,9 +170,10 @@ class ProgramTest {
                 .out());
         assertEquals("nodal", nodal.get("interpolation").asText());
         assertFalse(nodal.has("flow_correction"));
-        Run film = run("check", FIELD.toString(), "--interpolation", "nodal");
-        assertEquals(3, film.status());
-        assertTrue(film.err().contains("--interpolation nodal"), film.err());
+        JsonNode film = json(run("check", FIELD.toString(), "--json", "--quiet", "--interpolation", "nodal")
+                .out());
+        assertEquals("nodal", film.get("interpolation").asText());
+        assertFalse(film.has("flow_correction"));
     }
 
     @Test
@@ -320,5 +329,125 @@ class ProgramTest {
         assertTrue(split.get("warnings").get(0).asText().contains("No gas enters through the feed"));
         assertEquals("outer", split.at("/table/0/from").asText());
         assertEquals(1, split.at("/table/0/share").asDouble(), 0.001);
+    }
+
+    /**
+     * A field with a spoilt value, 1e160 Pa in one cell, past which no tracer can be followed: why and where is said, the
+     * rest of the table is given with what is lost in its intervals, and the status says that something is missing.
+     */
+    @Test
+    void split_tracerThatCannotBeFollowed_isNamedAndTheRestGiven() throws IOException {
+        Path good = folder.resolve("good.h5");
+        Path spoilt = folder.resolve("spoilt.h5");
+        assertEquals(
+                0,
+                run("sample", "coned", "--grid", "8x16", "--as", good.toString(), "--quiet")
+                        .status());
+        Film film = FieldReader.read(good);
+        LubricationField field = (LubricationField) film.field();
+        double[] pressure = pressures(field);
+        pressure[film.grid().cell(3, 2)] = 1e160;
+        FieldWriter.write(
+                new Film(
+                        film.heading(),
+                        film.conditions(),
+                        film.gas(),
+                        film.grid(),
+                        film.faces(),
+                        film.velocityFrame(),
+                        film.steadyIn(),
+                        new LubricationField(
+                                field.pressureAt(), pressure, field.massFlows().orElseThrow()),
+                        film.supply()),
+                spoilt);
+        Run run = run("split", spoilt.toString(), "--width", "0.05", "--quiet", "--json");
+        assertEquals(4, run.status(), run.err());
+        JsonNode split = json(run.out());
+        List<String> warnings = new ArrayList<>();
+        split.get("warnings").forEach(warning -> warnings.add(warning.asText()));
+        assertTrue(
+                warnings.stream()
+                        .anyMatch(
+                                warning -> warning.matches(
+                                        "A tracer released at the feed could not be followed beyond r ="
+                                                + " \\d\\d\\.\\d+ mm, θ = -?\\d\\.\\d+ rad, σ = 0\\.\\d+: the velocity is not a number\\.")),
+                warnings.toString());
+        double unsettled = split.get("unsettled_share").asDouble();
+        assertTrue(unsettled > 0.01 && unsettled < 0.6, "lost and unsettled " + unsettled);
+        JsonNode whole = json(run("split", good.toString(), "--width", "0.05", "--quiet", "--json")
+                .out());
+        for (int row = 0; row < 2; row++) {
+            JsonNode told = split.at("/table/" + row);
+            double share = whole.at("/table/" + row + "/share").asDouble();
+            assertTrue(told.get("share_low").asDouble() <= share
+                    && share <= told.get("share_high").asDouble());
+        }
+        assertFalse(split.at("/maps/0/reached").asBoolean());
+    }
+
+    /** A check says of the closure what a split would: here 3 % of the inflow is too little, so that there is no result. */
+    @Test
+    void check_fieldThatDoesNotClose_isCalledNotSound() throws IOException {
+        Path good = folder.resolve("closed.h5");
+        Path open = folder.resolve("open.h5");
+        assertEquals(
+                0,
+                run("sample", "coned", "--grid", "8x16", "--as", good.toString(), "--quiet")
+                        .status());
+        Film film = FieldReader.read(good);
+        LubricationField field = (LubricationField) film.field();
+        double[] theta = field.massFlows().orElseThrow().thetaValues();
+        double[] radial = field.massFlows().orElseThrow().radialValues();
+        double inflow =
+                BorderBalance.of(FilmFlow.of(film)).inflow() / film.grid().sectors();
+        for (double[] part : new double[][] {{0.01, 0.01}, {0.03, 0.03}}) {
+            double[] more = radial.clone();
+            // Gas that appears in the last row of cells, so that more leaves than enters.
+            for (int i = 0; i < film.grid().cellsTheta(); i++) {
+                more[i * film.grid().nj() + film.grid().nj() - 1] +=
+                        part[0] * inflow / film.grid().cellsTheta();
+            }
+            Files.deleteIfExists(open);
+            FieldWriter.write(
+                    new Film(
+                            film.heading(),
+                            film.conditions(),
+                            film.gas(),
+                            film.grid(),
+                            film.faces(),
+                            film.velocityFrame(),
+                            film.steadyIn(),
+                            new LubricationField(field.pressureAt(), pressures(field), new MassFlows(theta, more)),
+                            film.supply()),
+                    open);
+            Run check = run("check", open.toString(), "--json", "--quiet");
+            assertEquals(4, check.status());
+            JsonNode said = json(check.out());
+            assertEquals(-part[1], said.get("field_closure").asDouble(), 1e-3);
+            JsonNode split = json(run("split", open.toString(), "--width", "0.1", "--json", "--quiet")
+                    .out());
+            boolean sound = part[0] < 0.02;
+            assertEquals(
+                    sound ? "doubtful" : "no result",
+                    said.get("closure_verdict").asText());
+            assertEquals(sound, split.get("is_result").asBoolean());
+            String first = said.get("warnings").get(0).asText();
+            assertTrue(
+                    first.startsWith(sound ? "The border flows of the field do not close: -1.0" : "NOT SOUND: -3.0"),
+                    first);
+            String firstOfSplit = split.get("warnings").get(0).asText();
+            assertTrue(
+                    firstOfSplit.startsWith(
+                            sound ? "The border flows of the field do not close: -1.0" : "NO RESULT: -3.0"),
+                    firstOfSplit);
+        }
+    }
+
+    private static double[] pressures(LubricationField field) {
+        double[] pressure = new double[field.size()];
+        for (int n = 0; n < pressure.length; n++) {
+            pressure[n] = field.pressure(n);
+        }
+        return pressure;
     }
 }
