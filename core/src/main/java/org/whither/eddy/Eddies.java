@@ -67,12 +67,15 @@ public record Eddies(
      * @param settings how
      * @param progress told the part done, 0 … 1, from any thread
      * @return what was found
-     * @throws IllegalArgumentException where no gas goes through the film
+     * @throws NoThroughFlow where no gas goes through the film
      */
     public static Eddies of(FilmFlow flow, EddySettings settings, DoubleConsumer progress) {
-        if (!(BorderBalance.of(flow).inflow() > 0)) {
-            throw new IllegalArgumentException(
-                    "no gas enters the film over any border; expected inflow through the feed or over a diameter");
+        BorderBalance balance = BorderBalance.of(flow);
+        if (!(balance.inflow() > 0)) {
+            throw new NoThroughFlow("no gas enters the film over any border");
+        }
+        if (!(balance.outflow() > 0)) {
+            throw new NoThroughFlow("gas enters the film but leaves it over no border");
         }
         return new EddySearch(flow, settings, progress).find();
     }

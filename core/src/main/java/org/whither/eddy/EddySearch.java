@@ -28,6 +28,9 @@ final class EddySearch {
     Eddies find() {
         HoldTest test = new HoldTest(flow, settings, BorderBalance.of(flow));
         progress.accept(0.05);
+        if (!(test.medianResidence() < Double.POSITIVE_INFINITY)) {
+            throw new NoThroughFlow("most of the gas that enters does not leave the film");
+        }
         int count = Integer.highestOneBit((int) (FIRST * settings.budget()));
         List<Release> releases = new InteriorPlan(flow).releases(settings.seed(), 0, count);
         HoldTest.Stay[] stays = test.test(releases);

@@ -26,11 +26,11 @@ public record EddySettings(Frame frame, double tolerance, double patience, int b
     /** Checks patience and budget. */
     public EddySettings {
         if (!(patience >= 1 && patience <= 1e4)) {
-            throw new IllegalArgumentException("patience " + patience + "; expected 1 … 10000 median residences");
+            throw new IllegalArgumentException("patience is " + patience + "; expected 1 … 10000 median residences");
         }
         if (budget < LEAST_BUDGET) {
             throw new IllegalArgumentException(
-                    "budget of " + budget + " tracers; expected at least " + LEAST_BUDGET + ", or nothing can be said");
+                    "budget is " + budget + " tracers; expected at least " + LEAST_BUDGET + ", or nothing can be said");
         }
         if (threads < 1) {
             throw new IllegalArgumentException(threads + " threads; expected at least 1");

@@ -49,6 +49,9 @@ final class PlaneField {
     /** A focus whose paths come nearer by less than this share of a turn's angle is a centre. */
     private static final double CENTRE = 0.02;
 
+    /** Two zeros nearer than this part of a cell are one, met in two cells. */
+    private static final double SAME = 1e-5;
+
     private static final int MOST_STEPS = 20_000;
     private static final double STEP = 0.1;
 
@@ -119,9 +122,10 @@ final class PlaneField {
                 }
                 for (double[] at : CellRoots.of(corner)) {
                     Zero zero = zero(i, j, corner, at);
+                    double[] cell = size(i, j);
                     boolean known = zeros.stream()
-                            .anyMatch(other -> Math.abs(other.x() - zero.x()) < 1e-9 * Math.abs(zero.x())
-                                    && Math.abs(other.y() - zero.y()) < 1e-9 * Math.abs(zero.y()));
+                            .anyMatch(other -> Math.abs(other.x() - zero.x()) < SAME * cell[0]
+                                    && Math.abs(other.y() - zero.y()) < SAME * cell[1]);
                     if (!known) {
                         zeros.add(zero);
                     }
@@ -264,8 +268,8 @@ final class PlaneField {
         double[] cx = corners(x, i, j);
         double[] cy = corners(y, i, j);
         return new double[] {
-            0.5 * (Math.abs(cx[1] - cx[0]) + Math.abs(cx[3] - cx[2])) + 1e-300,
-            Math.abs(cy[1] - cy[0]) + Math.abs(cy[2] - cy[0])
+            Math.max(Math.abs(cx[1] - cx[0]), Math.abs(cx[2] - cx[0])),
+            Math.max(Math.abs(cy[1] - cy[0]), Math.abs(cy[2] - cy[0]))
         };
     }
 

@@ -34,6 +34,12 @@ final class ZoneSearch {
     private static final int REPLICATES = 8;
 
     private static final int FIRST_OF_REPLICATE = 16;
+    /** From so many tracers a replicate on, those that are not held part zones. */
+    private static final int PARTING_OF_REPLICATE = 64;
+
+    /** A group smaller than this share of the largest in its box is too small to be measured there. */
+    private static final double SECOND = 0.25;
+
     private static final int MOST_OF_REPLICATE = 4096;
     private static final int MOST_BOXES = 6;
     private static final int MOST_POINTS = 4000;
@@ -98,14 +104,15 @@ final class ZoneSearch {
         double[] reach = {even, even, even};
         double[][] points = held.stream().map(this::point).toArray(double[][]::new);
         Deque<Seed> seeds = new ArrayDeque<>();
-        for (Clusters.Cluster cluster : Clusters.of(points, reach)) {
+        for (Clusters.Cluster cluster :
+                Clusters.of(points, reach, others.stream().map(this::point).toArray(double[][]::new))) {
             seeds.add(new Seed(
                     members(points, cluster), reach, cluster.members().length * filmMass / grid.sectors() / count));
         }
         while (!seeds.isEmpty()) {
             Seed seed = seeds.remove();
             if (!known(seed)) {
-                seeds.addAll(fill(seed));
+                fill(seed);
             }
             progress.accept((double) test.tracers() / settings.budget());
         }
@@ -154,6 +161,7 @@ final class ZoneSearch {
         private final double[] high = new double[3];
         private final long[][] shift = new long[REPLICATES][3];
         private final List<double[]> held = new ArrayList<>();
+        private final List<double[]> others = new ArrayList<>();
         private final List<Double> weight = new ArrayList<>();
         private final List<Integer> replicate = new ArrayList<>();
         private int each;
@@ -218,10 +226,15 @@ final class ZoneSearch {
                     held.add(points.get(n));
                     weight.add(weights.get(n));
                     replicate.add(n / more);
+                } else {
+                    others.add(points.get(n));
                 }
             }
             each += more;
-            clusters = Clusters.of(held.toArray(double[][]::new), reach());
+            // Too few tracers would be parted by chance.
+            double[][] between =
+                    each >= PARTING_OF_REPLICATE ? others.toArray(double[][]::new) : new double[0][];
+            clusters = Clusters.whole(held.toArray(double[][]::new), reach(), between, LEAST);
         }
 
         /** The largest group; empty where nothing is held. */
@@ -229,13 +242,40 @@ final class ZoneSearch {
             return clusters.isEmpty() ? new int[0] : clusters.get(0).members();
         }
 
-        /** Mass of the largest group by each replicate (kg). */
-        double[] masses() {
+        /** Whether a group is large enough to be measured in this box. */
+        boolean measured(int cluster) {
+            int size = clusters.get(cluster).members().length;
+            return size >= LEAST && size >= SECOND * main().length;
+        }
+
+        /** Mass of a group (kg). */
+        double mass(int cluster) {
+            return StatUtils.mean(masses(cluster));
+        }
+
+        /** Half the width of the 95 % interval of the mass of a group, by Student's t over the replicates (kg). */
+        double half(int cluster) {
+            return new TDistribution(REPLICATES - 1).inverseCumulativeProbability(0.975)
+                    * Math.sqrt(StatUtils.variance(masses(cluster)) / REPLICATES);
+        }
+
+        /** Mass of a group by each replicate (kg). */
+        private double[] masses(int cluster) {
             double[] mass = new double[REPLICATES];
-            for (int n : main()) {
+            for (int n : clusters.get(cluster).members()) {
                 mass[replicate.get(n)] += weight.get(n) / each;
             }
             return mass;
+        }
+
+        /** Whether the masses of all measured groups are known well enough. */
+        boolean known() {
+            for (int c = 0; c < clusters.size(); c++) {
+                if (measured(c) && !(half(c) <= KNOWN * mass(c))) {
+                    return false;
+                }
+            }
+            return true;
         }
 
         /** A box that fits the largest group better, or null where this one does. */
@@ -276,8 +316,8 @@ final class ZoneSearch {
         return grid.innerRadius() + part * (grid.outerRadius() - grid.innerRadius());
     }
 
-    /** Fills the box around a group; what else is found in it is given back. */
-    private List<Seed> fill(Seed seed) {
+    /** Fills the box around a group until what is held in it is known. */
+    private void fill(Seed seed) {
         double[] from = new double[3];
         double[] to = new double[3];
         for (int c = 0; c < 3; c++) {
@@ -295,9 +335,7 @@ final class ZoneSearch {
         }
         Box box = new Box(from, to);
         int boxes = 1;
-        double half = Double.POSITIVE_INFINITY;
-        double mass = 0;
-        boolean spent = false;
+        boolean spent;
         while (true) {
             int more = box.each == 0 ? FIRST_OF_REPLICATE : box.each;
             spent = test.tracers() + (long) more * REPLICATES > settings.budget();
@@ -312,7 +350,7 @@ final class ZoneSearch {
                 }
                 continue;
             }
-            if (boxes < MOST_BOXES && box.each <= 4 * FIRST_OF_REPLICATE) {
+            if (boxes < MOST_BOXES && box.each < PARTING_OF_REPLICATE) {
                 Box better = box.better();
                 if (better != null) {
                     box = better;
@@ -320,49 +358,32 @@ final class ZoneSearch {
                     continue;
                 }
             }
-            double[] masses = box.masses();
-            mass = StatUtils.mean(masses);
-            half = new TDistribution(REPLICATES - 1).inverseCumulativeProbability(0.975)
-                    * Math.sqrt(StatUtils.variance(masses) / REPLICATES);
-            if (half <= KNOWN * mass && found >= 4 * LEAST) {
+            if (box.each >= PARTING_OF_REPLICATE && found >= 4 * LEAST && box.known()) {
                 break;
             }
         }
         if (box.main().length < LEAST) {
-            Place place = place(mean(seed.points()));
-            small.add(new SmallCluster(place, seed.points().length, seed.mass()));
+            small.add(new SmallCluster(place(mean(seed.points())), seed.points().length, seed.mass()));
             settled &= !spent;
-            return List.of();
+            return;
         }
-        if (box.each > 0 && !(half < Double.POSITIVE_INFINITY)) {
-            mass = StatUtils.mean(box.masses());
-            half = mass;
-        }
-        boolean known = half <= KNOWN * mass;
-        settled &= known;
-        return told(box, mass, half, known);
+        told(box);
     }
 
-    private List<Seed> told(Box box, double mass, double half, boolean known) {
+    private void told(Box box) {
         double[][] all = box.held.toArray(double[][]::new);
-        double[][] points = members(all, box.clusters.get(0));
-        shapes.add(points);
-        nearness.add(box.reach());
-        zones.add(zone(box, points, mass, half, known));
-        List<Seed> others = new ArrayList<>();
-        for (Clusters.Cluster cluster : box.clusters.subList(1, box.clusters.size())) {
-            double other = 0;
-            for (int n : cluster.members()) {
-                other += box.weight.get(n) / box.each / REPLICATES;
+        for (int c = 0; c < box.clusters.size(); c++) {
+            double[][] points = members(all, box.clusters.get(c));
+            if (!box.measured(c)) {
+                small.add(new SmallCluster(place(mean(points)), points.length, box.mass(c)));
+                continue;
             }
-            Seed seed = new Seed(members(all, cluster), box.reach(), other);
-            if (cluster.members().length >= LEAST) {
-                others.add(seed);
-            } else {
-                small.add(new SmallCluster(place(mean(seed.points())), cluster.members().length, other));
-            }
+            shapes.add(points);
+            nearness.add(box.reach());
+            Zone zone = zone(box, box.clusters.get(c), points, box.mass(c), box.half(c));
+            settled &= zone.settled();
+            zones.add(zone);
         }
-        return others;
     }
 
     private static double[] mean(double[][] points) {
@@ -382,8 +403,8 @@ final class ZoneSearch {
 
     // ---- what a zone is like ---------------------------------------------------------------------------------------
 
-    private Zone zone(Box box, double[][] points, double mass, double half, boolean known) {
-        boolean wraps = box.clusters.get(0).wraps();
+    private Zone zone(Box box, Clusters.Cluster cluster, double[][] points, double mass, double half) {
+        boolean wraps = cluster.wraps();
         double[] low = {Double.POSITIVE_INFINITY, Double.POSITIVE_INFINITY, Double.POSITIVE_INFINITY};
         double[] high = {Double.NEGATIVE_INFINITY, Double.NEGATIVE_INFINITY, Double.NEGATIVE_INFINITY};
         double weights = 0;
@@ -393,7 +414,7 @@ final class ZoneSearch {
         for (int n = 0; n < points.length; n++) {
             Place at = place(points[n]);
             spot.go(at.theta(), at.radius(), at.sigma());
-            double weight = box.weight.get(box.main()[n]);
+            double weight = box.weight.get(cluster.members()[n]);
             weights += weight;
             pressure += weight * spot.pressure();
             emptiness += weight / spot.density();
@@ -428,7 +449,7 @@ final class ZoneSearch {
                 dam.map(d -> d.distance(at.radius())),
                 exchange(places, parts * mass),
                 places,
-                known,
+                half <= KNOWN * mass,
                 box.each * REPLICATES);
     }
 

@@ -6,12 +6,14 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.concurrent.Callable;
+import org.whither.eddy.EddySettings;
 import org.whither.io.file.WholeFolder;
 import org.whither.io.hdf5.FieldWriter;
 import org.whither.io.picture.PictureDescription;
 import org.whither.io.picture.Stills;
 import org.whither.io.picture.View;
 import org.whither.io.report.ReportPicture;
+import org.whither.io.result.EddiesResult;
 import org.whither.io.result.SplitResult;
 import org.whither.render.NoOpenGL;
 import org.whither.render.Quantity;
@@ -30,7 +32,8 @@ import picocli.CommandLine.Spec;
         header = "Do the whole job on a built-in, invented seal.%n",
         description = {
             "Computes the film of an invented spiral-groove seal, writes it as a field file, finds where its supply gas"
-                    + " goes, draws it, and makes one page of it. Writes field.h5, split.json, report.html and report.json,"
+                    + " goes and what gas stays, draws it, and makes one page of it. Writes field.h5, split.json, eddies.json with its"
+                    + " tables, report.html and report.json,"
                     + " and the pictures plan.png, plan-thickness.png, plan-speed.png, plan-age.png, plan-destination.png,"
                     + " relief.png, gap.png and meridian.png into the folder, each with its description as JSON.",
             "Without usable OpenGL it still gives the numbers, says which packages pictures need, and ends with status"
@@ -40,6 +43,7 @@ import picocli.CommandLine.Spec;
 final class DemoCommand implements Callable<Integer> {
     private static final Path DEFAULT_FOLDER = Path.of("demo-whither");
     private static final int PATHS = 7;
+    private static final int EDDY_BUDGET = 8192;
 
     @Spec
     private CommandSpec spec;
@@ -65,6 +69,7 @@ final class DemoCommand implements Callable<Integer> {
         talk.say(SampleCommand.words(solved.facts(), solved));
         talk.say("");
         SplitResult[] found = new SplitResult[1];
+        EddiesResult[] eddies = new EddiesResult[1];
         String[] sentence = new String[1];
         WholeFolder.write(target, into -> {
             Path file = into.resolve("field.h5");
@@ -72,6 +77,8 @@ final class DemoCommand implements Callable<Integer> {
             FieldInput input = FieldInput.read(file, talk);
             found[0] = SplitCommand.find(input, settings, talk);
             SplitCommand.writeNumbers(found[0], into);
+            eddies[0] = EddiesCommand.find(input, tracing.eddies(EddySettings.PATIENCE, EDDY_BUDGET), talk);
+            EddiesCommand.writeNumbers(eddies[0], into);
             List<ReportPicture> pictures = new ArrayList<>();
             Optional<String> missing = draw(input, found[0], pictures);
             if (missing.isEmpty()) {
@@ -81,13 +88,15 @@ final class DemoCommand implements Callable<Integer> {
             sentence[0] = missing.orElse(null);
         });
         SplitCommand.print(found[0], talk);
+        talk.say("");
+        talk.say(eddies[0].answer());
         talk.say("Written: " + target.toAbsolutePath());
         talk.say("The page for the plant: " + target.resolve("report.html").toAbsolutePath());
         if (sentence[0] != null) {
             talk.warn(sentence[0]);
             return ExitStatus.SHORT_OF_WANTED;
         }
-        return SplitCommand.status(found[0]);
+        return eddies[0].complete() ? SplitCommand.status(found[0]) : ExitStatus.SHORT_OF_WANTED;
     }
 
     /** Draws the pictures, or tells in a sentence why it could not. */

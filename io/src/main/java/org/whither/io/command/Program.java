@@ -41,6 +41,7 @@ import picocli.CommandLine.Spec;
             DemoCommand.class,
             CheckCommand.class,
             SplitCommand.class,
+            EddiesCommand.class,
             PathsCommand.class,
             DrawCommand.class,
             RideCommand.class,

@@ -1,5 +1,6 @@
 package org.whither.io.command;
 
+import org.whither.eddy.EddySettings;
 import org.whither.fate.SplitSettings;
 import org.whither.film.Frame;
 import picocli.CommandLine.Model.CommandSpec;
@@ -79,5 +80,14 @@ final class TracingOptions {
                     spec.commandLine(), "--width is " + width + "; expected a number from 1e-6 to 1");
         }
         return new SplitSettings(frame, tolerance(), width, seed, threads(), SplitSettings.MOST_TRACERS);
+    }
+
+    /** How recirculation is looked for. */
+    EddySettings eddies(double patience, int budget) {
+        try {
+            return new EddySettings(frame, tolerance(), patience, budget, seed, threads());
+        } catch (IllegalArgumentException e) {
+            throw new ParameterException(spec.commandLine(), "--" + e.getMessage(), e);
+        }
     }
 }

@@ -64,7 +64,7 @@ class ProgramTest {
             assertTrue(names(out).contains(picture + ".json"), picture);
         }
         assertTrue(names(out)
-                .containsAll(List.of(".whither-results", "field.h5", "report.html", "report.json", "split.json")));
+                .containsAll(List.of(".whither-results", "field.h5", "report.html", "report.json", "split.json", "eddies.json", "eddies.csv")));
         assertTrue(run.out().contains("The page for the plant: " + out.resolve("report.html")), run.out());
         assertEquals(4, Jsoup.parse(out.resolve("report.html")).select("img").size());
         assertEquals(1280, ImageIO.read(out.resolve("plan.png").toFile()).getWidth());
@@ -204,7 +204,7 @@ class ProgramTest {
     void help_everyCommand_explainsItself() {
         assertTrue(run("--help").out().contains("Exit status"));
         assertTrue(run("--help").out().contains("Caution"));
-        for (String command : List.of("demo", "check", "split", "draw", "sample")) {
+        for (String command : List.of("demo", "check", "split", "eddies", "draw", "sample")) {
             Run run = run(command, "--help");
             assertEquals(0, run.status());
             assertTrue(run.out().contains("Usage: whither " + command), run.out());
