@@ -295,11 +295,11 @@ final class ZoneSearch {
             double volume = 1;
             for (int c = 0; c < 3; c++) {
                 boolean free = c == 0 && round();
-                double margin = 0.5 * reach[c];
+                double margin = 0.25 * reach[c];
                 tight |= !free && from[c] - margin < low[c] && (c == 0 || low[c] > 0);
                 tight |= !free && to[c] + margin > high[c] && (c == 0 || high[c] < 1);
-                from[c] -= free ? 0 : 1.5 * margin;
-                to[c] += free ? 0 : 1.5 * margin;
+                from[c] -= free ? 0 : 2 * margin;
+                to[c] += free ? 0 : 2 * margin;
             }
             if (round() && (clusters.get(0).wraps() || to[0] - from[0] > 0.9)) {
                 from[0] = 0;
