@@ -3,14 +3,21 @@ package org.whither.io.command;
 import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.Map;
+import java.util.Optional;
 import java.util.concurrent.Callable;
 import org.whither.eddy.Eddies;
 import org.whither.eddy.EddySettings;
 import org.whither.eddy.NoThroughFlow;
 import org.whither.io.file.RefusedInput;
 import org.whither.io.file.WholeFolder;
+import org.whither.io.picture.PngFile;
 import org.whither.io.result.EddiesResult;
 import org.whither.io.result.ResultJson;
+import org.whither.render.Meridian;
+import org.whither.render.MeridianSettings;
+import org.whither.render.NoOpenGL;
+import org.whither.render.PictureSettings;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Option;
@@ -27,8 +34,8 @@ import picocli.CommandLine.Option;
                     + " Tells also where gas runs against its column, where the flow stands still, and where the gas that"
                     + " stays longest spends its time. Says so where nothing is found, and how small a zone would have been"
                     + " seen.",
-            "Writes eddies.json, eddies.csv (the zones), eddies-places.csv (places of held gas) and eddies-reversed.csv (the"
-                    + " map of reversed flow) into the folder. With --json and no --out it writes no file. Status 4 where the"
+            "Writes eddies.json, eddies.csv (the zones), eddies-places.csv (places of held gas), eddies-reversed.csv (the"
+                    + " map of reversed flow) and eddies.png (the film along the radius, zones outlined) into the folder. With --json and no --out it writes no file. Status 4 where the"
                     + " budget ended before every zone was measured.%n"
         },
         sortOptions = false)
@@ -57,6 +64,9 @@ final class EddiesCommand implements Callable<Integer> {
                             + " what was found (default: ${DEFAULT-VALUE}).")
     private int budget;
 
+    @Option(names = "--no-picture", description = "Write no picture.")
+    private boolean noPicture;
+
     @Mixin
     private TracingOptions tracing;
 
@@ -73,8 +83,14 @@ final class EddiesCommand implements Callable<Integer> {
             WholeFolder.check(target);
         }
         EddiesResult result = find(input, settings, talk);
+        String[] sentence = new String[1];
         if (files) {
-            WholeFolder.add(target, into -> writeNumbers(result, into));
+            WholeFolder.add(target, into -> {
+                writeNumbers(result, into);
+                if (!noPicture) {
+                    sentence[0] = draw(input, result, into).orElse(null);
+                }
+            });
         }
         if (talk.json()) {
             talk.out().print(ResultJson.text(result.json()));
@@ -84,7 +100,25 @@ final class EddiesCommand implements Callable<Integer> {
         if (files) {
             talk.say("Written: " + target);
         }
+        if (sentence[0] != null) {
+            talk.warn(sentence[0]);
+            return ExitStatus.SHORT_OF_WANTED;
+        }
         return result.complete() ? ExitStatus.DONE : ExitStatus.SHORT_OF_WANTED;
+    }
+
+    /** Draws the section along the radius with the zones outlined, or tells in a sentence why it could not. */
+    private Optional<String> draw(FieldInput input, EddiesResult result, Path into) throws IOException {
+        try {
+            PictureSettings how = PictureSettings.standard(input.title()).speedsIn(tracing.frame());
+            PngFile.write(
+                    Meridian.draw(input.flow(), result.eddies().zones(), MeridianSettings.averaged(how)),
+                    Map.of("Title", input.title(), "Description", result.answer()),
+                    into.resolve("eddies.png"));
+            return Optional.empty();
+        } catch (NoOpenGL e) {
+            return Optional.of(e.getMessage());
+        }
     }
 
     static EddiesResult find(FieldInput input, EddySettings settings, Talk talk) {
