@@ -105,7 +105,7 @@ final class ZoneSearch {
         double[][] points = held.stream().map(this::point).toArray(double[][]::new);
         Deque<Seed> seeds = new ArrayDeque<>();
         for (Clusters.Cluster cluster :
-                Clusters.of(points, reach, others.stream().map(this::point).toArray(double[][]::new))) {
+                Clusters.of(points, reach, new double[0][])) {
             seeds.add(new Seed(
                     members(points, cluster), reach, cluster.members().length * filmMass / grid.sectors() / count));
         }
@@ -232,8 +232,7 @@ final class ZoneSearch {
             }
             each += more;
             // Too few tracers would be parted by chance.
-            double[][] between =
-                    each >= PARTING_OF_REPLICATE ? others.toArray(double[][]::new) : new double[0][];
+            double[][] between = each >= PARTING_OF_REPLICATE ? others.toArray(double[][]::new) : new double[0][];
             clusters = Clusters.whole(held.toArray(double[][]::new), reach(), between, LEAST);
         }
 

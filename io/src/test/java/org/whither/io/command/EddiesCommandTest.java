@@ -49,7 +49,15 @@ class EddiesCommandTest {
     @Test
     void eddies_storedField_findsTheRingOverTheGrooves() throws IOException {
         Run run = run(
-                "eddies", FIELD.toString(), "--json", "--quiet", "--budget", "4096", "--threads", "2", "--out",
+                "eddies",
+                FIELD.toString(),
+                "--json",
+                "--quiet",
+                "--budget",
+                "4096",
+                "--threads",
+                "2",
+                "--out",
                 folder.resolve("out").toString());
         assertTrue(run.status() == 0 || run.status() == 4, run.err());
         JsonNode found = new ObjectMapper().readTree(run.out());
@@ -63,19 +71,29 @@ class EddiesCommandTest {
         assertEquals(0.85, zone.get("centre").get("sigma").asDouble(), 0.05);
         assertEquals(0.0385, found.get("held_mass_share").asDouble(), 0.006);
         assertEquals(0.003, zone.get("dam").get("from_outer_edge").asDouble(), 0.0005);
-        assertTrue(zone.get("turnover_time").asDouble() > 3 * found.get("median_residence").asDouble());
+        assertTrue(zone.get("turnover_time").asDouble()
+                > 3 * found.get("median_residence").asDouble());
         for (String key : List.of(
-                "reversed_volume_share", "median_residence", "long_stayers", "critical_points", "warnings", "caution")) {
+                "reversed_volume_share",
+                "median_residence",
+                "long_stayers",
+                "critical_points",
+                "warnings",
+                "caution")) {
             assertTrue(found.has(key), key);
         }
         List<String> rows = Files.readAllLines(folder.resolve("out").resolve("eddies.csv"));
         assertEquals(2, rows.size());
         assertEquals(rows.get(0).split(",").length, rows.get(1).split(",", -1).length);
-        assertTrue(Files.readAllLines(folder.resolve("out").resolve("eddies-places.csv")).size() > 20);
-        assertEquals(24 * 32 + 1, Files.readAllLines(folder.resolve("out").resolve("eddies-reversed.csv")).size());
+        assertTrue(Files.readAllLines(folder.resolve("out").resolve("eddies-places.csv"))
+                        .size()
+                > 20);
+        assertEquals(
+                24 * 32 + 1,
+                Files.readAllLines(folder.resolve("out").resolve("eddies-reversed.csv"))
+                        .size());
 
-        Run again =
-                run("eddies", FIELD.toString(), "--json", "--quiet", "--budget", "4096", "--threads", "1");
+        Run again = run("eddies", FIELD.toString(), "--json", "--quiet", "--budget", "4096", "--threads", "1");
         ObjectNode other = (ObjectNode) new ObjectMapper().readTree(again.out());
         other.remove("wall_seconds");
         ((ObjectNode) found).remove("wall_seconds");
@@ -85,8 +103,18 @@ class EddiesCommandTest {
     @Test
     void eddies_facesWithoutGrooves_saysThatNothingWasFound() {
         Path field = folder.resolve("coned.h5");
-        assertEquals(0, run("sample", "coned", "--grid", "12x32", "--quiet", "--as", field.toString()).status());
-        Run run = run("eddies", field.toString(), "--quiet", "--budget", "4096", "--out", folder.resolve("out").toString());
+        assertEquals(
+                0,
+                run("sample", "coned", "--grid", "12x32", "--quiet", "--as", field.toString())
+                        .status());
+        Run run = run(
+                "eddies",
+                field.toString(),
+                "--quiet",
+                "--budget",
+                "4096",
+                "--out",
+                folder.resolve("out").toString());
         assertEquals(0, run.status(), run.err());
         assertTrue(run.out().contains("No recirculation found"), run.out());
         assertTrue(run.out().contains("0.292 %"), run.out());
@@ -95,7 +123,14 @@ class EddiesCommandTest {
 
     @Test
     void eddies_budgetTooSmallToMeasure_endsWithStatus4() {
-        Run run = run("eddies", FIELD.toString(), "--quiet", "--budget", "600", "--out", folder.resolve("out").toString());
+        Run run = run(
+                "eddies",
+                FIELD.toString(),
+                "--quiet",
+                "--budget",
+                "600",
+                "--out",
+                folder.resolve("out").toString());
         assertEquals(4, run.status(), run.out());
         assertTrue(run.out().contains("The budget of 600 tracers ended"), run.out());
     }
@@ -127,7 +162,12 @@ class EddiesCommandTest {
                 Optional.empty());
         Path file = folder.resolve("still.h5");
         FieldWriter.write(still, file);
-        Run run = run("eddies", file.toString(), "--quiet", "--out", folder.resolve("out").toString());
+        Run run = run(
+                "eddies",
+                file.toString(),
+                "--quiet",
+                "--out",
+                folder.resolve("out").toString());
         assertEquals(3, run.status(), run.err());
         assertEquals(1, run.err().lines().count(), run.err());
         assertTrue(run.err().contains("no gas enters the film"), run.err());

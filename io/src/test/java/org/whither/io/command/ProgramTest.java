@@ -64,7 +64,14 @@ class ProgramTest {
             assertTrue(names(out).contains(picture + ".json"), picture);
         }
         assertTrue(names(out)
-                .containsAll(List.of(".whither-results", "field.h5", "report.html", "report.json", "split.json", "eddies.json", "eddies.csv")));
+                .containsAll(List.of(
+                        ".whither-results",
+                        "field.h5",
+                        "report.html",
+                        "report.json",
+                        "split.json",
+                        "eddies.json",
+                        "eddies.csv")));
         assertTrue(run.out().contains("The page for the plant: " + out.resolve("report.html")), run.out());
         assertEquals(4, Jsoup.parse(out.resolve("report.html")).select("img").size());
         assertEquals(1280, ImageIO.read(out.resolve("plan.png").toFile()).getWidth());
