@@ -104,8 +104,7 @@ final class ZoneSearch {
         double[] reach = {even, even, even};
         double[][] points = held.stream().map(this::point).toArray(double[][]::new);
         Deque<Seed> seeds = new ArrayDeque<>();
-        for (Clusters.Cluster cluster :
-                Clusters.of(points, reach, new double[0][])) {
+        for (Clusters.Cluster cluster : Clusters.of(points, reach, new double[0][])) {
             seeds.add(new Seed(
                     members(points, cluster), reach, cluster.members().length * filmMass / grid.sectors() / count));
         }
