@@ -6,6 +6,7 @@ import java.nio.file.FileSystemException;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.time.ZonedDateTime;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
 import java.util.Optional;
@@ -21,10 +22,14 @@ import org.whither.io.report.ReportPage;
 import org.whither.io.report.ReportPicture;
 import org.whither.io.result.ResultJson;
 import org.whither.io.result.SplitResult;
+import org.whither.render.MotionSettings;
 import org.whither.render.NoOpenGL;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Mixin;
+import picocli.CommandLine.Model.CommandSpec;
 import picocli.CommandLine.Option;
+import picocli.CommandLine.ParameterException;
+import picocli.CommandLine.Spec;
 
 /** One page for the plant. */
 @Command(
@@ -35,7 +40,8 @@ import picocli.CommandLine.Option;
         description = {
             "Writes report.html, which holds everything in itself and prints on two pages A4, and its numbers as"
                     + " report.json, into the folder. With --json and no --out it writes no file. Status 4 where the"
-                    + " wanted width or closure was not reached, or pictures could not be drawn; the page then says so.%n"
+                    + " wanted width or closure was not reached, or pictures or the animation could not be made; it then says"
+                    + " so.%n"
         },
         sortOptions = false)
 final class ReportCommand implements Callable<Integer> {
@@ -45,6 +51,9 @@ final class ReportCommand implements Callable<Integer> {
 
     /** Tracers inside the film: a page tells of zones of a good part of the gas; command eddies looks closer. */
     private static final int EDDY_TRACERS = 6_000;
+
+    @Spec
+    private CommandSpec spec;
 
     @Mixin
     private FieldParameter field;
@@ -63,6 +72,9 @@ final class ReportCommand implements Callable<Integer> {
     private boolean noPictures;
 
     @Mixin
+    private RideOption ride;
+
+    @Mixin
     private FolderOption folder;
 
     @Mixin
@@ -78,6 +90,12 @@ final class ReportCommand implements Callable<Integer> {
     public Integer call() throws IOException {
         SplitSettings settings = tracing.split();
         boolean files = folder.given() || !talk.json();
+        MotionSettings motion = ride.settings(tracing);
+        if (ride.asked() && !files) {
+            throw new ParameterException(
+                    spec.commandLine(),
+                    "--ride writes files beside the page, and --json alone writes none; name a folder with --out");
+        }
         FieldInput input = FieldInput.read(field, talk);
         Optional<FieldInput> beside =
                 other == null ? Optional.empty() : Optional.of(FieldInput.read(other, field.interpolation(), talk));
@@ -91,7 +109,7 @@ final class ReportCommand implements Callable<Integer> {
             b = Optional.of(tell(beside.get(), settings));
             Comparison.add(a.numbers(), b.get().numbers());
         }
-        Optional<String> missing = files ? write(a, b, target) : Optional.empty();
+        List<String> missing = files ? write(a, b, motion, target) : List.of();
         if (talk.json()) {
             talk.out().print(ResultJson.text(a.numbers()));
             talk.out().flush();
@@ -100,11 +118,11 @@ final class ReportCommand implements Callable<Integer> {
         if (files) {
             talk.say("The page: " + target.resolve("report.html"));
         }
-        missing.ifPresent(talk::warn);
+        missing.forEach(talk::warn);
         int status = Math.max(
                 SplitCommand.status(a.result()),
                 b.map(told -> SplitCommand.status(told.result())).orElse(ExitStatus.DONE));
-        return missing.isPresent() ? ExitStatus.SHORT_OF_WANTED : status;
+        return RideOption.fallsShort(missing) ? ExitStatus.SHORT_OF_WANTED : status;
     }
 
     private void say(Told a, Optional<Told> b) {
@@ -155,9 +173,11 @@ final class ReportCommand implements Callable<Integer> {
         }
     }
 
-    private Optional<String> write(Told a, Optional<Told> b, Path target) throws IOException {
+    /** Writes page, numbers and animation; returns a sentence for each thing that could not be made. */
+    private List<String> write(Told a, Optional<Told> b, MotionSettings motion, Path target) throws IOException {
         List<ReportPicture> pictures = List.of();
-        Optional<String> missing = Optional.empty();
+        List<String> missing = new ArrayList<>();
+        Optional<String> none = noPictures ? Optional.of("none were asked for.") : Optional.empty();
         if (!noPictures) {
             try (Talk.Stretch stretch = talk.begin("Drawing")) {
                 pictures = b.isPresent()
@@ -165,18 +185,21 @@ final class ReportCommand implements Callable<Integer> {
                                 a.input(), a.result(), b.get().input(), b.get().result(), tracing, stretch)
                         : ReportPictures.of(a.input(), a.result(), tracing, stretch);
             } catch (NoOpenGL e) {
-                missing = Optional.of(e.getMessage());
+                none = Optional.of(e.getMessage());
+                missing.add(e.getMessage());
             }
         }
-        ReportPage.Settings page = new ReportPage.Settings(
-                plain,
-                ZonedDateTime.now(),
-                words(a, b),
-                noPictures ? Optional.of("none were asked for.") : missing,
-                Optional.empty());
         List<ReportPicture> drawn = pictures;
+        Optional<String> whyNone = none;
         try {
-            WholeFolder.add(target, into -> write(a.numbers(), drawn, page, into));
+            WholeFolder.add(target, into -> {
+                Optional<String> animation = animation(a, b, motion, missing, into);
+                write(
+                        a.numbers(),
+                        drawn,
+                        new ReportPage.Settings(plain, ZonedDateTime.now(), words(a, b), whyNone, animation),
+                        into);
+            });
         } catch (FileSystemException e) {
             throw e; // it names the file
         } catch (IOException e) {
@@ -186,6 +209,18 @@ final class ReportCommand implements Callable<Integer> {
                     e);
         }
         return missing;
+    }
+
+    /** Writes the animation where it is asked for; the file to which the page leads. */
+    private Optional<String> animation(Told a, Optional<Told> b, MotionSettings motion, List<String> missing, Path into)
+            throws IOException {
+        if (!ride.asked()) {
+            return Optional.empty();
+        }
+        String title = (b.isPresent() ? "A: " : "") + a.input().title();
+        MotionFiles.Written written = RideOption.write(a.input(), title, tracing, motion, talk, into);
+        written.missing().stream().filter(s -> !missing.contains(s)).forEach(missing::add);
+        return written.files().stream().findFirst();
     }
 
     private static void write(ObjectNode numbers, List<ReportPicture> pictures, ReportPage.Settings page, Path into)
@@ -221,6 +256,7 @@ final class ReportCommand implements Callable<Integer> {
                 told -> words.append(" --compare ").append(quoted(told.result().file())));
         words.append(plain ? " --plain" : "");
         words.append(noPictures ? " --no-pictures" : "");
+        words.append(ride == null ? "" : ride.words());
         words.append(" --interpolation ").append(result.flow().interpolation());
         words.append(" --frame ").append(result.settings().frame().name().toLowerCase(Locale.ROOT));
         words.append(" --tolerance ").append(result.settings().tolerance());

@@ -58,7 +58,7 @@ import picocli.CommandLine.Spec;
         },
         sortOptions = false)
 final class RideCommand implements Callable<Integer> {
-    private static final Pattern SIZE = Pattern.compile("(\\d{1,6})\\s*[x×,]\\s*(\\d{1,6})");
+    static final Pattern SIZE = Pattern.compile("(\\d{1,6})\\s*[x×,]\\s*(\\d{1,6})");
     private static final int MOST_TRACERS = 5000;
 
     /** Angle that paths shown as tubes round the ring run through at most (rad). */
@@ -66,6 +66,9 @@ final class RideCommand implements Callable<Integer> {
 
     /** From so many paths the one to follow is chosen. */
     private static final int CANDIDATES = 64;
+
+    /** Tracers shown beside the followed one. */
+    static final int RIDE_TRACERS = 300;
 
     /** The kinds of animations. */
     enum Kind {
@@ -246,11 +249,14 @@ final class RideCommand implements Callable<Integer> {
         TraceSettings how = Pictures.settings(flow, tracing.frame(), tracing.tolerance());
         try {
             return switch (kind) {
-                case RIDE -> ride(flow, start, how, settings);
+                case RIDE ->
+                    start == null
+                            ? ride(flow, tracing, or(RIDE_TRACERS), settings)
+                            : rideFrom(flow, start, how, settings);
                 case TURN -> Turn.of(flow, tubes(flow, how, or(12)), settings);
                 case RELEASE -> {
                     PathEnd.Border border = entry(flow);
-                    yield LetGo.of(flow, recorded(flow, how, border, or(600)), since(border), settings);
+                    yield LetGo.of(flow, recorded(flow, how, border, tracing.seed(), or(600)), since(border), settings);
                 }
             };
         } catch (IllegalArgumentException e) {
@@ -262,35 +268,46 @@ final class RideCommand implements Callable<Integer> {
         return tracers == null ? usual : tracers;
     }
 
-    private Animation ride(FilmFlow flow, double[] start, TraceSettings how, MotionSettings settings) {
+    /**
+     * The ride behind gas from where most enters that goes the way most of it goes.
+     *
+     * @param count how many other tracers are shown
+     * @throws NoOpenGL where pictures cannot be drawn on this machine
+     * @throws IllegalArgumentException where there is no gas to follow, or the size is beyond the memory
+     */
+    static Animation ride(FilmFlow flow, TracingOptions tracing, int count, MotionSettings settings) {
+        TraceSettings how = Pictures.settings(flow, tracing.frame(), tracing.tolerance());
         PathEnd.Border border = entry(flow);
-        org.whither.trace.Path followed;
-        String words;
-        if (start == null) {
-            List<org.whither.trace.Path> candidates = recorded(flow, how, border, CANDIDATES);
-            candidates.removeIf(path -> path.points().size() < 2);
-            if (candidates.isEmpty()) {
-                throw new IllegalArgumentException(
-                        "no gas enters this film that could be followed; give a start with" + " --from");
-            }
-            followed = PathChoice.choose(candidates, 1).get(0);
-            words = since(border);
-        } else {
-            followed = new Tracer(flow, how).record(new Release(start[0], start[1], start[2], 0));
-            words = "since it was let go";
-            checkStart(flow.film().grid(), start);
-            if (followed.points().size() < 2 || followed.end().time() < Ride.LEAST_SECONDS) {
-                throw new IllegalArgumentException("--from is " + from + ", where gas leaves the film at once; start it"
-                        + " further inside the film");
-            }
+        List<org.whither.trace.Path> candidates = recorded(flow, how, border, tracing.seed(), CANDIDATES);
+        candidates.removeIf(path -> path.points().size() < 2);
+        if (candidates.isEmpty()) {
+            throw new IllegalArgumentException("no gas enters this film that could be followed; command ride starts"
+                    + " anywhere in the film with --from");
         }
-        List<org.whither.trace.Path> others = border == null ? List.of() : recorded(flow, how, border, or(300));
-        return Ride.of(flow, followed, words, others, settings);
+        return Ride.of(
+                flow,
+                PathChoice.choose(candidates, 1).get(0),
+                since(border),
+                recorded(flow, how, border, tracing.seed(), count),
+                settings);
+    }
+
+    private Animation rideFrom(FilmFlow flow, double[] start, TraceSettings how, MotionSettings settings) {
+        checkStart(flow.film().grid(), start);
+        org.whither.trace.Path followed = new Tracer(flow, how).record(new Release(start[0], start[1], start[2], 0));
+        if (followed.points().size() < 2 || followed.end().time() < Ride.LEAST_SECONDS) {
+            throw new IllegalArgumentException(
+                    "--from is " + from + ", where gas leaves the film at once; start it" + " further inside the film");
+        }
+        PathEnd.Border border = entry(flow);
+        List<org.whither.trace.Path> others = recorded(flow, how, border, tracing.seed(), or(RIDE_TRACERS));
+        return Ride.of(flow, followed, "since it was let go", others, settings);
     }
 
     /** Paths that differ from one another and run less than most of the way round: others would hide the ring. */
     private List<org.whither.trace.Path> tubes(FilmFlow flow, TraceSettings how, int count) {
-        List<org.whither.trace.Path> all = recorded(flow, how, entry(flow), Math.min(MOST_TRACERS, 8 * count));
+        List<org.whither.trace.Path> all =
+                recorded(flow, how, entry(flow), tracing.seed(), Math.min(MOST_TRACERS, 8 * count));
         List<org.whither.trace.Path> few = new ArrayList<>(all);
         few.removeIf(path -> path.points().isEmpty()
                 || Math.abs(path.points().get(path.points().size() - 1).steadyTheta()
@@ -316,10 +333,11 @@ final class RideCommand implements Callable<Integer> {
         return balance.innerIn() > balance.outerIn() ? PathEnd.Border.INNER : PathEnd.Border.OUTER;
     }
 
-    private List<org.whither.trace.Path> recorded(FilmFlow flow, TraceSettings how, PathEnd.Border border, int count) {
+    private static List<org.whither.trace.Path> recorded(
+            FilmFlow flow, TraceSettings how, PathEnd.Border border, long seed, int count) {
         Tracer tracer = new Tracer(flow, how);
         List<org.whither.trace.Path> paths = new ArrayList<>();
-        for (Release release : ReleasePlan.entering(flow, border).releases(tracing.seed(), 0, Math.max(1, count))) {
+        for (Release release : ReleasePlan.entering(flow, border).releases(seed, 0, Math.max(1, count))) {
             paths.add(tracer.record(release));
         }
         return count == 0 ? new ArrayList<>() : paths;
@@ -389,7 +407,7 @@ final class RideCommand implements Callable<Integer> {
         return value == null ? OptionalDouble.empty() : OptionalDouble.of(factor * value);
     }
 
-    private static PictureSettings titled(PictureSettings plain, String title) {
+    static PictureSettings titled(PictureSettings plain, String title) {
         return new PictureSettings(
                 plain.width(),
                 plain.height(),

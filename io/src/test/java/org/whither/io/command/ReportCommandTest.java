@@ -13,12 +13,17 @@ import java.io.StringWriter;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.stream.Stream;
+import javax.imageio.ImageIO;
+import javax.imageio.ImageReader;
+import javax.imageio.stream.ImageInputStream;
 import org.jsoup.Jsoup;
 import org.jsoup.nodes.Document;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
+import org.whither.io.motion.VideoFile;
 
 /** Command report from its command line. */
 class ReportCommandTest {
@@ -72,6 +77,74 @@ class ReportCommandTest {
 
     private static String undated(Path folder) throws IOException {
         return Files.readString(folder.resolve("report.html")).replaceAll("<time.*?</time>", "");
+    }
+
+    @Test
+    void report_withRide_putsAnAnimationBesideThePage() throws IOException {
+        Path out = folder.resolve("out");
+        Run run = run(
+                "report",
+                FIELD.toString(),
+                "--width",
+                "0.05",
+                "--tolerance",
+                "1e-5",
+                "--no-pictures",
+                "--ride",
+                "--ride-size",
+                "640x360",
+                "--ride-length",
+                "0.5",
+                "--quiet",
+                "--out",
+                out.toString());
+        assertEquals(0, run.status(), run.err());
+        String first = VideoFile.possible() ? "ride.mp4" : "ride.gif";
+        assertEquals(!VideoFile.possible(), run.err().contains("ffmpeg"), run.err());
+        List<String> expected = new ArrayList<>(List.of(".whither-results", "report.html", "report.json", "ride.gif"));
+        if (VideoFile.possible()) {
+            expected.add("ride.mp4");
+        }
+        try (Stream<Path> files = Files.list(out)) {
+            assertEquals(
+                    expected,
+                    files.map(file -> file.getFileName().toString()).sorted().toList());
+        }
+        try (ImageInputStream in =
+                ImageIO.createImageInputStream(out.resolve("ride.gif").toFile())) {
+            ImageReader reader = ImageIO.getImageReadersByFormatName("gif").next();
+            reader.setInput(in);
+            assertEquals(640, reader.getWidth(0));
+            assertEquals(360, reader.getHeight(0));
+            assertTrue(reader.getNumImages(true) > 10, "frames of half a second");
+            reader.dispose();
+        }
+        Document page = Jsoup.parse(out.resolve("report.html"));
+        assertEquals(
+                List.of(first),
+                page.select("a[href^=ride]").stream().map(a -> a.attr("href")).toList());
+        assertTrue(page.text().contains("--ride --ride-size 640x360 --ride-length 0.5"), "what makes it again");
+    }
+
+    @Test
+    void report_rideThatCannotBe_isRefusedBeforeAnythingIsComputed() {
+        Path out = folder.resolve("out");
+        String[][] wrong = {
+            {"--ride-size 10x10", "expected at least 640"},
+            {"--ride-size big", "two whole numbers such as 1280x720"},
+            {"--ride-length 0.1", "expected 0.5 … 3600 s"}
+        };
+        for (String[] each : wrong) {
+            String[] option = each[0].split(" ");
+            Run run =
+                    run("report", FIELD.toString(), "--ride", option[0], option[1], "--quiet", "--out", out.toString());
+            assertEquals(2, run.status(), run.err());
+            assertTrue(run.err().contains(each[1]), run.err());
+            assertFalse(Files.exists(out));
+        }
+        Run nowhere = run("report", FIELD.toString(), "--ride", "--json", "--quiet");
+        assertEquals(2, nowhere.status(), nowhere.err());
+        assertTrue(nowhere.err().contains("name a folder with --out"), nowhere.err());
     }
 
     @Test
