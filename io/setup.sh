@@ -21,6 +21,8 @@ gl_packages='libegl1 libegl-mesa0 libgl1 libgl1-mesa-dri libgles2 libxrender1'
 # Java2D draws text with them; the headless Java of newer systems does not bring libharfbuzz0b itself.
 text_packages='libfreetype6 libharfbuzz0b fontconfig fonts-dejavu-core'
 test_packages='python3-h5py hdf5-tools ffmpeg'
+# A browser that prints the page of the report; of these systems only Debian has one as a package.
+if grep -q '^ID=debian$' /etc/os-release 2>/dev/null; then test_packages="$test_packages chromium"; fi
 # The Khronos validator of glTF files, from npm.
 node_tools='gltf-validator@2.0.0-dev.3.10'
 # The same where there is no dpkg to ask: sonames as the dynamic linker knows them.

@@ -202,7 +202,12 @@ public final class VideoFile implements FrameFile {
         try {
             pixels.close();
         } catch (IOException e) {
-            return; // what was still to be written is in vain
+            // what was still to be written is in vain
+        }
+        try {
+            process.waitFor(2, TimeUnit.SECONDS); // it writes no more when its file is taken away
+        } catch (InterruptedException e) {
+            Thread.currentThread().interrupt();
         }
     }
 

@@ -36,7 +36,7 @@ final class FakeMachine {
             "touch",
             "tr");
     static final String ALL_PACKAGES = "libegl1 libegl-mesa0 libgl1 libgl1-mesa-dri libgles2 libxrender1 "
-            + "libfreetype6 libharfbuzz0b fontconfig fonts-dejavu-core python3-h5py hdf5-tools ffmpeg";
+            + "libfreetype6 libharfbuzz0b fontconfig fonts-dejavu-core python3-h5py hdf5-tools ffmpeg chromium";
 
     /** The top of the clone; its name has a space in it. */
     final Path house;

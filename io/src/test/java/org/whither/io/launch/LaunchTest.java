@@ -184,7 +184,7 @@ class LaunchTest {
         assertEquals(3, outcome.status());
         assertEquals("", outcome.output());
         assertTrue(outcome.errors().contains("a JDK (javac), version 17 or later, and Maven"), outcome.errors());
-        String packages = FakeMachine.ALL_PACKAGES.replace(" python3-h5py hdf5-tools ffmpeg", "");
+        String packages = FakeMachine.ALL_PACKAGES.replace(" python3-h5py hdf5-tools ffmpeg chromium", "");
         String command = "su -c 'apt-get update && apt-get install -y --no-install-recommends ";
         assertTrue(outcome.errors().contains(command), outcome.errors());
         assertTrue(outcome.errors().contains("jdk-headless maven " + packages + "'"), outcome.errors());
