@@ -14,6 +14,9 @@ import org.whither.film.FilmFlow;
  * @param heldMassShare share of the film's gas that is held
  * @param heldLow lower end of its 95 % interval
  * @param heldHigh upper end
+ * @param heldByResidence share of gas that came in longer ago than gas counts as held, or never, told by the residences of
+ *     what enters, without the tracers inside the film
+ * @param olderMassShare the same share by the tracers inside; both estimate one number
  * @param creepingMassShare share that stays as long by the plain clock, but only because it lies close to a face
  * @param smallestSeen share of the film's gas above which a zone, or a set of equal zones, would have been met with a
  *     chance of 95 %
@@ -35,6 +38,8 @@ public record Eddies(
         double heldMassShare,
         double heldLow,
         double heldHigh,
+        Unflushed heldByResidence,
+        double olderMassShare,
         double creepingMassShare,
         double smallestSeen,
         ReversedFlow reversed,

@@ -34,6 +34,7 @@ final class EddySearch {
         int count = Integer.highestOneBit((int) (FIRST * settings.budget()));
         List<Release> releases = new InteriorPlan(flow).releases(settings.seed(), 0, count);
         HoldTest.Stay[] stays = test.test(releases);
+        int older = test.older();
         List<Release> held = new ArrayList<>();
         int creeping = 0;
         for (int n = 0; n < count; n++) {
@@ -83,6 +84,8 @@ final class EddySearch {
                 known ? zones + scattered : (double) held.size() / count,
                 known ? low : Math.max(0, wilson.getLowerBound()),
                 known ? high + scattered + smallest : wilson.getUpperBound(),
+                test.unflushed(),
+                (double) older / count,
                 (double) creeping / count,
                 smallest,
                 ReversedFlow.of(flow),

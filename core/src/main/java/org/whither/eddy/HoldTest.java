@@ -50,6 +50,9 @@ final class HoldTest {
     private final List<PathEnd.Border> borders;
     private final double[] residence;
     private final double medianResidence;
+    private final double filmMass;
+    private final double[] massFlow = new double[PathEnd.Border.values().length];
+    private int older;
     private long tracers;
     private long steps;
     private PathEnd.Failed failure;
@@ -60,11 +63,13 @@ final class HoldTest {
         this.settings = settings;
         this.steady = flow.film().steadyIn();
         this.tolerance = Math.min(settings.tolerance(), TOLERANCE);
-        double longest = Split.PATIENCE * FilmMass.of(flow) / balance.inflow();
+        this.filmMass = FilmMass.of(flow);
+        double longest = Split.PATIENCE * filmMass / balance.inflow();
         List<Release> throughGoing = new ArrayList<>();
         List<PathEnd.Border> over = new ArrayList<>();
         for (PathEnd.Border border : PathEnd.Border.values()) {
             ReleasePlan plan = ReleasePlan.entering(flow, border);
+            massFlow[border.ordinal()] = plan.massFlow();
             double share = plan.massFlow() / balance.inflow();
             int count = (int) Math.round(share * Math.min(THROUGH_TRACERS, settings.budget() / 4));
             throughGoing.addAll(plan.releases(settings.seed(), 0, count));
@@ -104,6 +109,16 @@ final class HoldTest {
         return medianResidence;
     }
 
+    /** Share of the film's gas that came in longer ago than the limit, by the residences of what enters alone. */
+    Unflushed unflushed() {
+        return Unflushed.of(filmMass, massFlow, borders, residence, limit());
+    }
+
+    /** How many of the releases last tested lie in gas that came in longer ago than the limit, or never. */
+    int older() {
+        return older;
+    }
+
     /** Time after which gas counts as held (s). */
     double limit() {
         return settings.patience() * medianResidence;
@@ -126,9 +141,9 @@ final class HoldTest {
     Stay[] test(List<Release> releases) {
         Stay[] stays = new Stay[releases.size()];
         Arrays.fill(stays, Stay.HELD);
-        for (Direction direction : Direction.values()) {
-            sieve(flow, settings.frame(), direction, limit(), releases, stays, Stay.THROUGH);
-        }
+        sieve(flow, settings.frame(), Direction.BACKWARD, limit(), releases, stays, Stay.THROUGH);
+        older = Collections.frequency(Arrays.asList(stays), Stay.HELD);
+        sieve(flow, settings.frame(), Direction.FORWARD, limit(), releases, stays, Stay.THROUGH);
         for (Direction direction : Direction.values()) {
             sieve(clock, steady, direction, CLOCK_PART * limit(), releases, stays, Stay.CREEPING);
         }

@@ -28,6 +28,10 @@ class NothingHeldTest {
         assertTrue(eddies.small().isEmpty());
         assertEquals(0, eddies.heldMassShare(), 0);
         assertTrue(eddies.creepingMassShare() > 1e-3);
+        // All gas goes through, so its residences fill the film (Danckwerts 1953).
+        Unflushed unflushed = eddies.heldByResidence();
+        assertTrue(unflushed.low() < 0.005 && unflushed.high() > 0, unflushed.toString());
+        assertTrue(unflushed.high() - unflushed.low() < 0.1, unflushed.toString());
         assertEquals(0, eddies.reversed().volumeShare(), 0);
         assertEquals(0, eddies.reversed().uphillShare(), 0);
         // With N tracers a share m is missed with probability (1 − m)^N.

@@ -15,6 +15,7 @@ import org.whither.eddy.Range;
 import org.whither.eddy.Sense;
 import org.whither.eddy.Separatrix;
 import org.whither.eddy.SmallCluster;
+import org.whither.eddy.Unflushed;
 import org.whither.eddy.Zone;
 import org.whither.film.Conditions;
 import org.whither.film.FilmFlow;
@@ -72,6 +73,12 @@ public record EddiesResult(FilmFlow flow, Eddies eddies, String file, String sha
         root.put("held_mass_share", eddies.heldMassShare());
         root.put("held_mass_share_low", eddies.heldLow());
         root.put("held_mass_share_high", eddies.heldHigh());
+        ObjectNode byResidence = root.putObject("held_by_residence");
+        byResidence.put("share", eddies.heldByResidence().share());
+        byResidence.put("low", eddies.heldByResidence().low());
+        byResidence.put("high", eddies.heldByResidence().high());
+        byResidence.put("older_than", eddies.heldByResidence().olderThan());
+        byResidence.put("share_by_tracers_inside", eddies.olderMassShare());
         root.put("creeping_mass_share", eddies.creepingMassShare());
         root.put("smallest_seen", eddies.smallestSeen());
         root.put("reversed_volume_share", eddies.reversed().volumeShare());
@@ -365,6 +372,7 @@ public record EddiesResult(FilmFlow flow, Eddies eddies, String file, String sha
                         1e3 * eddies.medianResidence(),
                         1e3 * eddies.heldAfter(),
                         share(eddies.creepingMassShare())));
+        byResidence(s);
         small(s);
         wrap(
                 s,
@@ -485,6 +493,20 @@ public record EddiesResult(FilmFlow flow, Eddies eddies, String file, String sha
         if (share > 0) {
             parts.add(String.format(Locale.ROOT, "%.0f %% from %s", 100 * share, from));
         }
+    }
+
+    private void byResidence(StringBuilder s) {
+        Unflushed unflushed = eddies.heldByResidence();
+        wrap(
+                s,
+                String.format(
+                        Locale.ROOT,
+                        "Check: by mass flow × residence of what enters, %s … %s of the film's gas came in more than %.1f ms ago or"
+                                + " never; by the tracers inside, %s.",
+                        share(Math.max(0, unflushed.low())),
+                        share(Math.max(0, unflushed.high())),
+                        1e3 * unflushed.olderThan(),
+                        share(eddies.olderMassShare())));
     }
 
     private void small(StringBuilder s) {
