@@ -93,6 +93,28 @@ final class Chart {
         }
     }
 
+    /** A closed patch of the face between two radii and two angles. */
+    Path2D.Double patch(double theta0, double theta1, double r0, double r1) {
+        int parts = Math.max(1, (int) Math.ceil(Math.abs(theta1 - theta0) / Math.toRadians(0.5)));
+        Path2D.Double path = new Path2D.Double();
+        for (int n = 0; n <= 2 * parts + 1; n++) {
+            double f = n <= parts ? (double) n / parts : (2 * parts + 1.0 - n) / parts;
+            Point2D p = at(theta0 + f * (theta1 - theta0), n <= parts ? r0 : r1);
+            if (n == 0) {
+                path.moveTo(p.getX(), p.getY());
+            } else {
+                path.lineTo(p.getX(), p.getY());
+            }
+        }
+        path.closePath();
+        return path;
+    }
+
+    /** All round the ring between two radii; its edges are circles, and a seam that is not to be drawn. */
+    Path2D.Double band(double r0, double r1) {
+        return patch(middle - Math.PI, middle + Math.PI, r0, r1);
+    }
+
     /** The circle of a radius; unrolled, the whole of it as a straight line. */
     Path2D.Double circle(double radius) {
         Path2D.Double path = new Path2D.Double();

@@ -532,7 +532,7 @@ public final class Meridian {
         ink.pen.fill(head);
     }
 
-    private static void zoneLine(Ink ink, Shape shape) {
+    static void zoneLine(Ink ink, Shape shape) {
         ink.colour(0xffffff);
         ink.stroke(3.4 * ink.unit);
         ink.pen.draw(shape);

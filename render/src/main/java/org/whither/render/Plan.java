@@ -25,7 +25,7 @@ import org.whither.trace.PathPoint;
 
 /**
  * The face seen along the shaft, with the pressure, the film thickness, the speed, the age or the destination of the gas
- * in colour, and grooves, feed and footprints of paths: the whole ring with one sector enlarged and its feed unrolled, or
+ * in colour, and grooves, feed, zones of held gas and footprints of paths: the whole ring with one sector enlarged and its feed unrolled, or
  * the ring alone, or one sector unrolled.
  *
  * <p>Angles are those of the frame in which the film is steady; lengths are true to scale, of an unrolled sector at the
@@ -44,6 +44,7 @@ public final class Plan {
     private final PictureSettings settings;
     private final PlanData data;
     private final List<Path> paths;
+    private final PlanZones zones;
     private final FaceValues values;
     private final PictureSettings.Range found;
     private final PictureSettings.Range range;
@@ -55,6 +56,7 @@ public final class Plan {
         this.settings = plan.picture();
         this.data = data;
         this.paths = data.paths();
+        this.zones = new PlanZones(data.zones(), grid);
         this.values = new FaceValues(shape, plan.quantity(), settings.speedFrame(), data.ages());
         this.found = values.range();
         this.range = plan.range().orElse(values.roundRange());
@@ -115,7 +117,8 @@ public final class Plan {
     }
 
     private BufferedImage draw() {
-        boolean withLegend = withFeed() || !paths.isEmpty() || plan.quantity() == Quantity.DESTINATION;
+        boolean withLegend =
+                withFeed() || !paths.isEmpty() || !data.zones().isEmpty() || plan.quantity() == Quantity.DESTINATION;
         PlanLayout layout = layout(shape, plan, withFeed(), withLegend);
         BufferedImage image;
         try (Canvas canvas = new Canvas(settings.width(), settings.height())) {
@@ -201,6 +204,7 @@ public final class Plan {
         Shape before = ink.pen.getClip();
         ink.pen.clip(window);
         outlines(ink, layout.ringChart, Math.max(0.75, 0.95 * ink.unit), 0, grid.sectors() - 1, false);
+        zones.draw(ink, layout.ringChart, window, false);
         footprints(ink, layout.ringChart, 1.5 * ink.unit);
         ink.pen.setClip(before);
 
@@ -461,6 +465,7 @@ public final class Plan {
         if (chart.isUnrolled()) {
             sectorBorders(ink, layout);
         }
+        zones.draw(ink, chart, window, true);
         footprints(ink, chart, 2.2 * ink.unit);
         labels.forEach(Runnable::run);
         ink.pen.setClip(before);
@@ -575,6 +580,7 @@ public final class Plan {
                 legend.add(destination, destination.words(conditions));
             }
         }
+        zones.legend(legend);
         if (paths.stream().anyMatch(Plan::goesOn)) {
             legend.add(
                     (x, y) -> {

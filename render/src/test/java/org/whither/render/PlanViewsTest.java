@@ -9,11 +9,17 @@ import java.awt.image.BufferedImage;
 import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
 import org.junit.jupiter.params.provider.EnumSource;
 import org.whither.eddy.AgeMap;
+import org.whither.eddy.Exchange;
+import org.whither.eddy.Place;
+import org.whither.eddy.Range;
+import org.whither.eddy.Sense;
+import org.whither.eddy.Zone;
 import org.whither.fate.DestinationMap;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
@@ -194,5 +200,75 @@ class PlanViewsTest {
         PlanTest.edgeIsClear(Relief.draw(FILM, FILM.paths(Frame.ROTATING), ReliefSettings.sector(settings)), settings);
         PlanTest.edgeIsClear(Relief.draw(FILM, List.of(), ReliefSettings.ring(settings)), settings);
         PlanTest.edgeIsClear(Meridian.draw(FILM, List.of(), MeridianSettings.at(settings, 0.2)), settings);
+    }
+
+    private static Zone zone(Range theta, Range radius, int count) {
+        Place centre = new Place(0.5 * (theta.low() + theta.high()), 0.5 * (radius.low() + radius.high()), 0.5);
+        return new Zone(
+                centre,
+                theta,
+                radius,
+                new Range(0.2, 0.8),
+                1e-12,
+                1e-12,
+                1e-12,
+                1e-12,
+                0.01,
+                count,
+                Sense.NONE,
+                OptionalDouble.empty(),
+                1e5,
+                Optional.empty(),
+                new Exchange(1, 0, 0, 0, 0, 1),
+                List.of(),
+                true,
+                1);
+    }
+
+    private static BufferedImage with(Zone zone, PlanSettings settings) {
+        PlanData data = new PlanData(List.of(), List.of(), Optional.empty(), Optional.empty(), List.of(zone));
+        return Plan.draw(FILM, data, settings);
+    }
+
+    /** Two pictures that differ in a zone differ where these zones lie, all over, and nowhere else. */
+    @ParameterizedTest
+    @CsvSource({"BOTH,STATOR", "RING,ROTOR"})
+    void draw_zones_areMarkedWhereTheyLieAndOnlyThere(Part part, ViewingSide side) {
+        PictureSettings picture = SETTINGS.from(side);
+        PlanSettings settings = plan(picture, Quantity.PRESSURE, part);
+        double span = GRID.outerRadius() - GRID.innerRadius();
+        Range low = new Range(GRID.innerRadius() + 0.15 * span, GRID.innerRadius() + 0.4 * span);
+        Range high = new Range(GRID.innerRadius() + 0.6 * span, GRID.innerRadius() + 0.85 * span);
+        Range narrow = new Range(0.1 * GRID.pitch(), 0.5 * GRID.pitch());
+        BufferedImage round = with(zone(new Range(0, 2 * Math.PI), low, 1), settings);
+        BufferedImage many = with(zone(narrow, high, GRID.sectors()), settings);
+        PlanLayout layout = Plan.layout(new FilmShape(FILM), settings, false, true);
+        double margin = 4e-3 / layout.ringScale;
+        int[] changed = new int[3];
+        int[] all = new int[3];
+        for (double r = GRID.innerRadius() + margin; r < GRID.outerRadius() - margin; r += span / 60) {
+            for (double theta = 0; theta < 2 * Math.PI; theta += 0.003) {
+                double within = theta % GRID.pitch() / GRID.pitch();
+                boolean inLow = r > low.low() + margin && r < low.high() - margin;
+                boolean inHigh = r > high.low() + margin && r < high.high() - margin && within > 0.15 && within < 0.45;
+                boolean near = r > low.low() - margin && r < low.high() + margin
+                        || r > high.low() - margin
+                                && r < high.high() + margin
+                                && (within < 0.5 + 2 * margin / r / GRID.pitch()
+                                        && within > 0.1 - 2 * margin / r / GRID.pitch());
+                int kind = inLow ? 0 : inHigh ? 1 : near ? -1 : 2;
+                if (kind >= 0) {
+                    Point2D p = layout.ringChart.at(theta, r);
+                    all[kind]++;
+                    int a = PlanTest.rgb(round, p.getX(), p.getY());
+                    changed[kind] += a != PlanTest.rgb(many, p.getX(), p.getY()) ? 1 : 0;
+                }
+            }
+        }
+        for (int kind = 0; kind < 2; kind++) {
+            assertTrue(all[kind] > 500, Arrays.toString(all));
+            assertTrue(changed[kind] > 0.2 * all[kind], kind + ": " + changed[kind] + " of " + all[kind]);
+        }
+        assertEquals(0, changed[2], Arrays.toString(changed));
     }
 }

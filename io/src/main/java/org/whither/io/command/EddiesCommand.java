@@ -3,6 +3,7 @@ package org.whither.io.command;
 import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.concurrent.Callable;
@@ -18,6 +19,9 @@ import org.whither.render.Meridian;
 import org.whither.render.MeridianSettings;
 import org.whither.render.NoOpenGL;
 import org.whither.render.PictureSettings;
+import org.whither.render.Plan;
+import org.whither.render.PlanData;
+import org.whither.render.PlanSettings;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Option;
@@ -35,7 +39,7 @@ import picocli.CommandLine.Option;
                     + " stays longest spends its time. Says so where nothing is found, and how small a zone would have been"
                     + " seen.",
             "Writes eddies.json, eddies.csv (the zones), eddies-places.csv (places of held gas), eddies-reversed.csv (the"
-                    + " map of reversed flow) and eddies.png (the film along the radius, zones outlined) into the folder. With --json and no --out it writes no file. Status 4 where the"
+                    + " map of reversed flow), eddies.png (the film along the radius) and eddies-plan.png (the face), zones outlined, into the folder. With --json and no --out it writes no file. Status 4 where the"
                     + " budget ended before every zone was measured.%n"
         },
         sortOptions = false)
@@ -107,7 +111,7 @@ final class EddiesCommand implements Callable<Integer> {
         return result.complete() ? ExitStatus.DONE : ExitStatus.SHORT_OF_WANTED;
     }
 
-    /** Draws the section along the radius with the zones outlined, or tells in a sentence why it could not. */
+    /** Draws the section along the radius and the face with the zones outlined, or tells in a sentence why it could not. */
     private Optional<String> draw(FieldInput input, EddiesResult result, Path into) throws IOException {
         try {
             PictureSettings how = PictureSettings.standard(input.title()).speedsIn(tracing.frame());
@@ -115,6 +119,18 @@ final class EddiesCommand implements Callable<Integer> {
                     Meridian.draw(input.flow(), result.eddies().zones(), MeridianSettings.averaged(how)),
                     Map.of("Title", input.title(), "Description", result.answer()),
                     into.resolve("eddies.png"));
+            PngFile.write(
+                    Plan.draw(
+                            input.flow(),
+                            new PlanData(
+                                    List.of(),
+                                    List.of(),
+                                    Optional.empty(),
+                                    Optional.empty(),
+                                    result.eddies().zones()),
+                            PlanSettings.standard(how)),
+                    Map.of("Title", input.title(), "Description", result.answer()),
+                    into.resolve("eddies-plan.png"));
             return Optional.empty();
         } catch (NoOpenGL e) {
             return Optional.of(e.getMessage());

@@ -26,7 +26,7 @@ public final class Stills {
      *
      * @param flow the motion of its gas
      * @param data what a plan can show; its paths are drawn in every picture that has paths
-     * @param zones zones of held gas, outlined in a meridian; may be empty
+     * @param zones zones of held gas, outlined in a meridian and a plan; may be empty
      */
     public record Subject(FilmFlow flow, PlanData data, List<Zone> zones) {
         /** Keeps its own copy of the zones. */
@@ -131,7 +131,7 @@ public final class Stills {
             case PLAN ->
                 Plan.draw(
                         flow,
-                        few(subject.data()),
+                        few(subject),
                         new PlanSettings(
                                 settings(picture, title),
                                 picture.show(),
@@ -146,12 +146,14 @@ public final class Stills {
     /** More footprints than this cover what lies under them. */
     private static final int FOOTPRINTS = 8;
 
-    private static PlanData few(PlanData data) {
+    private static PlanData few(Subject subject) {
+        PlanData data = subject.data();
         return new PlanData(
                 data.fed(),
                 data.paths().subList(0, Math.min(data.paths().size(), FOOTPRINTS)),
                 data.ages(),
-                data.destinations());
+                data.destinations(),
+                subject.zones());
     }
 
     /**

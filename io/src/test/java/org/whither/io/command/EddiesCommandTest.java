@@ -93,6 +93,9 @@ class EddiesCommandTest {
                 Files.readAllLines(folder.resolve("out").resolve("eddies-reversed.csv"))
                         .size());
 
+        assertTrue(Files.isRegularFile(folder.resolve("out").resolve("eddies.png")));
+        assertTrue(Files.isRegularFile(folder.resolve("out").resolve("eddies-plan.png")));
+
         Run again = run("eddies", FIELD.toString(), "--json", "--quiet", "--budget", "4096", "--threads", "1");
         ObjectNode other = (ObjectNode) new ObjectMapper().readTree(again.out());
         other.remove("wall_seconds");
