@@ -1,6 +1,7 @@
 package org.whither.render;
 
 import java.awt.Rectangle;
+import java.awt.geom.Line2D;
 import java.awt.geom.Path2D;
 import java.awt.geom.Point2D;
 import java.awt.geom.Rectangle2D;
@@ -10,6 +11,7 @@ import java.util.EnumSet;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;
+import org.whither.eddy.Zone;
 import org.whither.film.Face;
 import org.whither.film.FilmFlow;
 import org.whither.film.FilmGrid;
@@ -104,7 +106,17 @@ public final class Gap {
      */
     public static BufferedImage draw(FilmFlow flow, List<Path> paths, GapSettings settings) {
         HeadlessGL.start();
-        return new Gap(flow, List.copyOf(paths), settings).draw();
+        return draw(flow, paths, List.of(), settings);
+    }
+
+    /**
+     * As above, with zones of held gas.
+     *
+     * @param zones zones whose extents are drawn as boxes of dashed lines where the stator is cut away; may be empty
+     */
+    public static BufferedImage draw(FilmFlow flow, List<Path> paths, List<Zone> zones, GapSettings settings) {
+        HeadlessGL.start();
+        return new Gap(flow, List.copyOf(paths), settings).draw(List.copyOf(zones));
     }
 
     /** The view that a picture would have, for tests and for overlays. */
@@ -190,7 +202,7 @@ public final class Gap {
         return legend.addLine(GapScene.STATOR, "edge of the cut-away stator");
     }
 
-    private BufferedImage draw() {
+    private BufferedImage draw(List<Zone> zones) {
         Camera camera = camera(gap, settings, view);
         List<Scene.Item> items = new ArrayList<>(gap.rings());
         items.addAll(gap.paths(paths, range, every));
@@ -200,13 +212,90 @@ public final class Gap {
             image = canvas.draw(Ink.paper(settings), List.of(new Canvas.View(scene, camera)));
         }
         try (Ink ink = new Ink(image, settings)) {
-            page(ink);
+            zones.forEach(zone -> box(ink, camera, zone));
+            page(ink, zones);
             labels(ink, camera);
         }
         return image;
     }
 
-    private void page(Ink ink) {
+    /** Draws how far a zone reaches along the radius and across the film, where the stator is cut away. */
+    private void box(Ink ink, Camera camera, Zone zone) {
+        boolean whole = zone.theta().length() >= 2 * Math.PI * (1 - 1e-9);
+        int copies = whole ? 1 : zone.count();
+        for (int copy = -copies; copy <= copies; copy++) {
+            double turn = 2 * Math.PI * copy / copies;
+            double from =
+                    whole ? gap.openFrom : Math.max(gap.openFrom, zone.theta().low() + turn);
+            double to = whole ? gap.openTo : Math.min(gap.openTo, zone.theta().high() + turn);
+            if (from < to) {
+                Path2D.Double lines = new Path2D.Double();
+                for (double r : new double[] {zone.radius().low(), zone.radius().high()}) {
+                    for (double sigma :
+                            new double[] {zone.sigma().low(), zone.sigma().high()}) {
+                        run(lines, camera, from, to, r, r, sigma, sigma);
+                    }
+                }
+                for (double theta : new double[] {from, to}) {
+                    for (int end = 0; end < 2; end++) {
+                        double r =
+                                end == 0 ? zone.radius().low() : zone.radius().high();
+                        double sigma =
+                                end == 0 ? zone.sigma().low() : zone.sigma().high();
+                        run(
+                                lines,
+                                camera,
+                                theta,
+                                theta,
+                                r,
+                                r,
+                                zone.sigma().low(),
+                                zone.sigma().high());
+                        run(
+                                lines,
+                                camera,
+                                theta,
+                                theta,
+                                zone.radius().low(),
+                                zone.radius().high(),
+                                sigma,
+                                sigma);
+                    }
+                }
+                Meridian.zoneLine(ink, lines);
+            }
+            if (whole) {
+                return;
+            }
+        }
+    }
+
+    /** Adds a line through the film, straight in angle, radius and part of the film thickness. */
+    private void run(
+            Path2D.Double lines,
+            Camera camera,
+            double theta0,
+            double theta1,
+            double r0,
+            double r1,
+            double sigma0,
+            double sigma1) {
+        int parts = 240;
+        for (int n = 0; n <= parts; n++) {
+            double f = (double) n / parts;
+            double theta = ShownPath.mix(theta0, theta1, f);
+            double r = ShownPath.mix(r0, r1, f);
+            double z = ShownPath.mix(gap.rotorAt(theta, r), gap.statorAt(theta, r), ShownPath.mix(sigma0, sigma1, f));
+            Point2D p = at(camera, theta, r, gap.height(z));
+            if (n == 0) {
+                lines.moveTo(p.getX(), p.getY());
+            } else {
+                lines.lineTo(p.getX(), p.getY());
+            }
+        }
+    }
+
+    private void page(Ink ink, List<Zone> zones) {
         double u = ink.unit;
         Page page = page(ink, gap, settings);
         page.write(ink);
@@ -215,6 +304,11 @@ public final class Gap {
         boolean ends = paths.stream().anyMatch(ShownPath::whole);
         boolean goesOn = paths.stream().anyMatch(path -> !path.whole());
         Legend legend = legend(ink, page, gap, seen, ends, goesOn, every);
+        if (!zones.isEmpty()) {
+            legend.add(
+                    (x, y) -> Meridian.zoneLine(legend.ink(), new Line2D.Double(x - 8 * u, y, x + 8 * u, y)),
+                    zones.size() == 1 ? "held gas (zone)" : "held gas (zones)");
+        }
         double legendTop = page.bottom - legend.height();
         legend.draw(ink, page.left, legendTop);
         if (!paths.isEmpty()) {

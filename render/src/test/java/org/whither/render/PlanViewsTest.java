@@ -271,4 +271,28 @@ class PlanViewsTest {
         }
         assertEquals(0, changed[2], Arrays.toString(changed));
     }
+
+    /** The edges of a zone's box lie where the zone reaches, between the faces. */
+    @Test
+    void draw_zoneInALookIntoTheFilm_isOutlinedWhereItReaches() {
+        GapSettings settings = new GapSettings(SETTINGS, GapSettings.USUAL, Optional.empty());
+        double span = GRID.outerRadius() - GRID.innerRadius();
+        Range radius = new Range(GRID.innerRadius() + 0.2 * span, GRID.innerRadius() + 0.4 * span);
+        Zone zone = zone(new Range(0, 2 * Math.PI), radius, 1);
+        BufferedImage without = Gap.draw(FILM, List.of(), settings);
+        BufferedImage with = Gap.draw(FILM, List.of(), List.of(zone), settings);
+        GapScene gap = new GapScene(new FilmShape(FILM), GapSettings.USUAL);
+        Camera camera = Gap.camera(gap, SETTINGS);
+        for (int n = 1; n < 10; n++) {
+            double theta = gap.openFrom + 0.1 * n * (gap.openTo - gap.openFrom);
+            for (double r : new double[] {radius.low(), radius.high()}) {
+                double rotor = gap.rotorAt(theta, r);
+                double z = rotor + zone.sigma().high() * (gap.statorAt(theta, r) - rotor);
+                double[] place = gap.place(theta, r, z);
+                Point2D p = camera.project(place[0], place[1], place[2]);
+                int marked = PlanTest.rgb(with, p.getX(), p.getY());
+                assertTrue(marked != PlanTest.rgb(without, p.getX(), p.getY()), "θ = " + theta + ", r = " + r);
+            }
+        }
+    }
 }

@@ -171,7 +171,7 @@ final class DrawCommand implements Callable<Integer> {
 
     @Option(
             names = "--zones",
-            description = "Look for zones of held gas and outline them in the meridian and the plan; takes longer.")
+            description = "Look for zones of held gas and outline them in all views but the relief; takes longer.")
     private boolean zones;
 
     @Mixin

@@ -123,7 +123,7 @@ final class Pictures {
                     plans && pictures.stream().anyMatch(p -> p.view() == View.PLAN && p.part() == Part.BOTH),
                     pictures.stream().anyMatch(p -> p.view() == View.PLAN && p.show() == Quantity.AGE),
                     pictures.stream().anyMatch(p -> p.view() == View.PLAN && p.show() == Quantity.DESTINATION),
-                    zones && pictures.stream().anyMatch(p -> p.view() == View.MERIDIAN || p.view() == View.PLAN));
+                    zones && pictures.stream().anyMatch(p -> p.view() != View.RELIEF));
         }
     }
 

@@ -26,7 +26,7 @@ public final class Stills {
      *
      * @param flow the motion of its gas
      * @param data what a plan can show; its paths are drawn in every picture that has paths
-     * @param zones zones of held gas, outlined in a meridian and a plan; may be empty
+     * @param zones zones of held gas, outlined in every picture but a relief; may be empty
      */
     public record Subject(FilmFlow flow, PlanData data, List<Zone> zones) {
         /** Keeps its own copy of the zones. */
@@ -138,7 +138,7 @@ public final class Stills {
                                 picture.part(),
                                 picture.range(picture.show())));
             case RELIEF -> Relief.draw(flow, subject.data().paths(), relief(picture, title));
-            case GAP -> Gap.draw(flow, subject.data().paths(), gap(picture, title));
+            case GAP -> Gap.draw(flow, subject.data().paths(), subject.zones(), gap(picture, title));
             case MERIDIAN -> Meridian.draw(flow, subject.zones(), meridian(picture, title));
         };
     }
