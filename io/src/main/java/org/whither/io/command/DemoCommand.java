@@ -1,11 +1,15 @@
 package org.whither.io.command;
 
+import java.awt.image.BufferedImage;
 import java.io.IOException;
 import java.nio.file.Path;
 import java.util.ArrayList;
+import java.util.EnumMap;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import java.util.concurrent.Callable;
+import org.whither.eddy.Eddies;
 import org.whither.eddy.EddySettings;
 import org.whither.io.file.WholeFolder;
 import org.whither.io.hdf5.FieldWriter;
@@ -42,8 +46,6 @@ import picocli.CommandLine.Spec;
         sortOptions = false)
 final class DemoCommand implements Callable<Integer> {
     private static final Path DEFAULT_FOLDER = Path.of("demo-whither");
-    private static final int PATHS = 7;
-    private static final int EDDY_BUDGET = 8192;
 
     @Spec
     private CommandSpec spec;
@@ -77,14 +79,12 @@ final class DemoCommand implements Callable<Integer> {
             FieldInput input = FieldInput.read(file, talk);
             found[0] = SplitCommand.find(input, settings, talk);
             SplitCommand.writeNumbers(found[0], into);
-            eddies[0] = EddiesCommand.find(input, tracing.eddies(EddySettings.PATIENCE, EDDY_BUDGET), talk);
+            eddies[0] =
+                    EddiesCommand.find(input, tracing.eddies(EddySettings.PATIENCE, ReportCommand.EDDY_TRACERS), talk);
             EddiesCommand.writeNumbers(eddies[0], into);
             List<ReportPicture> pictures = new ArrayList<>();
-            Optional<String> missing = draw(input, found[0], pictures);
-            if (missing.isEmpty()) {
-                drawAll(input, found[0], into);
-            }
-            ReportCommand.write(input, found[0], tracing, talk, pictures, missing, into);
+            Optional<String> missing = draw(input, found[0], eddies[0].eddies(), into, pictures);
+            ReportCommand.write(input, found[0], eddies[0].eddies(), tracing, talk, pictures, missing, into);
             sentence[0] = missing.orElse(null);
         });
         SplitCommand.print(found[0], talk);
@@ -99,20 +99,15 @@ final class DemoCommand implements Callable<Integer> {
         return eddies[0].complete() ? SplitCommand.status(found[0]) : ExitStatus.SHORT_OF_WANTED;
     }
 
-    /** Draws the pictures, or tells in a sentence why it could not. */
-    private Optional<String> draw(FieldInput input, SplitResult result, List<ReportPicture> pictures)
+    /**
+     * Draws every kind of picture with its description, the plan in all its quantities, and adds those that a report shows;
+     * or tells in a sentence why it could not.
+     */
+    private Optional<String> draw(
+            FieldInput input, SplitResult result, Eddies eddies, Path into, List<ReportPicture> ofReport)
             throws IOException {
         try (Talk.Stretch stretch = talk.begin("Drawing")) {
-            pictures.addAll(ReportPictures.of(input, result, tracing, stretch));
-            return Optional.empty();
-        } catch (NoOpenGL e) {
-            return Optional.of(e.getMessage());
-        }
-    }
-
-    /** Every kind of picture with its description, the plan in all its quantities. */
-    private void drawAll(FieldInput input, SplitResult result, Path into) throws IOException {
-        try (Talk.Stretch stretch = talk.begin("Drawing more")) {
+            Pictures.needed();
             List<PictureDescription> pictures = new ArrayList<>();
             for (Quantity quantity : Quantity.values()) {
                 pictures.add(PictureDescription.of(View.PLAN).showing(quantity));
@@ -121,17 +116,26 @@ final class DemoCommand implements Callable<Integer> {
                 pictures.add(PictureDescription.of(view));
             }
             pictures.replaceAll(p -> p.seen(p.background(), p.seenFrom(), tracing.frame()));
-            Stills.Subject subject = Pictures.subject(
+            Stills.Subject computed = Pictures.subject(
                     input.flow(),
                     Pictures.few(result.split().fed()),
-                    Pictures.Wanted.of(pictures, PATHS, false),
+                    Pictures.Wanted.of(pictures, ReportPictures.PATHS, false),
                     tracing);
+            Stills.Subject subject = new Stills.Subject(computed.flow(), computed.data(), eddies.zones());
+            Map<View, BufferedImage> images = new EnumMap<>(View.class);
             double done = 0.4;
             for (PictureDescription picture : pictures) {
                 stretch.accept(done);
-                Pictures.draw(input, subject, picture, input.title(), into);
+                BufferedImage image = Pictures.draw(input, subject, picture, input.title(), into);
+                if (picture.show() == Quantity.PRESSURE) {
+                    images.put(picture.view(), image);
+                }
                 done += 0.6 / pictures.size();
             }
+            ofReport.addAll(ReportPictures.of(input, subject, images));
+            return Optional.empty();
+        } catch (NoOpenGL e) {
+            return Optional.of(e.getMessage());
         }
     }
 }

@@ -1,5 +1,6 @@
 package org.whither.io.command;
 
+import java.awt.image.BufferedImage;
 import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
@@ -182,12 +183,15 @@ final class Pictures {
     private static final int END_PHASES = 96;
     private static final int END_RADII = 72;
 
-    /** Draws a picture into a folder, as PNG with its facts and, beside it, its description. */
-    static void draw(FieldInput input, Stills.Subject subject, PictureDescription picture, String title, Path into)
+    /** Draws a picture into a folder, as PNG with its facts and, beside it, its description; gives it back. */
+    static BufferedImage draw(
+            FieldInput input, Stills.Subject subject, PictureDescription picture, String title, Path into)
             throws IOException {
         PictureDescription full = Stills.resolved(subject, picture, title);
         PictureFacts facts = PictureFacts.of(title, input.file().getFileName().toString(), input.sha256());
-        PngFile.write(Stills.draw(subject, full, title), full, facts, into.resolve(full.name() + ".png"));
+        BufferedImage image = Stills.draw(subject, full, title);
+        PngFile.write(image, full, facts, into.resolve(full.name() + ".png"));
         Files.writeString(into.resolve(full.name() + ".json"), PictureJson.text(full, facts));
+        return image;
     }
 }

@@ -16,6 +16,7 @@ import org.whither.eddy.Eddies;
 import org.whither.eddy.EddySettings;
 import org.whither.fate.SplitSettings;
 import org.whither.io.file.WholeFolder;
+import org.whither.io.picture.Stills;
 import org.whither.io.report.Comparison;
 import org.whither.io.report.ReportNumbers;
 import org.whither.io.report.ReportPage;
@@ -50,7 +51,7 @@ final class ReportCommand implements Callable<Integer> {
     private static final int AGE_HEIGHTS = 10;
 
     /** Tracers inside the film: a page tells of zones of a good part of the gas; command eddies looks closer. */
-    private static final int EDDY_TRACERS = 6_000;
+    static final int EDDY_TRACERS = 8192;
 
     @Spec
     private CommandSpec spec;
@@ -84,7 +85,7 @@ final class ReportCommand implements Callable<Integer> {
     private Talk talk;
 
     /** What is known of one field. */
-    private record Told(FieldInput input, SplitResult result, ObjectNode numbers) {}
+    private record Told(FieldInput input, SplitResult result, Eddies eddies, ObjectNode numbers) {}
 
     @Override
     public Integer call() throws IOException {
@@ -142,14 +143,16 @@ final class ReportCommand implements Callable<Integer> {
 
     private Told tell(FieldInput input, SplitSettings settings) {
         SplitResult result = SplitCommand.find(input, settings, talk);
-        return new Told(input, result, numbers(input, result, tracing, talk));
+        try (Talk.Stretch stretch = talk.begin("Looking for held gas")) {
+            Eddies eddies = Eddies.of(input.flow(), tracing.eddies(EddySettings.PATIENCE, EDDY_TRACERS), stretch);
+            return told(input, result, eddies, tracing, talk);
+        }
     }
 
-    /** The numbers of a report: the split's, and what else the page tells. */
-    static ObjectNode numbers(FieldInput input, SplitResult result, TracingOptions tracing, Talk talk) {
-        AgeMap age;
+    /** The numbers of a report: those of the split and of the held gas, and what else the page tells. */
+    private static Told told(FieldInput input, SplitResult result, Eddies eddies, TracingOptions tracing, Talk talk) {
         try (Talk.Stretch stretch = talk.begin("Looking at the age of the gas")) {
-            age = AgeMap.of(
+            AgeMap age = AgeMap.of(
                     input.flow(),
                     Pictures.settings(input.flow(), tracing.frame(), tracing.tolerance()),
                     AGE_PHASES,
@@ -157,19 +160,9 @@ final class ReportCommand implements Callable<Integer> {
                     AGE_HEIGHTS,
                     tracing.threads(),
                     stretch);
-        }
-        try (Talk.Stretch stretch = talk.begin("Looking for held gas")) {
-            Eddies eddies = Eddies.of(
-                    input.flow(),
-                    new EddySettings(
-                            tracing.frame(),
-                            tracing.tolerance(),
-                            EddySettings.PATIENCE,
-                            EDDY_TRACERS,
-                            tracing.seed(),
-                            tracing.threads()),
-                    stretch);
-            return ReportNumbers.of(result, Program.Version.number(), Optional.of(age), Optional.of(eddies));
+            ObjectNode numbers =
+                    ReportNumbers.of(result, Program.Version.number(), Optional.of(age), Optional.of(eddies));
+            return new Told(input, result, eddies, numbers);
         }
     }
 
@@ -180,10 +173,10 @@ final class ReportCommand implements Callable<Integer> {
         Optional<String> none = noPictures ? Optional.of("none were asked for.") : Optional.empty();
         if (!noPictures) {
             try (Talk.Stretch stretch = talk.begin("Drawing")) {
+                Pictures.needed();
                 pictures = b.isPresent()
-                        ? ReportPictures.of(
-                                a.input(), a.result(), b.get().input(), b.get().result(), tracing, stretch)
-                        : ReportPictures.of(a.input(), a.result(), tracing, stretch);
+                        ? ReportPictures.of(a.input(), subject(a), b.get().input(), subject(b.get()), tracing, stretch)
+                        : ReportPictures.of(a.input(), subject(a), tracing, stretch);
             } catch (NoOpenGL e) {
                 none = Optional.of(e.getMessage());
                 missing.add(e.getMessage());
@@ -211,6 +204,10 @@ final class ReportCommand implements Callable<Integer> {
         return missing;
     }
 
+    private Stills.Subject subject(Told told) {
+        return ReportPictures.subject(told.input(), told.result(), told.eddies(), tracing);
+    }
+
     /** Writes the animation where it is asked for; the file to which the page leads. */
     private Optional<String> animation(Told a, Optional<Told> b, MotionSettings motion, List<String> missing, Path into)
             throws IOException {
@@ -229,17 +226,21 @@ final class ReportCommand implements Callable<Integer> {
         Files.writeString(into.resolve("report.html"), ReportPage.of(numbers, pictures, page));
     }
 
-    /** Writes the report of a field whose split is known, with pictures that are drawn or a sentence why there are none. */
+    /**
+     * Writes the report of a field whose split and held gas are known, with pictures that are drawn or a sentence why there
+     * are none. Command report makes the same page where the held gas was looked for with {@link #EDDY_TRACERS}.
+     */
     static void write(
             FieldInput input,
             SplitResult result,
+            Eddies eddies,
             TracingOptions tracing,
             Talk talk,
             List<ReportPicture> pictures,
             Optional<String> missing,
             Path into)
             throws IOException {
-        Told told = new Told(input, result, numbers(input, result, tracing, talk));
+        Told told = told(input, result, eddies, tracing, talk);
         String words = new ReportCommand().words(told, Optional.empty());
         write(
                 told.numbers(),

@@ -4,108 +4,133 @@ import java.awt.image.BufferedImage;
 import java.io.ByteArrayOutputStream;
 import java.io.IOException;
 import java.util.ArrayList;
+import java.util.EnumMap;
 import java.util.List;
 import java.util.Locale;
+import java.util.Map;
 import java.util.function.DoubleConsumer;
 import javax.imageio.ImageIO;
+import org.whither.eddy.Eddies;
 import org.whither.fate.Destination;
 import org.whither.fate.FedPoint;
 import org.whither.film.Conditions;
-import org.whither.film.FilmFlow;
+import org.whither.io.picture.PictureDescription;
+import org.whither.io.picture.Stills;
+import org.whither.io.picture.View;
 import org.whither.io.report.ReportPicture;
-import org.whither.io.result.FieldSummary;
 import org.whither.io.result.SplitResult;
-import org.whither.render.Gap;
 import org.whither.render.GapSettings;
-import org.whither.render.Meridian;
-import org.whither.render.MeridianSettings;
-import org.whither.render.PictureSettings;
-import org.whither.render.Plan;
-import org.whither.render.Relief;
-import org.whither.render.ReliefSettings;
 import org.whither.trace.Path;
 import org.whither.trace.PathEnd;
-import org.whither.trace.TraceSettings;
 
 /** The pictures of a report, each with what it shows in words and what to look at. */
 final class ReportPictures {
-    private static final int PLAN_PATHS = 8;
-    private static final int GAP_PATHS = 7;
+    static final int PATHS = 7;
+
+    /** The pictures of one field, in their order. */
+    static final List<View> VIEWS = List.of(View.PLAN, View.RELIEF, View.GAP, View.MERIDIAN);
 
     private final FieldInput input;
-    private final FilmFlow flow;
-    private final TracingOptions tracing;
-    private final TraceSettings how;
-    private PictureSettings settings;
+    private final Stills.Subject subject;
     private final String prefix;
     private final String inner;
     private final String outer;
 
-    private ReportPictures(FieldInput input, TracingOptions tracing, String prefix) {
+    private ReportPictures(FieldInput input, Stills.Subject subject, String prefix) {
         this.input = input;
-        this.flow = input.flow();
-        this.tracing = tracing;
-        this.how = Pictures.settings(flow, tracing.frame(), tracing.tolerance());
-        this.settings = PictureSettings.standard(prefix + input.title()).speedsIn(tracing.frame());
+        this.subject = subject;
         this.prefix = prefix;
-        Conditions conditions = flow.film().conditions();
+        Conditions conditions = input.flow().film().conditions();
         this.inner = side(conditions.innerSide(), "inner");
         this.outer = side(conditions.outerSide(), "outer");
     }
 
+    /** A film with what the pictures of a report show of it. */
+    static Stills.Subject subject(FieldInput input, SplitResult result, Eddies eddies, TracingOptions tracing) {
+        Pictures.Wanted wanted = new Pictures.Wanted(PATHS, true, false, false, false);
+        Stills.Subject plain =
+                Pictures.subject(input.flow(), Pictures.few(result.split().fed()), wanted, tracing);
+        return new Stills.Subject(plain.flow(), plain.data(), eddies.zones());
+    }
+
     /** The pictures of one field. */
-    static List<ReportPicture> of(FieldInput input, SplitResult result, TracingOptions tracing, DoubleConsumer progress)
+    static List<ReportPicture> of(
+            FieldInput input, Stills.Subject subject, TracingOptions tracing, DoubleConsumer progress)
             throws IOException {
-        ReportPictures pictures = new ReportPictures(input, tracing, "");
-        List<ReportPicture> all = new ArrayList<>();
-        all.add(pictures.plan(result));
-        progress.accept(0.4);
-        all.add(pictures.relief());
-        progress.accept(0.7);
-        all.add(pictures.gap());
-        all.add(pictures.meridian());
-        progress.accept(1);
-        return all;
+        Map<View, BufferedImage> images = new EnumMap<>(View.class);
+        for (View view : VIEWS) {
+            images.put(view, Stills.draw(subject, usual(view, tracing), input.title()));
+            progress.accept((double) images.size() / VIEWS.size());
+        }
+        return of(input, subject, images);
+    }
+
+    /**
+     * The pictures of one field that are drawn already.
+     *
+     * @param subject what they were drawn from
+     * @param images one for each of {@link #VIEWS}
+     */
+    static List<ReportPicture> of(FieldInput input, Stills.Subject subject, Map<View, BufferedImage> images)
+            throws IOException {
+        ReportPictures pictures = new ReportPictures(input, subject, "");
+        return List.of(
+                pictures.plan(images.get(View.PLAN)),
+                pictures.relief(images.get(View.RELIEF)),
+                pictures.gap(images.get(View.GAP)),
+                pictures.meridian(images.get(View.MERIDIAN)));
     }
 
     /** The pictures of two fields that are compared, on the same scales. */
     static List<ReportPicture> of(
             FieldInput a,
-            SplitResult resultA,
+            Stills.Subject subjectA,
             FieldInput b,
-            SplitResult resultB,
+            Stills.Subject subjectB,
             TracingOptions tracing,
             DoubleConsumer progress)
             throws IOException {
-        ReportPictures first = new ReportPictures(a, tracing, "A: ");
-        ReportPictures second = new ReportPictures(b, tracing, "B: ");
-        double[] rangeA = new FieldSummary(a.flow()).pressures();
-        double[] rangeB = new FieldSummary(b.flow()).pressures();
-        double low = Math.min(rangeA[0], rangeB[0]);
-        double high = Math.max(rangeA[1], rangeB[1]);
-        if (high > low) {
-            first.settings = first.settings.pressures(low, high);
-            second.settings = second.settings.pressures(low, high);
-        }
+        ReportPictures first = new ReportPictures(a, subjectA, "A: ");
+        ReportPictures second = new ReportPictures(b, subjectB, "B: ");
+        PictureDescription plan = first.common(second, usual(View.PLAN, tracing));
+        PictureDescription gap = first.common(second, plan.ofView(View.GAP));
         List<ReportPicture> all = new ArrayList<>();
-        all.add(first.plan(resultA));
+        all.add(first.plan(first.draw(plan)));
         progress.accept(0.25);
-        all.add(second.plan(resultB));
+        all.add(second.plan(second.draw(plan)));
         progress.accept(0.5);
-        all.add(first.gap());
+        all.add(first.gap(first.draw(gap)));
         progress.accept(0.75);
-        all.add(second.gap());
+        all.add(second.gap(second.draw(gap)));
         progress.accept(1);
         return all;
     }
 
-    private ReportPicture plan(SplitResult result) throws IOException {
-        List<FedPoint> fed = Pictures.few(result.split().fed());
-        List<Path> few = Pictures.paths(flow, how, tracing.seed(), PLAN_PATHS);
+    private static PictureDescription usual(View view, TracingOptions tracing) {
+        PictureDescription usual = PictureDescription.of(view);
+        return usual.seen(usual.background(), usual.seenFrom(), tracing.frame());
+    }
+
+    private PictureDescription common(ReportPictures other, PictureDescription picture) {
+        return Stills.common(
+                Stills.resolved(subject, picture, title()), Stills.resolved(other.subject, picture, other.title()));
+    }
+
+    private BufferedImage draw(PictureDescription picture) {
+        return Stills.draw(subject, picture, title());
+    }
+
+    private String title() {
+        return prefix + input.title();
+    }
+
+    private ReportPicture plan(BufferedImage image) throws IOException {
+        List<FedPoint> fed = subject.data().fed();
+        List<Path> few = subject.data().paths();
         return picture(
                 "plan",
                 "The face",
-                Plan.draw(flow, fed, few, settings),
+                image,
                 "The seal face of " + input.title()
                         + " seen along the shaft: its film pressure in colour, footprints of " + few.size()
                         + " paths, and one sector enlarged." + fedWords(fed),
@@ -117,24 +142,24 @@ final class ReportPictures {
                                         + " nearer it comes to an edge of the feed, the less is left for that side."));
     }
 
-    private ReportPicture relief() throws IOException {
-        List<Path> paths = Pictures.paths(flow, how, tracing.seed(), GAP_PATHS);
+    private ReportPicture relief(BufferedImage image) throws IOException {
+        List<Path> paths = subject.data().paths();
         return picture(
                 "relief",
                 "The pressure",
-                Relief.draw(flow, paths, ReliefSettings.ring(settings)),
+                image,
                 "The film pressure of " + input.title() + " drawn as a landscape over the ring, with " + paths.size()
                         + " paths of gas laid over it: " + ends(paths) + ".",
                 "Its height is the film pressure. Gas runs off the ridges to both sides: look at which side of a ridge"
                         + " the feed lies on, and at the wall that holds one side's gas back from the other.");
     }
 
-    private ReportPicture gap() throws IOException {
-        List<Path> paths = Pictures.paths(flow, how, tracing.seed(), GAP_PATHS);
+    private ReportPicture gap(BufferedImage image) throws IOException {
+        List<Path> paths = subject.data().paths();
         return picture(
                 "gap",
                 "The film",
-                Gap.draw(flow, paths, new GapSettings(settings, GapSettings.USUAL)),
+                image,
                 String.format(
                         Locale.ROOT,
                         "A look into the film of %s from over the bore, its thickness drawn %.0f times too large, with %d"
@@ -150,16 +175,17 @@ final class ReportPictures {
                         GapSettings.USUAL));
     }
 
-    private ReportPicture meridian() throws IOException {
+    private ReportPicture meridian(BufferedImage image) throws IOException {
         return picture(
                 "meridian",
                 "The section",
-                Meridian.draw(flow, List.of(), MeridianSettings.averaged(settings)),
+                image,
                 "The film of " + input.title()
                         + " cut along the radius, averaged round the ring, its thickness drawn far too"
-                        + " large, with the motion of the gas in that plane.",
+                        + " large, with the motion of the gas in that plane." + heldWords(),
                 "The film cut along the radius, averaged round the ring, its thickness drawn far too large. Look at which"
-                        + " way gas runs at each height, and whether it turns back anywhere.");
+                        + " way gas runs at each height, and whether it turns back anywhere."
+                        + (subject.zones().isEmpty() ? "" : " Where gas is held, its zone is outlined."));
     }
 
     private ReportPicture picture(String name, String title, BufferedImage image, String alternative, String caption)
@@ -189,6 +215,13 @@ final class ReportPictures {
         return String.format(
                 " Of %d markers of equal gas in the feed, %d lead to %s and %d to %s.",
                 fed.size(), out, outer, in, inner);
+    }
+
+    private String heldWords() {
+        int zones = subject.zones().size();
+        return zones == 0
+                ? ""
+                : zones == 1 ? " A zone of held gas is outlined." : " " + zones + " zones of held gas are outlined.";
     }
 
     private String ends(List<Path> paths) {

@@ -80,6 +80,10 @@ class ProgramTest {
         assertTrue(run.out().contains("invented") || run.err().contains("invented"), "says that the seal is invented");
         assertTrue(run.out().contains("Caution"), "prints the cautions");
         assertEquals(List.of("demo"), names(folder), "nothing is left beside the folder");
+        assertEquals(
+                new ObjectMapper().readTree(out.resolve("eddies.json").toFile()).at("/held_mass_share"),
+                new ObjectMapper().readTree(out.resolve("report.json").toFile()).at("/recirculation/held_mass_share"),
+                "page and table tell of the same search");
         JsonNode split = json(Files.readString(out.resolve("split.json")));
         assertEquals("split", split.get("result").asText());
         // A second run replaces its own results.
