@@ -30,6 +30,7 @@ final class Figures implements TemplateMethodModelEx {
     }
 
     @Override
+    // The library declares its list without a type.
     public TemplateModel exec(@SuppressWarnings("rawtypes") List arguments) throws TemplateModelException {
         // The list is raw in the library's interface.
         String pointer = arguments.get(0).toString();
